@@ -22,6 +22,7 @@ import numpy as np
 from pycore.patterns import exactly, lengths, over_supersets, sweep
 from pycore.spans import Spans
 
+
 @dataclass(frozen=True, slots=True)
 class Piece:
     """An interval of ranges in which the clear speeds are its own, as clutter makes them.
