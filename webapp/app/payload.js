@@ -1,0 +1,62 @@
+// Where the engine's parts are: in data blocks of this page, or in classic scripts beside it that call PULSEWRIGHT.deliver.
+// Knows how a part is written (gzip, then base64) and nothing of what it is for.
+
+const waiting = new Map();
+
+window.PULSEWRIGHT = Object.assign(window.PULSEWRIGHT ?? {}, {
+  deliver: (name, text) => waiting.get(name)?.(text),
+});
+
+export async function partOfPage(name) {
+  await parsed();
+  const text = document.getElementById(`part-${name}`)?.textContent ?? (await delivered(name));
+  return inflated(name, bytesOf(name, text));
+}
+
+export function hasPart(name) {
+  return document.getElementById(`part-${name}`) !== null || name in places();
+}
+
+function parsed() {
+  if (document.readyState !== 'loading') return null;
+  return new Promise((resolve) => { document.addEventListener('DOMContentLoaded', resolve, { once: true }); });
+}
+
+function places() {
+  return JSON.parse(document.getElementById('parts')?.textContent ?? '{}');
+}
+
+function delivered(name) {
+  return new Promise((resolve, reject) => {
+    const script = document.createElement('script');
+    waiting.set(name, resolve);
+    script.onerror = () => reject(new Error(`the file ${script.getAttribute('src')} could not be loaded; it belongs beside this page`));
+    script.onload = () => reject(new Error(`the file ${script.getAttribute('src')} arrived incomplete`)); // too late when it has delivered
+    script.src = places()[name];
+    document.head.append(script);
+  });
+}
+
+function bytesOf(name, text) {
+  try {
+    return Uint8Array.fromBase64 ? Uint8Array.fromBase64(text) : loopedBytes(atob(text));
+  } catch {
+    throw new Error(`the part "${name}" of this page is damaged`);
+  }
+}
+
+function loopedBytes(binary) {
+  const bytes = new Uint8Array(binary.length);
+  for (let i = 0; i < binary.length; i += 1) bytes[i] = binary.charCodeAt(i);
+  return bytes;
+}
+
+async function inflated(name, bytes) {
+  if (typeof DecompressionStream === 'undefined') throw new Error('this browser cannot unpack gzip (it needs one of 2023 or later)');
+  try {
+    const stream = new Blob([bytes]).stream().pipeThrough(new DecompressionStream('gzip'));
+    return new Uint8Array(await new Response(stream).arrayBuffer());
+  } catch {
+    throw new Error(`the part "${name}" of this page is damaged or incomplete`);
+  }
+}

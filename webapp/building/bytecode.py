@@ -1,0 +1,208 @@
+"""Make Python start quickly in the browser: only what the engine imports, compiled, and the memory of a started one.
+
+All of it is made by the pinned Pyodide itself under Node, so that the byte code is exactly what that Pyodide reads.
+Each product is kept in the cache under the contents that it was made of.
+"""
+
+import json
+import subprocess
+import tempfile
+from pathlib import Path
+
+from webapp.building.places import ROOT, cache, content_key
+from webapp.building.runtime import FILES, NUMPY_WHEEL
+from webapp.building.session import requests
+from webapp.building.stop import Stop
+
+INSIDE = Path(__file__).parent / 'inside'
+WORKSHOP = Path(__file__).parent / 'workshop.mjs'
+
+# numpy's docstrings for its compiled functions: a twentieth of its size and of the time to import it.
+DOCSTRINGS_ONLY = ['numpy/_core/_add_newdocs.py', 'numpy/_core/_add_newdocs_scalars.py']
+
+
+def engine_parts(node, runtime, with_snapshot=True):
+    """Return the files that the engine starts from.
+
+    Parameters
+    ----------
+    node : Path
+        The Node that runs Pyodide here. [unitless]
+    runtime : Path
+        The folder of Pyodide's files and numpy's wheel. [unitless]
+    with_snapshot : bool
+        Whether a started Python's memory is among them. [unitless]
+
+    Returns
+    -------
+    parts : dict of str to Path
+        wasm, stdlib, numpy, core and, if wanted, snapshot.
+    """
+    kept = json.loads(made('kept.json', lambda place: record(node, runtime, place), *_engine_sources(), *_tools()).read_text())
+    stdlib = made('stdlib.zip', lambda place: compile_library(node, runtime, kept, place), json.dumps(kept['library']), *_tools())
+    numpy = made('numpy.pack', lambda place: compile_numpy(node, runtime, kept, place), json.dumps(kept['numpy']), *_tools())
+    core = made('core.pack', lambda place: compile_core(node, runtime, place), *_engine_sources(), *_tools())
+    parts = {'wasm': Path(runtime) / 'pyodide.asm.wasm', 'stdlib': stdlib, 'numpy': numpy, 'core': core}
+    if with_snapshot:
+        modules = json.dumps(kept['modules'])
+        parts['snapshot'] = made(
+            'snapshot.bin', lambda place: remember(node, runtime, stdlib, modules, place), modules, stdlib, *_tools()
+        )
+
+    return parts
+
+
+def made(name, make, *contents):
+    """Return a product from the cache, made first if these contents have not been seen.
+
+    Parameters
+    ----------
+    name : str
+        The file that `make` leaves in the folder it is given. [unitless]
+    make : function of Path
+        Makes it. [unitless]
+    *contents : str, bytes or Path
+        All that the product depends on. [unitless]
+
+    Returns
+    -------
+    path : Path
+        The product.
+    """
+    stem, dot, ending = name.partition('.')
+    path = cache() / 'made' / f'{stem}-{content_key(*contents)}{dot}{ending}'
+    if not path.exists():
+        path.parent.mkdir(exist_ok=True)
+        with tempfile.TemporaryDirectory(dir=path.parent) as place:
+            make(Path(place))
+            (Path(place) / name).replace(path)
+
+    return path
+
+
+def record(node, runtime, place):
+    """Use the engine as a page would and note which modules it takes.
+
+    Parameters
+    ----------
+    node, runtime : Path
+        As in `engine_parts`. [unitless]
+    place : Path
+        Gets kept.json. [unitless]
+    """
+    print('Recording which modules the engine uses')
+    (place / 'session.json').write_text(json.dumps(requests()))
+    run(node, runtime, runtime / 'python_stdlib.zip', 'record.py', place)
+
+
+def compile_library(node, runtime, kept, place):
+    """Compile the standard library's modules that are used.
+
+    Parameters
+    ----------
+    node, runtime, place : Path
+        As in `record`. [unitless]
+    kept : dict
+        What `record` found. [unitless]
+    """
+    print(f'Compiling {len(kept["library"])} modules of the standard library')
+    files = {path: f'/runtime/python_stdlib.zip::{path}' for path in kept['library']}
+    compile_archive(node, runtime, place, archive='zip', out='stdlib.zip', optimize=2, bare=True, files=files)
+
+
+def compile_numpy(node, runtime, kept, place):
+    """Compile numpy's modules that are used.
+
+    Parameters
+    ----------
+    node, runtime, place : Path
+        As in `record`. [unitless]
+    kept : dict
+        What `record` found. [unitless]
+    """
+    print(f'Compiling {len(kept["numpy"])} modules of numpy')
+    files = {path: f'/runtime/{NUMPY_WHEEL}::{path}' for path in kept['numpy']}
+    compile_archive(node, runtime, place, archive='pack', out='numpy.pack', optimize=2, bare=True, files=files)
+
+
+def compile_core(node, runtime, place):
+    """Compile our own modules that run in the browser; they keep their line numbers and docstrings.
+
+    Parameters
+    ----------
+    node, runtime, place : Path
+        As in `record`. [unitless]
+    """
+    names = [path.relative_to(ROOT).as_posix() for path in _engine_sources()]
+    print(f'Compiling {len(names)} modules of the engine')
+    files = {name: f'/project/{name}' for name in names}
+    compile_archive(node, runtime, place, archive='pack', out='core.pack', optimize=0, bare=False, files=files)
+
+
+def compile_archive(node, runtime, place, **job):
+    """Compile files into one archive.
+
+    Parameters
+    ----------
+    node, runtime, place : Path
+        As in `record`. [unitless]
+    **job : dict
+        As inside/compile.py says. [unitless]
+    """
+    (place / 'compile.json').write_text(json.dumps([{'blank': DOCSTRINGS_ONLY, **job}]))
+    run(node, runtime, runtime / 'python_stdlib.zip', 'compile.py', place)
+
+
+def remember(node, runtime, stdlib, modules, place):
+    """Keep the memory of a Python that has started and imported the library's modules.
+
+    Parameters
+    ----------
+    node, runtime, place : Path
+        As in `record`. [unitless]
+    stdlib : Path
+        The very archive that the page starts from: the memory holds offsets into it. [unitless]
+    modules : str
+        JSON list of the modules to import. [unitless]
+    """
+    print('Keeping the memory of a started Python')
+    (place / 'preload.json').write_text(modules)
+    run(node, runtime, stdlib, 'preload.py', place, snapshot=place / 'snapshot.bin')
+
+
+def run(node, runtime, stdlib, script, place, snapshot=None):
+    """Run a file of inside/ in Pyodide; stop with its own last words when it fails.
+
+    Parameters
+    ----------
+    node, runtime, stdlib, place : Path
+        As above. [unitless]
+    script : str
+        The file's name. [unitless]
+    snapshot : Path, optional
+        Where the memory is written afterwards. [unitless]
+    """
+    job = {
+        'runtime': f'{runtime}/',
+        'stdlib': str(stdlib),
+        'script': str(INSIDE / script),
+        'folders': {'project': str(ROOT), 'runtime': str(runtime), 'job': str(place)},
+        'snapshot': str(snapshot) if snapshot else None,
+    }
+    path = place / 'job.json'
+    path.write_text(json.dumps(job))
+    done = subprocess.run([node, WORKSHOP, path], capture_output=True, text=True)
+    print(done.stdout, end='')
+    if done.returncode:
+        last = (done.stderr.strip().splitlines() or ['no reason given'])[-1]
+        raise Stop(f'Pyodide could not run {script} while building ({last[:300]}): the sources have an error there.')
+
+
+def _engine_sources():
+    """Return our modules that run in the browser."""
+    return [*sorted((ROOT / 'pycore').rglob('*.py')), ROOT / 'webapp' / 'engine' / 'bridge.py']
+
+
+def _tools():
+    """Return all that decides how the products are made."""
+    return [*sorted(INSIDE.glob('*.py')), WORKSHOP, json.dumps(FILES)]

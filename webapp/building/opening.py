@@ -1,0 +1,98 @@
+"""Compute what the page shows before its engine is there: the opening example's answer and its figures.
+
+Run by the environment's Python: ``python -m webapp.building.opening``; prints the JSON that goes into the page.
+"""
+
+import json
+import subprocess
+import sys
+
+from webapp.building.places import ROOT, WEBAPP, content_key
+from webapp.building.stop import Stop
+
+EXAMPLE = 'opening'  # webapp/examples/opening.json is the plan that the page opens with
+
+
+def opening_json(python):
+    """Return the opening answer as the JSON text for the page.
+
+    Parameters
+    ----------
+    python : Path
+        The interpreter that has numpy and bokeh. [unitless]
+
+    Returns
+    -------
+    text : str
+        One JSON object.
+    """
+    print('Computing the opening example')
+    command = [python, '-m', 'webapp.building.opening']
+    done = subprocess.run(command, cwd=ROOT, capture_output=True, text=True, encoding='utf-8')
+    if done.returncode:
+        raise Stop(f'The opening example could not be computed: {done.stderr.strip().splitlines()[-1][:300]}')
+
+    return done.stdout
+
+
+def opening():
+    """Return what the page starts with.
+
+    Returns
+    -------
+    opening : dict
+        answer, items (one Bokeh document for each figure), keys, clauses, examples, version, checksum.
+    """
+    from pycore import __version__, api, plan_keys, sentence
+    from pycore.columns import FIGURES
+    from webapp import figures
+
+    plans = examples()
+    answer = api.note(plan=plans[EXAMPLE]['plan'], figures=list(FIGURES))
+    pictures = answer['figures']
+    items = {name: figures.build(name, picture) for name, picture in pictures.items()}
+    for picture in pictures.values():
+        del picture['columns']  # they are in the figure's own document
+
+    return {
+        'answer': answer,
+        'items': items,
+        'keys': plan_keys.table(),
+        'clauses': sentence.CLAUSES,
+        'examples': [{'name': name, **shown(example, api)} for name, example in plans.items()],
+        'version': __version__,
+        'checksum': content_key(*sorted((ROOT / 'pycore').rglob('*.py'))),
+    }
+
+
+def examples():
+    """Return the worked examples, the opening one first.
+
+    Returns
+    -------
+    examples : dict of str to dict
+        By file name, as they are written.
+    """
+    paths = sorted((WEBAPP / 'examples').glob('*.json'), key=lambda path: (path.stem != EXAMPLE, path.stem))
+
+    return {path.stem: json.loads(path.read_text(encoding='utf-8')) for path in paths}
+
+
+def shown(example, api):
+    """Return what the page says of an example: its title, what it invites to, its link."""
+    return {
+        'title': example['plan']['title'],
+        'invite': example.get('invite'),
+        'link': api.note(plan=example['plan'])['link'],
+    }
+
+
+if __name__ == '__main__':
+    sys.stdout.reconfigure(encoding='utf-8')
+    # a bridge's own way with arrays and numbers that JSON has no word for, so that page and worker say the same
+    from webapp.engine.bridge import packed
+
+    text, arrays = packed(opening())
+    if arrays:
+        sys.exit('the opening answer holds arrays outside its figures')
+    print(text)

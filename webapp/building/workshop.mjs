@@ -1,0 +1,47 @@
+// Runs one Python file in the pinned Pyodide under Node, at build time. Usage: node workshop.mjs JOB.json
+// The job: {runtime, stdlib, script, folders: {name: path}, snapshot?}. The folders are seen by Python as /name.
+// With `snapshot` the memory is written there after the script has run; clock and chance stand still, so that it is always the same.
+
+import fs from 'node:fs';
+import crypto from 'node:crypto';
+import path from 'node:path';
+import { pathToFileURL } from 'node:url';
+
+const job = JSON.parse(fs.readFileSync(process.argv[2], 'utf8'));
+
+function standStill() {
+  const noon = Date.UTC(2026, 0, 1, 12);
+  Date.now = () => noon;
+  performance.now = () => 0;
+  const fill = (view) => new Uint8Array(view.buffer, view.byteOffset, view.byteLength).fill(42) && view;
+  crypto.randomFillSync = fill;
+  globalThis.crypto.getRandomValues = fill;
+}
+
+async function booted() {
+  const { loadPyodide } = await import(pathToFileURL(path.join(job.runtime, 'pyodide.mjs')).href);
+  return loadPyodide({
+    indexURL: job.runtime,
+    stdLibURL: job.stdlib,
+    packageBaseUrl: job.runtime,
+    lockFileContents: { info: { arch: 'wasm32', platform: 'emscripten', version: '', python: '' }, packages: {} },
+    jsglobals: {},
+    env: { PYTHONHASHSEED: '0', PYTHONNODEBUGRANGES: '1', PYTHONDONTWRITEBYTECODE: '1' },
+    _makeSnapshot: Boolean(job.snapshot),
+  });
+}
+
+if (job.snapshot) standStill();
+const python = await booted();
+for (const [name, folder] of Object.entries(job.folders)) {
+  python.FS.mkdirTree(`/${name}`);
+  python.mountNodeFS(`/${name}`, folder);
+}
+try {
+  python.runPython(fs.readFileSync(job.script, 'utf8'), { filename: path.basename(job.script) });
+} catch (error) {
+  process.stderr.write(`${error.message}\n`);
+  process.exit(1);
+}
+for (const name of Object.keys(job.folders)) python.FS.unmount(`/${name}`);
+if (job.snapshot) fs.writeFileSync(job.snapshot, python.makeMemorySnapshot());
