@@ -42,13 +42,15 @@ def first_confusion(periods, half_widths, m, limit):
     Returns
     -------
     separation : Fraction or None
-        An edge ``k P_i - w_i``; 0 where the first zone never ends; None where
+        An edge ``k P_i - w_i``; 0 where the first zone does not end; None where
         there is none up to the limit.
 
     Notes
     -----
     The intervals are open. Where one is left and another entered at the same
-    point, neither holds the point, so leaving comes before entering.
+    point, neither holds the point, so leaving comes before entering. The first
+    zone is all that hangs together with zero; where the blur is so wide that
+    it runs into the next interval of a comb, that interval belongs to it.
     """
     always = [2 * w > p for p, w in zip(periods, half_widths, strict=True)]
     m -= sum(always)
@@ -57,11 +59,13 @@ def first_confusion(periods, half_widths, m, limit):
     combs = [(Fraction(p), Fraction(w)) for p, w, on in zip(periods, half_widths, always, strict=True) if not on]
     if len(combs) < m:
         return None
-    return _swept(combs, m, Fraction(limit))
+    # at least one whole interval, so that a zone that has no end shows as such and is not taken for a clean sweep
+    found = _swept(combs, m, max(Fraction(limit), *(period for period, _ in combs)))
+    return found if found is not None and found <= limit else None
 
 
 def _swept(combs, m, limit):
-    """Return the first edge at which m of the combs hold again after fewer did, or None."""
+    """Return the first edge at which m of the combs hold again after fewer did, or None; 0 where m always hold."""
     holding, away = len(combs), False
     for start, stop in _windows(combs, limit):
         owner, tooth, entering = ordered_edges(combs, start, stop)
@@ -75,7 +79,7 @@ def _swept(combs, m, limit):
                 return int(tooth[again[0]]) * period - width
             away = True
         holding = counts[-1] if counts.size else holding
-    return None
+    return None if away else Fraction(0)
 
 
 def _windows(combs, limit):
