@@ -1,0 +1,243 @@
+"""Detection: what a target returns, what is lost, and what false alarms ask for.
+
+Signal-to-noise goes by energy, never by 1/bandwidth. A target's strength on a
+PRF is a single number K with the unit m⁴: one-pulse signal-to-noise is K/R⁴.
+"""
+
+import math
+
+import numpy as np
+
+from pycore.constants import BOLTZMANN_J_K, REFERENCE_TEMPERATURE_K
+from pycore.marcum import threshold
+from pycore.swerling import at_least, set_probability
+
+
+def reference_strength(snr_db, at_m, pulse_s, wavelength_m, at_pulse_s=None):
+    """Return a target's strength on each PRF from one signal-to-noise ratio at one range.
+
+    Parameters
+    ----------
+    snr_db : float
+        One-pulse signal-to-noise ratio on the first PRF's carrier. [dB]
+    at_m : float
+        Range at which that holds. [m]
+    pulse_s, wavelength_m : float arrays, shape N
+        Pulse length and wavelength of each PRF. [s, m]
+    at_pulse_s : float or None
+        Pulse length that ``snr_db`` was measured with; the first PRF's where None. [s]
+
+    Returns
+    -------
+    strength_m4 : float array, shape N
+        S R⁴ (τ_i/τ_1)(λ_i/λ_1)²: energy, and the square of the wavelength at the same antenna gain. [m⁴]
+    """
+    pulse_s, wavelength_m = np.broadcast_arrays(np.atleast_1d(pulse_s), np.atleast_1d(wavelength_m))
+    measured_s = pulse_s[0] if at_pulse_s is None else at_pulse_s
+    return 10.0 ** (snr_db / 10.0) * at_m**4 * (pulse_s / measured_s) * (wavelength_m / wavelength_m[0]) ** 2
+
+
+def radar_equation_strength(peak_w, gain_db, rcs_m2, noise_figure_db, losses_db, pulse_s, wavelength_m):
+    """Return a target's strength on each PRF from the radar equation.
+
+    Parameters
+    ----------
+    peak_w : float
+        Peak power. [W]
+    gain_db : float
+        Antenna gain on the beam's axis, the same both ways. [dB]
+    rcs_m2 : float
+        Radar cross-section. [m²]
+    noise_figure_db, losses_db : float
+        Noise figure and all other losses. [dB]
+    pulse_s, wavelength_m : float arrays, shape N
+        Pulse length and wavelength of each PRF. [s, m]
+
+    Returns
+    -------
+    strength_m4 : float array, shape N
+        P τ G² λ² σ/((4π)³ k 290 K F L). [m⁴]
+
+    References
+    ----------
+    The radar range equation in terms of pulse energy (common practice).
+    """
+    energy_j = peak_w * np.asarray(pulse_s, dtype=float)
+    power = 10.0 ** ((2.0 * gain_db - noise_figure_db - losses_db) / 10.0)
+    noise_j = BOLTZMANN_J_K * REFERENCE_TEMPERATURE_K
+    return energy_j * power * np.asarray(wavelength_m) ** 2 * rcs_m2 / ((4.0 * math.pi) ** 3 * noise_j)
+
+
+def one_pulse_signal(strength_m4, range_m, first_opening_m):
+    """Return the one-pulse signal-to-noise ratio over range, not eclipsed.
+
+    Parameters
+    ----------
+    strength_m4 : float or array, shape S
+        Of :func:`reference_strength` or :func:`radar_equation_strength`. [m⁴]
+    range_m : float or array, shape S
+        Range. [m]
+    first_opening_m : float or array, shape S
+        Range nearer than which the law is held constant. [m]
+
+    Returns
+    -------
+    ratio : float array, shape S
+        Power ratio.
+    """
+    return strength_m4 / np.maximum(np.maximum(range_m, first_opening_m), math.ulp(1.0)) ** 4
+
+
+def beam_offsets(pri_s, pulses, fill_pulses, time_on_target_s):
+    """Return how far from the beam's axis each CPI is when the set is centred on the target.
+
+    Parameters
+    ----------
+    pri_s : float array, shape N
+        Intervals in sending order. [s]
+    pulses, fill_pulses : int or array, shape N
+        Pulses that count, and pulses sent before them. [unitless]
+    time_on_target_s : float
+        Time in which the beam turns by its one-way half-power width. [s]
+
+    Returns
+    -------
+    offset : float array, shape N
+        From the set's middle to the middle of the pulses that count. [one-way half-power beamwidths]
+    """
+    pri_s = np.asarray(pri_s, dtype=float)
+    counted_s, fill_s = pri_s * pulses, pri_s * fill_pulses
+    start_s = np.cumsum(counted_s + fill_s) - counted_s
+    return (start_s + 0.5 * counted_s - 0.5 * (counted_s + fill_s).sum()) / time_on_target_s
+
+
+def beam_loss_db(offset):
+    """Return what a CPI loses because the beam points beside the target.
+
+    Parameters
+    ----------
+    offset : float or array, shape S
+        Of :func:`beam_offsets`. [one-way half-power beamwidths]
+
+    Returns
+    -------
+    loss_db : float array, shape S
+        80 log10(2) u² = 24.08 u². Derived here: a Gaussian beam falls to a half at u = ½ one way, so its power
+        is 2^(-4u²) one way and 2^(-8u²) both ways. [dB]
+    """
+    return 80.0 * math.log10(2.0) * np.asarray(offset, dtype=float) ** 2
+
+
+def false_alarm_per_cpi(overall, n, m):
+    """Return the false-alarm probability of one CPI that gives the overall one after M of N.
+
+    Parameters
+    ----------
+    overall : float
+        Probability for one cell of range and speed after M of N, above 0 and below 1. [unitless]
+    n, m : int
+        Number of CPIs, all alike in this, and how many must agree. [unitless]
+
+    Returns
+    -------
+    probability : float
+        p with Σ_{k≥M} C(N, k) p^k (1 - p)^(N - k) = overall, to rounding.
+    """
+    low, high = math.log(overall) - math.log(math.comb(n, m)) - 1.0, 0.0
+    for _ in range(70):
+        middle = 0.5 * (low + high)
+        low, high = (low, middle) if at_least(np.full(n, math.exp(middle)), m) > overall else (middle, high)
+    return math.exp(0.5 * (low + high))
+
+
+def set_threshold(overall, n, m, outputs=1):
+    """Return the threshold of every CPI for an overall false-alarm probability.
+
+    Parameters
+    ----------
+    overall : float
+        Probability for one cell after M of N. [unitless]
+    n, m : int
+        Number of CPIs, and how many must agree. [unitless]
+    outputs : int
+        Independent outputs of each CPI whose powers are added. [unitless]
+
+    Returns
+    -------
+    threshold : float
+        y, against the noise power of one output. [unitless]
+    """
+    return threshold(false_alarm_per_cpi(overall, n, m), outputs)
+
+
+def signal_needed_db(wanted, n, m, overall, case, outputs=1):
+    """Return the signal-to-noise ratio that each of N equal CPIs needs.
+
+    Parameters
+    ----------
+    wanted : float
+        Wanted probability of detection after M of N. [unitless]
+    n, m : int
+        Number of CPIs, and how many must detect the target. [unitless]
+    overall : float
+        False-alarm probability of one cell after M of N. [unitless]
+    case : str
+        One of ``swerling.CASES``. [unitless]
+    outputs : int
+        Independent outputs of each CPI whose powers are added. [unitless]
+
+    Returns
+    -------
+    needed_db : float
+        Mean signal-to-noise ratio of a CPI, summed over its outputs. [dB]
+    """
+    level = set_threshold(overall, n, m, outputs)
+    low, high = -60.0, 160.0
+    for _ in range(50):
+        middle = 0.5 * (low + high)
+        found = set_probability(np.full(n, 10.0 ** (middle / 10.0)), m, level, case, outputs)
+        low, high = (low, middle) if found > wanted else (middle, high)
+    return 0.5 * (low + high)
+
+
+def coverage_cells(range_m, speed_m_s, gate_m, filter_width_m_s):
+    """Return how many cells of range and speed the coverage has.
+
+    Parameters
+    ----------
+    range_m, speed_m_s : tuples of two floats
+        The coverage. [m, m/s]
+    gate_m : float or array, shape N
+        Length of a gate, c/(2B). [m]
+    filter_width_m_s : float or array, shape N
+        Width of a filter, lambda/(2nT). [m/s]
+
+    Returns
+    -------
+    cells : int
+        Gates × filters, both whole and of the finest PRF.
+    """
+    gates = math.ceil((range_m[1] - range_m[0]) / np.min(gate_m) * (1.0 - 1e-12))
+    filters = math.ceil((speed_m_s[1] - speed_m_s[0]) / np.min(filter_width_m_s) * (1.0 - 1e-12))
+    return max(gates, 1) * max(filters, 1)
+
+
+def sets_per_scan(scan_period_s, time_on_target_s, used_s):
+    """Return how many sets of CPIs are sent in one turn of the antenna.
+
+    Parameters
+    ----------
+    scan_period_s : float
+        Time of one turn. [s]
+    time_on_target_s : float
+        Time in which the beam turns by its width. [s]
+    used_s : float
+        Time of one set. [s]
+
+    Returns
+    -------
+    sets : float
+        Beamwidths in a turn × whole sets in each, at least one. Expected false reports of a scan are this times
+        cells times the overall false-alarm probability.
+    """
+    return scan_period_s / time_on_target_s * max(math.floor(time_on_target_s / used_s * (1.0 + 1e-12)), 1)
