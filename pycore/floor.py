@@ -12,7 +12,7 @@ from pycore.spans import Spans
 from pycore.visibility import visible_share
 
 
-def floor_ranges(first_opening_m, range_m):
+def floor_ranges(first_opening_m, range_m, near_opening_m=None, near_to_m=None):
     """Return the ranges that PRFs with endless intervals would see.
 
     Parameters
@@ -21,16 +21,27 @@ def floor_ranges(first_opening_m, range_m):
         Range from which on enough of the echo comes after the pulse: c (recovery + received_min pulse) / 2. [m]
     range_m : tuple of two floats
         The coverage's ranges. [m]
+    near_opening_m : float or None
+        The same of a near pulse; None without one. [m]
+    near_to_m : float or None
+        Range up to which the near pulse serves, and the long one does not. [m]
 
     Returns
     -------
     ranges : Spans
-        From each PRF's first opening to the end of the coverage. [m]
+        From each PRF's first opening to the end of the coverage; with a near pulse,
+        from that one's opening as far as it serves, and the long pulse's part beyond.
     """
     low, high = range_m
-    start = np.maximum(first_opening_m, low)
-    some = np.flatnonzero(start < high)
-    return Spans(some, start[some], np.full(some.size, float(high)))
+    opening = np.asarray(first_opening_m, dtype=float)
+    parts = [(opening, np.full(opening.size, float(high)))]
+    if near_opening_m is not None:
+        near = np.full(opening.size, float(near_opening_m)), np.full(opening.size, min(float(near_to_m), high))
+        parts = [near, (np.maximum(opening, near_to_m), parts[0][1])]
+    start = np.maximum(np.concatenate([a for a, _ in parts]), low)
+    stop = np.concatenate([b for _, b in parts])
+    some = start < stop
+    return Spans(np.tile(np.arange(opening.size), len(parts))[some], start[some], stop[some])
 
 
 def floor_speeds(notch_m_s, speed_m_s):
