@@ -1,0 +1,47 @@
+// Between the state and the engine: one request for all that is on the screen; what comes back goes to the state.
+// Knows when an answer is late, and that the engine may not be there yet or never will be.
+
+const LATE_MS = 150; // the running line appears
+const LONG_MS = 1000; // and the word "computing"
+
+export function createAsking({ engine, state, figures, units, onLate, onAnswer, onFault }) {
+  let opened = null; // a link's text, until the engine has read it
+  let waits = 0;
+  let timers = [];
+
+  const late = (how) => onLate(how);
+  const rest = () => {
+    timers.forEach(clearTimeout);
+    late('');
+  };
+
+  function ask() {
+    const request = { ...state.request(), opened };
+    const args = { edits: request.edits.map(plain), figures: figures(), units: units() };
+    if (waits === 0) timers = [setTimeout(late, LATE_MS, 'late'), setTimeout(late, LONG_MS, 'long')];
+    waits += 1;
+    engine.newest('note', opened === null ? { ...args, plan: request.plan } : { ...args, opened })
+      .then((answer) => { if (answer) take(request, answer); }, (error) => onFault(error, request))
+      .finally(() => {
+        waits -= 1;
+        if (waits === 0) rest();
+      });
+  }
+
+  function take(request, answer) {
+    if (!state.settle(request, answer)) return;
+    if (request.opened === opened) opened = null;
+    onAnswer(answer, request);
+  }
+
+  return {
+    ask,
+    open: (text) => { opened = text; },
+    isOpening: () => opened !== null,
+  };
+}
+
+// The core needs the edit as it was made; its number, run and name are the state's own.
+function plain({ count, run, name, ...edit }) {
+  return edit;
+}

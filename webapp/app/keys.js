@@ -1,0 +1,33 @@
+// What the page knows of the plan's keys: the core's own table, looked up by the path of a number.
+// A path may name a part: `coverage.range_km.1`, `waveform.pri_us.0`, `radar.pulse_us.2`, `must_see.0.range_km.1`.
+
+export function createKeys(table) {
+  const byPath = new Map(table.map((key) => [key.path, key]));
+  const of = (path) => byPath.get(path) ?? byPath.get(path.replace(/\.\d+(?=\.|$)/g, '')) ?? null;
+  return { table, of };
+}
+
+export function valueAt(document, path) {
+  return path.split('.').reduce((value, part) => value?.[part], document);
+}
+
+// A plan with one value replaced; the plan itself stays as it was.
+export function withValue(document, path, value) {
+  const [head, ...rest] = path.split('.');
+  const copy = Array.isArray(document) ? [...document] : { ...document };
+  copy[head] = rest.length ? withValue(copy[head] ?? {}, rest.join('.'), value) : value;
+  return copy;
+}
+
+// How many inputs of one plan differ from another's.
+export function differing(one, other) {
+  if (isBranch(one) && isBranch(other)) {
+    const names = new Set([...Object.keys(one), ...Object.keys(other)]);
+    return [...names].reduce((count, name) => count + differing(one[name], other[name]), 0);
+  }
+  return JSON.stringify(one) === JSON.stringify(other) ? 0 : 1;
+}
+
+function isBranch(value) {
+  return value !== null && typeof value === 'object' && !Array.isArray(value);
+}

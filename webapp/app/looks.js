@@ -1,0 +1,40 @@
+// How each number looks now: the last good plan's value, or what a pending edit says it will be, or a refused text.
+// Knows the state and the keys; draws nothing.
+
+import { valueAt } from './keys.js';
+
+export function createLooks({ state, keys, quantities, engineState }) {
+  function pendingShown(path, key) {
+    const edit = state.now.pending.findLast((pending) => pending.key === path);
+    if (!edit) return undefined;
+    return edit.text ?? quantities.shown(key, edit.value, path);
+  }
+
+  // What the sentence shows for a path: `said` is its own way of showing (a list shares one unit).
+  function look(path, said) {
+    const key = keys.of(path);
+    const value = valueAt(state.now.plan, path);
+    const refusal = state.now.refused.find((edit) => edit.key === path);
+    const pending = pendingShown(path, key);
+    return {
+      shown: pending ?? said ?? quantities.shown(key, value, path),
+      value,
+      label: key?.label ?? path,
+      lowest: key?.lowest,
+      highest: key?.highest,
+      waiting: pending !== undefined && engineState() !== 'ready',
+      refused: refusal?.text,
+      plain: engineState() === 'failed',
+    };
+  }
+
+  // One line for each refused number: the core's sentence, and what everything below still shows.
+  function refusals() {
+    return state.now.refused.map(({ key: path, message }) => {
+      const key = keys.of(path);
+      return { key: path, label: key?.label ?? path, message, still: quantities.shown(key, valueAt(state.now.plan, path), path) };
+    });
+  }
+
+  return { look, refusals };
+}

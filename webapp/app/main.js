@@ -1,0 +1,97 @@
+// The composition root: the only file that knows every part. A hand commits an edit to the state, the state is asked of the
+// engine, the answer is painted; nothing flows the other way.
+
+import { createAddress } from './address.js';
+import { createAsking } from './asking.js';
+import { listenToDragging } from './dragging.js';
+import { startEngine } from './engine.js';
+import { createHands } from './hands.js';
+import { createHead } from './head.js';
+import { createKeys } from './keys.js';
+import { openedPlan } from './link.js';
+import { createPage } from './page.js';
+import { partOfPage } from './payload.js';
+import { createQuantities } from './quantities.js';
+import { flipped } from './quiet.js';
+import { createState } from './state.js';
+import { createStatus } from './status.js';
+import { createStrip } from './strip.js';
+import { createTravel } from './travel.js';
+import { listenToTyping } from './typing.js';
+
+const root = document.documentElement;
+const opening = JSON.parse(document.getElementById('opening').textContent);
+const keys = createKeys(opening.keys);
+const quantities = createQuantities(opening);
+const status = createStatus(document.getElementById('status'));
+const state = createState(opening.answer.plan);
+const address = createAddress(openLink);
+const hands = createHands({ state, keys, quantities, status, redraw: () => page.redraw() });
+const page = createPage({ opening, keys, quantities, state, hands, ask: () => asking.ask() });
+const travel = createTravel({ state, status, page, buttons: { undo: document.getElementById('undo'), redo: document.getElementById('redo') } });
+const head = createHead({ opening, state, status, address, hands, openExample });
+let findings = opening.answer.findings;
+
+// The engine's parts are unpacked on this thread: first the note is painted.
+let painted = null;
+const first = new Promise((resolve) => { painted = resolve; });
+const engine = startEngine({ payload: (name) => first.then(() => partOfPage(name)), onFail: failed });
+const asking = createAsking({ engine, state, figures: page.pictures.visible, units: () => quantities.units, onLate: head.late, onAnswer: answered, onFault: fault });
+
+function answered(answer, request) {
+  status.sayWhenQuiet(flipped(request.opened ? [] : findings, answer.findings));
+  findings = answer.findings;
+  if (answer.said.length) status.say(answer.said.join(' '));
+  if (request.opened !== null) head.opened(answer);
+  head.answered(answer);
+  address.show(answer.link);
+  page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(request.count, Number(root.dataset.shown)); });
+}
+
+function fault(error) {
+  if (root.dataset.engine !== 'failed') status.say(`This could not be computed: ${error.message}`, ['Undo', travel.undo]);
+}
+
+function failed(reason) {
+  root.dataset.engine = 'failed';
+  head.failed(reason);
+  page.redraw();
+}
+
+// A link stands as a sentence at once; its numbers come from the engine, never from another plan.
+async function openLink(text, name = 'The link') {
+  page.clear();
+  asking.open(text);
+  state.open(await openedPlan(text, opening) ?? state.now.plan, name);
+}
+
+function openExample({ link, title }) {
+  address.add(link);
+  openLink(link, title);
+}
+
+state.watch((cause) => {
+  page.redraw();
+  travel.update();
+  head.update();
+  if (cause !== 'answer') asking.ask();
+});
+
+const wasDragged = listenToDragging(document.body, hands);
+const strip = createStrip(document.getElementById('strip'), hands);
+listenToTyping(document.body, { ...hands, wasDragged, strip });
+page.redraw();
+head.update();
+
+async function begin() {
+  root.dataset.engine = 'starting';
+  if (address.opened) await openLink(address.opened);
+  else await page.paint(opening.answer, 0);
+  painted();
+  await engine.ready;
+  root.dataset.engine = 'ready';
+  page.redraw();
+  head.update();
+}
+
+begin().catch(() => {}); // a failed start is told by onFail

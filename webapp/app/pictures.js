@@ -1,0 +1,86 @@
+// The figures' frames: number, caption, text summary, and which of them are on the screen. What is drawn is figures.js's.
+// A figure that is not on the screen is neither embedded nor computed; `onSeen()` tells that one has come into view.
+
+import { mount, update } from './figures.js';
+import { setText } from './number.js';
+
+const NEAR = '240px'; // a figure this close to the screen counts as on it
+
+export function createPictures({ chief, rest, items, onSeen }) {
+  const frames = new Map();
+  const inView = new IntersectionObserver((entries) => {
+    for (const { target, isIntersecting } of entries) frames.get(target.dataset.figure).seen = isIntersecting;
+    if (entries.some(({ isIntersecting }) => isIntersecting)) onSeen();
+  }, { rootMargin: NEAR });
+
+  const frameFor = (name) => {
+    if (!frames.has(name)) {
+      const frame = build(name);
+      frames.set(name, frame);
+      inView.observe(frame.node);
+    }
+    return frames.get(name);
+  };
+
+  return {
+    // Figures stand in the core's order; the first is the chief one and stands beside the plan.
+    arrange(names) {
+      names.forEach((name, i) => {
+        const { node, label } = frameFor(name);
+        const place = i === 0 ? chief : rest;
+        if (node.parentNode !== place || place.children[i === 0 ? 0 : i - 1] !== node) place.insertBefore(node, place.children[i === 0 ? 0 : i - 1] ?? null);
+        label.dataset.number = i + 1;
+      });
+    },
+    visible: () => [...frames].filter(([, frame]) => frame.seen).map(([name]) => name),
+    outdated: (count) => [...frames].some(([, frame]) => frame.seen && frame.count !== count),
+    async show(pictures, count) {
+      for (const [name, picture] of Object.entries(pictures)) await draw(frameFor(name), name, picture, items[name], count);
+    },
+    clear() {
+      for (const frame of frames.values()) {
+        frame.count = -1;
+        frame.node.classList.add('pending');
+        for (const part of [frame.caption, frame.summary]) setText(part, '');
+      }
+    },
+    stale: (text) => { for (const { shows } of frames.values()) setText(shows, text); },
+  };
+}
+
+async function draw(frame, name, picture, item, count) {
+  caption(frame, picture);
+  frame.count = count;
+  frame.mounted ??= mount(name, frame.plot, item);
+  await frame.mounted;
+  if (picture.columns) await update(name, picture);
+  frame.node.classList.remove('pending');
+}
+
+function caption(frame, { title, caption: text, summary }) {
+  setText(frame.label, `Fig. ${frame.label.dataset.number} ${title}.`);
+  setText(frame.caption, text);
+  setText(frame.summary, summary ?? '');
+}
+
+function build(name) {
+  const node = document.createElement('figure');
+  node.className = 'figure pending';
+  node.dataset.figure = name;
+  const part = (tag, className, parent = node) => {
+    const child = document.createElement(tag);
+    child.className = className;
+    parent.append(child);
+    return child;
+  };
+  const plot = part('div', 'plot');
+  const reading = part('p', 'figure-reading');
+  const words = part('figcaption', '');
+  const label = part('span', 'figure-name', words);
+  words.append(' ');
+  const text = part('span', 'figure-caption', words);
+  words.append(' ');
+  const shows = part('span', 'figure-shows', words);
+  const summary = part('p', 'out-of-sight');
+  return { node, plot, reading, label, caption: text, shows, summary, seen: false, mounted: null, count: -1 };
+}

@@ -1,0 +1,85 @@
+// The one state of the note: the last good plan, the edits that it has not answered yet, those it refused, and undo.
+// Knows nothing of the page or the engine. Edits are {key, text}, {key, value} or {do: ...}, as the core takes them.
+
+const DEPTH = 200; // undo steps
+
+export function createState(plan) {
+  const watchers = [];
+  const state = { plan, pending: [], refused: [], past: [], future: [], epoch: 0, count: 0 };
+  const changed = (cause) => watchers.forEach((watch) => watch(cause));
+  return {
+    now: state,
+    watch: (watcher) => watchers.push(watcher),
+    commit: (edit, run) => { commit(state, edit, run); changed('edit'); },
+    putBack: (key) => { state.refused = state.refused.filter((edit) => edit.key !== key); changed('put back'); },
+    undo: () => travel(state, state.past, state.future, changed),
+    redo: () => travel(state, state.future, state.past, changed),
+    takeBack: (run) => { if (state.past.at(-1)?.run === run) takeBack(state, changed); },
+    open: (next, name) => { open(state, next, name); changed('open'); },
+    settle: (request, answer) => settle(state, request, answer, changed),
+    request: () => ({ plan: state.plan, edits: [...state.pending, ...state.refused], epoch: state.epoch, count: state.count }),
+  };
+}
+
+// A run (a drag, arrow steps without a pause) is one step of undo, and only its newest value waits.
+function commit(state, edit, run) {
+  state.count += 1;
+  if (!run || state.past.at(-1)?.run !== run) {
+    state.past = [...state.past, { ...moment(state), key: edit.key, name: edit.name, run, at: state.count }].slice(-DEPTH);
+  }
+  state.future = [];
+  const others = state.pending.filter((other) => !run || other.run !== run);
+  state.pending = [...others, { ...edit, run, count: state.count }];
+  state.refused = state.refused.filter((other) => other.key !== edit.key || !edit.key);
+}
+
+function open(state, plan, name) {
+  state.count += 1;
+  state.past = [...state.past, { ...moment(state), name, at: state.count }].slice(-DEPTH);
+  Object.assign(state, { plan, pending: [], refused: [], future: [], epoch: state.epoch + 1 });
+}
+
+function moment({ plan, pending }) {
+  return { plan, pending };
+}
+
+function travel(state, from, to, changed) {
+  const step = from.at(-1);
+  if (!step) return null;
+  from.pop();
+  to.push({ ...step, ...moment(state) });
+  Object.assign(state, { plan: step.plan, pending: step.pending, refused: [], epoch: state.epoch + 1, count: state.count + 1 });
+  changed('travel');
+  return step;
+}
+
+function takeBack(state, changed) {
+  const step = state.past.pop();
+  Object.assign(state, { plan: step.plan, pending: step.pending, epoch: state.epoch + 1, count: state.count + 1 });
+  changed('travel');
+}
+
+// What an answer included is no longer pending; what came since still is. An answer from before a jump is dropped.
+function settle(state, request, answer, changed) {
+  if (request.epoch !== state.epoch) return false;
+  const came = (edit) => edit.count > request.count;
+  const refusals = answer.refused.map((refusal) => ({ ...sentFor(request, refusal), ...refusal }));
+  const replaced = new Set(state.pending.filter(came).map((edit) => edit.key));
+  state.plan = answer.plan;
+  state.pending = state.pending.filter(came);
+  // A refused step is told and forgotten; a refused text stays where it was typed.
+  state.refused = refusals.filter((edit) => edit.text !== undefined && edit.key && !replaced.has(edit.key));
+  forgetRefused(state, refusals);
+  changed('answer');
+  return true;
+}
+
+function sentFor({ edits }, { key }) {
+  return edits.findLast((edit) => edit.key === key) ?? {};
+}
+
+// What was refused has changed nothing, so there is nothing to undo.
+function forgetRefused(state, refusals) {
+  const counts = new Set(refusals.map((edit) => edit.count));
+  state.past = state.past.filter((step) => !counts.has(step.at));
+}

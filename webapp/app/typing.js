@@ -1,0 +1,86 @@
+// Typing a number in its place, and stepping it with the arrow keys. Knows keys and clicks; the plan only through `plan`.
+// `plan` is {commit(edit, run), putBack(key), refusedText(key), step(key, count, size, from), isRail(key), ...}.
+
+import { closeField, fieldText, isOpen, isTouched, openField, selectAll, touch } from './number.js';
+
+const STARTS_A_NUMBER = /^[\d.,+\-\u2212]$/;
+
+export function listenToTyping(root, plan) {
+  const on = (type, act) => root.addEventListener(type, (event) => {
+    const number = event.target.closest?.('.number[role="spinbutton"]');
+    if (number) act(number, event);
+  });
+  on('keydown', (number, event) => key(number, event, plan));
+  on('input', (number) => touch(number, true));
+  on('focusout', (number) => leave(number, plan));
+  on('click', (number, event) => {
+    if (isOpen(number) || plan.wasDragged()) return;
+    if (event.pointerType === 'touch') plan.strip.open(number);
+    else openField(number);
+  });
+}
+
+function key(number, event, plan) {
+  if (event.isComposing) return;
+  const action = isOpen(number) ? openKeys[event.key] : closedKeys[event.key];
+  if (arrows(number, event, plan) || (action && action(number, event, plan) !== false)) event.preventDefault();
+  else if (!isOpen(number) && STARTS_A_NUMBER.test(event.key) && !event.ctrlKey && !event.metaKey) {
+    openField(number, event.key);
+    event.preventDefault();
+  }
+}
+
+const openKeys = {
+  Enter: (number, event, plan) => {
+    commitField(number, plan);
+    selectAll(number);
+  },
+  Escape: (number, event, plan) => {
+    closeField(number);
+    plan.putBack(number.dataset.key);
+  },
+  Delete: removeEmpty,
+  Backspace: removeEmpty,
+};
+
+const closedKeys = {
+  Enter: (number) => openField(number),
+  F2: (number) => openField(number),
+  Escape: (number, event, plan) => plan.putBack(number.dataset.key),
+  Backspace: (number) => openField(number, ''),
+  Delete: (number) => openField(number, ''),
+};
+
+// Arrow: one step; Shift ten; Alt the finest. A typed number that is not committed yet is stepped from.
+function arrows(number, event, plan) {
+  if (!['ArrowUp', 'ArrowDown'].includes(event.key) || event.ctrlKey || event.metaKey) return false;
+  const size = event.altKey ? 'finest' : 'step';
+  const count = (event.key === 'ArrowUp' ? 1 : -1) * (event.shiftKey && !event.altKey ? 10 : 1);
+  const from = isTouched(number) ? plainNumber(fieldText(number)) : undefined;
+  touch(number, false);
+  plan.step(number.dataset.key, { count, size, from });
+  return true;
+}
+
+function plainNumber(text) {
+  const value = Number.parseFloat(text.replace('\u2212', '-').replace(',', '.'));
+  return Number.isFinite(value) ? value : undefined;
+}
+
+function commitField(number, plan) {
+  if (!isTouched(number)) return;
+  touch(number, false);
+  plan.commit({ key: number.dataset.key, text: fieldText(number) });
+}
+
+// Delete on an empty cell of the rail removes it.
+function removeEmpty(number, event, plan) {
+  return fieldText(number) === '' && plan.remove(number.dataset.key);
+}
+
+function leave(number, plan) {
+  if (!isOpen(number)) return;
+  commitField(number, plan);
+  closeField(number);
+  plan.redraw();
+}
