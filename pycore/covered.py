@@ -81,19 +81,15 @@ def covered_half_width(leak, clutter_to_noise):
     half = 0.5 * leak.blind_speed_m_s
     if clutter_to_noise * leak.passed[-1] > 1.0:
         return half
-    low = _last_above(leak, clutter_to_noise)
-    if low is None:
-        return 0.0
-    step = 0.5 / (len(leak.passed) - 1)
-    high = (math.floor(low / step) + 1.0) * step
+    low, high = _last_fall(leak, clutter_to_noise)
     for _ in range(60):
         middle = 0.5 * (low + high)
         low, high = (middle, high) if clutter_to_noise * leak.at(middle) > 1.0 else (low, middle)
     return min(high * leak.blind_speed_m_s, half)
 
 
-def _last_above(leak, ratio):
-    """Return an offset, in turns, that is above the noise and beyond which at most one step still is."""
+def _last_fall(leak, ratio):
+    """Return two offsets, in turns, between which the residue falls below the noise for good; 0, 0 if it never rises."""
     passed = leak.passed * ratio
     step = 0.5 / (len(passed) - 1)
     above = np.flatnonzero(passed > 1.0)
@@ -105,8 +101,8 @@ def _last_above(leak, ratio):
     for top in tops[tops > last + 1][::-1]:
         turn, height = _vertex(leak, (top - 1) * step, (top + 1) * step)
         if ratio * height > 1.0:
-            return turn
-    return last * step if last >= 0 else None
+            return turn, (top + 1) * step
+    return max(last, 0) * step, (last + 1) * step
 
 
 def _vertex(leak, low, high):
