@@ -89,7 +89,7 @@ def covered_half_width(leak, clutter_to_noise):
 
 
 def _last_fall(leak, ratio):
-    """Return two offsets, in turns, between which the residue falls below the noise for good; 0, 0 if it never rises."""
+    """Return two offsets, in turns, between which the residue falls below the noise for good; 0, 0 if it never does."""
     passed = leak.passed * ratio
     step = 0.5 / (len(passed) - 1)
     above = np.flatnonzero(passed > 1.0)
