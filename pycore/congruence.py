@@ -113,7 +113,7 @@ def consistent(remainders, moduli):
     Parameters
     ----------
     remainders : sequence of int arrays, length N, each of shape S
-        Gate numbers on each PRF. [gates]
+        Gate numbers on each PRF, from 0 to one less than its modulus. [gates]
     moduli : sequence of int, length N
         Gates in each PRI. [gates]
 
@@ -130,7 +130,7 @@ def consistent(remainders, moduli):
     number, modulus = np.zeros((), dtype=kind), 1
     agrees = np.ones((), dtype=bool)
     for remainder, other in zip(remainders, moduli, strict=True):
-        gap = np.asarray(remainder, dtype=kind) % other - number
+        gap = np.asarray(remainder, dtype=kind) - number
         common = math.gcd(modulus, other)
         agrees = agrees & (gap % common == 0)
         steps = gap // common * pow(modulus // common, -1, other // common) % (other // common)

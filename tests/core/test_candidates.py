@@ -49,14 +49,18 @@ class TestCoincidence:
         found = agreement(combs, m)
         covered = [g for a, b in zip(found.start, found.stop, strict=True) for g in range(round(a), round(b))]
         assert covered == enough
-        assert all(support[math.floor(best)] == many for best, many in zip(found.best, found.support, strict=True))
+        for start, stop, best, many in zip(found.start, found.stop, found.best, found.support, strict=True):
+            assert support[math.floor(best)] == many == max(support[round(start) : round(stop)])
 
     def test_gates_that_line_up_but_for_rounding_do_not_agree_with_their_neighbours(self):
-        gate = 299_792_458 * 0.1e-6  # a length without a short binary form
-        combs = [comb(1.5 * gate, 700 * gate, gate / 2, (0, 9e5)), comb(900.5 * gate, 901 * gate, gate / 2, (0, 9e5))]
-        assert all(
-            width > gate / 2 for width in np.diff([agreement(combs, 2).start, agreement(combs, 2).stop], axis=0)[0]
-        )
+        for clocks in range(1, 60):
+            gate = 299_792_458 * clocks * 1e-8  # lengths without a short binary form
+            combs = [comb((count // 2 + 0.5) * gate, count * gate, gate / 2, (0, 3e4 * gate)) for count in (700, 901)]
+            found = agreement(combs, 1)
+            assert (found.stop - found.start > gate / 2).all()
+            assert (np.diff(found.support) <= 1).all()
+            both = agreement(combs, 2)
+            assert (both.stop - both.start > gate / 2).all()
 
     def test_no_reports_agree_nowhere(self):
         assert agreement([NOWHERE, NOWHERE], 1).start.size == 0
@@ -158,6 +162,19 @@ class TestTrials:
         by_coincidence, _ = self.both(self.reports(targets=2))
         assert by_coincidence.right == 400
         assert by_coincidence.false > 0
+
+    def test_numbers_that_repeat_within_the_coverage_are_all_reported(self):
+        # 5 and 7 gates repeat every 35: in gates 20 to 99 each target shows two or three times
+        axis, moduli = (20 * GATE_M, 100 * GATE_M), (5, 7)
+        reports = drawn_reports(axis, np.array(moduli) * GATE_M, GATE_M, 1, 200, 3)
+        by_congruence = congruence_score(reports, axis, moduli, GATE_M, 2)
+        assert by_congruence == coincidence_score(reports, axis, np.array(moduli) * GATE_M, GATE_M, 2)
+        assert by_congruence.right == 200
+        assert 200 <= by_congruence.false <= 400
+
+    def test_a_remainder_that_rounds_up_to_the_interval_is_in_its_last_gate(self):
+        reports = drawn_reports((-2e-18, -1e-18), [7 * GATE_M, 7.5 * GATE_M], GATE_M, 1, 1, 1)
+        assert reports.cells.tolist() == [[[6, 7]]]
 
     def test_the_same_seed_gives_the_same_scores(self):
         assert self.both(self.reports(targets=2, trials=20)) == self.both(self.reports(targets=2, trials=20))

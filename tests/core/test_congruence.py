@@ -70,8 +70,10 @@ class TestConsistentCongruences:
         assert int(found) == number
         assert repeats == math.lcm(*moduli)
 
-    def test_a_remainder_that_is_not_reduced_is_taken_modulo(self):
-        assert int(consistent([-1, 13], [5, 7])[0]) == 34
+    def test_moduli_whose_multiple_is_just_beyond_sixty_four_bits_are_solved_too(self):
+        moduli, number = [4_194_301, 4_194_287, 4_194_277], 2**65 + 12_345
+        found, repeats = consistent([number % m for m in moduli], moduli)
+        assert int(found) == number % repeats
 
 
 @pytest.mark.parametrize(('periods', 'm', 'span'), [([7], 1, 7), ([6, 4], 2, 12), ([6, 4], 1, 4), ([8, 8, 3], 2, 8)])

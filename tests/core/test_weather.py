@@ -86,6 +86,11 @@ class TestTwoPrfs:
         pair = two_prf((ratio[0] * 2000, ratio[1] * 2000), CLOCK_HZ, WAVELENGTH_M)
         assert -pair.nyquist_m_s <= unfold(short, long, pair) < pair.nyquist_m_s
 
+    def test_a_rounding_below_the_lower_end_does_not_become_the_upper_end(self):
+        pair = two_prf((2000, 6000), CLOCK_HZ, WAVELENGTH_M)
+        just_below = np.nextafter(-pair.nyquist_m_s, -np.inf)
+        assert unfold(just_below, just_below, pair) < pair.nyquist_m_s
+
     def test_arrays_are_unfolded_as_each_alone(self):
         pair = two_prf((6000, 8000), CLOCK_HZ, WAVELENGTH_M)
         short, long = np.array([-13.0, 0.0, 7.5]), np.array([4.0, -9.0, 2.5])
