@@ -55,11 +55,9 @@ class TestCoincidence:
     def test_gates_that_line_up_but_for_rounding_do_not_agree_with_their_neighbours(self):
         for clocks in range(1, 60):
             gate = 299_792_458 * clocks * 1e-8  # lengths without a short binary form
-            combs = [comb((count // 2 + 0.5) * gate, count * gate, gate / 2, (0, 3e4 * gate)) for count in (700, 901)]
-            found = agreement(combs, 1)
-            assert (found.stop - found.start > gate / 2).all()
-            assert (np.diff(found.support) <= 1).all()
+            combs = [comb((count // 2 + 0.5) * gate, count * gate, gate / 2, (0, 630 * gate)) for count in (7, 9)]
             both = agreement(combs, 2)
+            assert both.start.size == 10
             assert (both.stop - both.start > gate / 2).all()
 
     def test_no_reports_agree_nowhere(self):
