@@ -88,6 +88,24 @@ def one_pulse_signal(strength_m4, range_m, first_opening_m):
     return strength_m4 / np.maximum(np.maximum(range_m, first_opening_m), math.ulp(1.0)) ** 4
 
 
+def received_power(share, form='whole'):
+    """Return the power that eclipsing leaves of an echo's signal-to-noise.
+
+    Parameters
+    ----------
+    share : float or array, shape S
+        Received share of the echo. [unitless]
+    form : str
+        ``'whole'`` or ``'part'``, as for :func:`pycore.eclipsing.eclipsing_loss`. [unitless]
+
+    Returns
+    -------
+    power : float array, shape S
+        ε² or ε, nought where nothing is received.
+    """
+    return np.asarray(share, dtype=float) ** {'whole': 2, 'part': 1}[form]
+
+
 def beam_offsets(pri_s, pulses, fill_pulses, time_on_target_s):
     """Return how far from the beam's axis each CPI is when the set is centred on the target.
 
