@@ -55,7 +55,8 @@ def sweep(spans, limits):
     edge[0], edge[1 : count + 1], edge[count + 1 : -1], edge[-1] = low, spans.start, spans.stop, high
     # Within one PRF spans are disjoint, so a running sum of bits switched on and off never carries into a neighbour.
     step = np.zeros(2 * count + 2, dtype=np.int64)
-    step[1 : count + 1] = bit = 1 << spans.prf
+    # The browser's engine counts in 32 bits unless told otherwise; with a floor there are 32 PRFs' bits.
+    step[1 : count + 1] = bit = np.int64(1) << spans.prf
     step[count + 1 : -1] -= bit
     order = edge.argsort()
     edge = edge[order]
@@ -82,7 +83,7 @@ def lengths(swept, n):
     """
     edges = swept.edges
     share = (edges[1:] - edges[:-1]) / (edges[-1] - edges[0])
-    return np.bincount(swept.pattern, share, 1 << n)
+    return np.bincount(swept.pattern.astype(np.intp, copy=False), share, 1 << n)
 
 
 def over_supersets(table, n):

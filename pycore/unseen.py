@@ -15,7 +15,7 @@ from math import inf, sqrt
 
 import numpy as np
 
-from pycore.patterns import sweep
+from pycore.patterns import EDGE_TOLERANCE, sweep
 from pycore.regions import runs
 from pycore.sight import sweeps_with_floor
 
@@ -68,7 +68,8 @@ def inbound(sight):
     sets, which = np.unique(pattern, return_inverse=True)
     start, stop = _longest_hidden(ranges.edges, ranges.pattern & own, sets, sight.m)
     length, never = (stop - start)[which], ((start <= sight.range_m[0]) & (stop >= sight.range_m[1]))[which]
-    slowest = np.where(low > 0, low, np.where(high < 0, high, 0.0))
+    rest = EDGE_TOLERANCE * (sight.speed_m_s[1] - sight.speed_m_s[0])
+    slowest = np.where(low > rest, low, np.where(high < -rest, high, 0.0))
     time = _time(length, np.abs(slowest))
     worst = np.lexsort((-slowest, np.abs(slowest), -time))[0]
     hidden = (float(start[which[worst]]), float(stop[which[worst]])) if length[worst] > 0 else (np.nan, np.nan)

@@ -137,7 +137,7 @@ def _met(range_pattern, range_share, speed_sweep, n):
     """Return the pattern shares of a few segments of range against all of speed, met one by one."""
     speed_share = lengths(speed_sweep, n)
     speed_pattern = speed_share.nonzero()[0]
-    both = range_pattern[:, None] & speed_pattern
+    both = range_pattern.astype(np.intp)[:, None] & speed_pattern
     area = np.multiply.outer(range_share, speed_share[speed_pattern])
     return np.bincount(both.ravel(), area.ravel(), 1 << n)
 
@@ -181,8 +181,6 @@ def share_if_one_lost(pattern_share, n, m):
     -----
     Derived here: what is lost with PRF i is where exactly M are clear and i is one of them.
     """
-    if n == m:
-        return 0.0
     return float(_enough(n, m) @ pattern_share - (_held_up_by(n, m) @ pattern_share).max())
 
 

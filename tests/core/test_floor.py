@@ -34,6 +34,10 @@ def test_a_coverage_within_the_first_opening_or_the_notch_is_all_floor():
     assert floor_share(np.array([10.0]), np.array([2.0]), 1, (20.0, 30.0), (-2.0, 2.0)) == 1.0
 
 
+def test_an_opening_nearer_than_the_coverage_starts_with_it():
+    assert ends(floor_ranges(np.array([5.0, 30.0]), (10.0, 20.0))) == [(0, 10.0, 20.0)]
+
+
 def test_opening_speeds_count_below_the_notch_as_closing_ones_above():
     assert ends(floor_speeds(np.array([2.0, 9.0]), (-8.0, 5.0))) == [(0, -8.0, -2.0), (0, 2.0, 5.0)]
 

@@ -1,5 +1,6 @@
 """Holes: the same regions that polygons make, with exact edges and areas that add up."""
 
+import dataclasses
 import itertools
 
 import numpy as np
@@ -19,7 +20,8 @@ def blind_polygons(polygons, seen):
     """Parts of the floor's own sight that the plan does not see, joined where only rounding parts them."""
     blind = polygons.seen_by_any_plan(seen).difference(polygons.seen(seen))
     shrunk = blind.buffer(ONE_EDGE, join_style='mitre').buffer(-2 * ONE_EDGE, join_style='mitre')
-    return [part for part in getattr(shrunk, 'geoms', [shrunk]) if not part.is_empty]
+    parts = [part for part in getattr(shrunk, 'geoms', [shrunk]) if not part.is_empty]
+    return [part.buffer(ONE_EDGE, join_style='mitre') for part in parts]
 
 
 def on_unit_square(hole, seen):
@@ -166,3 +168,16 @@ def test_a_region_has_the_holes_of_the_coverage_cut_to_it(plain, data):
     for hole in holes.holes(region).listed:
         assert ranges[0] <= hole.range_m[0] < hole.range_m[1] <= ranges[1]
         assert speeds[0] <= hole.speed_m_s[0] < hole.speed_m_s[1] <= speeds[1]
+
+
+def test_counting_in_32_bits_as_a_browsers_engine_does_gives_the_same_holes(plain):
+    each = np.ones(16)
+    pri_s = np.array([51, 53, 57, 60, 63, 67, 71, 73, 77, 80, 84, 87, 89, 91, 93, 97]) * 1e-6
+    plan = plain.Plan(pri_s, 1e-6 * each, 0.03 * each, 17 * each, 1e-5, 0.0, 0.5, 7, (0.0, 185200.0), (0.0, 1500.0))
+    seen = plain.sight(plan)
+    names = ('ranges', 'speeds', 'floor_ranges', 'floor_speeds')
+    narrow = {
+        name: Spans(spans.prf.astype(np.int32), spans.start, spans.stop)
+        for name, spans in ((name, getattr(seen, name)) for name in names)
+    }
+    assert holes.holes(dataclasses.replace(seen, **narrow)) == holes.holes(seen)

@@ -94,6 +94,14 @@ def test_a_speed_that_is_seen_at_no_range_takes_the_whole_coverage():
     assert worst.never_m_s == ((4.0, 5.0),)
 
 
+def test_speeds_never_seen_are_one_interval_whichever_prf_is_blind_in_its_parts():
+    whole = Spans(np.array([0, 1]), np.array([0.0, 0.0]), np.array([100.0, 100.0]))
+    speeds = Spans(np.array([0, 0, 1, 1]), np.array([1.0, 5.0, 1.0, 7.0]), np.array([4.0, 10.0, 5.0, 10.0]))
+    floor = floor_ranges(np.zeros(2), (0.0, 100.0)), floor_speeds(np.ones(2), (0.0, 10.0))
+    seen = sight.Sight(whole, speeds, *floor, 2, 2, (0.0, 100.0), (0.0, 10.0))
+    assert unseen.inbound(seen).never_m_s == ((4.0, 7.0),)
+
+
 def test_a_slow_target_can_be_hidden_longer_than_one_that_is_never_seen():
     worst = unseen.inbound(one_prf([(0, 40), (90, 100)], [(1, 4), (5, 10), (-10, -1)]))
     assert (worst.time_s, worst.at_m_s, worst.never) == (50.0, 1.0, False)
@@ -115,6 +123,8 @@ def test_where_every_wanted_speed_is_in_the_floor_there_is_no_answer():
 def test_without_a_notch_a_target_at_rest_in_an_eclipsed_range_is_hidden_for_ever():
     worst = unseen.inbound(one_prf([(0, 40), (70, 100)], [(-10, 10)], notch_m_s=0.0))
     assert (worst.time_s, worst.at_m_s) == (inf, 0.0)
+    hardly_moving = one_prf([(0, 40), (70, 100)], [(1e-320, 10)], speed_m_s=(1e-320, 10.0), notch_m_s=0.0)
+    assert unseen.inbound(hardly_moving).time_s == inf
 
 
 def test_the_hidden_ranges_of_one_speed_are_given_with_their_edges():
