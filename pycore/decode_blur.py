@@ -66,7 +66,7 @@ def default_blur(pri_counts, gates):
     blur_gates : Fraction
         1/2 or 1. [gates]
     """
-    whole = all((pri / gate).denominator == 1 for pri, gate in zip(pri_counts, gates, strict=True))
+    whole = all((int(pri) / gate).denominator == 1 for pri, gate in zip(pri_counts, gates, strict=True))
     return Fraction(1, 2) if whole else Fraction(1)
 
 

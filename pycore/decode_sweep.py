@@ -96,7 +96,7 @@ def ordered_edges(combs, start, stop):
     """Return the edges in (start, stop] in the sweep's order: whose, at which multiple, and whether it is entered."""
     periods, widths, denominators = _on_grids(combs)
     bits = max((math.lcm(a, b) for a, b in combinations(set(denominators), 2)), default=max(denominators)).bit_length()
-    kind = _integer_kind(stop, max(periods), denominators, bits)
+    kind = _integer_kind(stop, max(period for period, _ in combs), denominators, bits)
     p, w, d = (np.array(values, dtype=kind) for values in (periods, widths, denominators))
 
     owner_in, tooth_in = _teeth(combs, start, stop, 1)
@@ -128,9 +128,9 @@ def _on_grids(combs):
 def _integer_kind(stretch, longest, denominators, bits):
     """Return int64 where every step of the sweep fits into it, Python's own integers where not."""
     largest = max(denominators)
-    reach = math.ceil(stretch) + math.ceil(longest / min(denominators)) + 1
-    fits = bits + reach.bit_length() <= _KEY_BITS and (reach * largest).bit_length() <= 62 and largest < 1 << 50
-    return np.int64 if fits else object
+    reach = stretch + longest
+    fits = math.ceil(reach * 2**bits).bit_length() <= _KEY_BITS and math.ceil(reach * largest).bit_length() <= 62
+    return np.int64 if fits and largest < 1 << 50 else object
 
 
 def _position(numerator, denominator, bits):

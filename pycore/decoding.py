@@ -109,6 +109,7 @@ def range_span(pri_counts, clock_hz, m, half_widths, range_max_m):
     span : DecodeSpan
         In range. [m]
     """
+    pri_counts = [int(pri) for pri in pri_counts]
     m_per_count = LIGHT_M_S / (2 * typed_decimal(clock_hz))
     swept_to_m = max(Fraction(SWEPT_AT_LEAST_M), SWEPT_TIMES_WANTED * typed_decimal(range_max_m))
     found = blurred_span(pri_counts, half_widths, m, swept_to_m / m_per_count)
