@@ -142,7 +142,8 @@ def clear_ranges(pri_s, pulse_s, recovery_s, guard_s, received_min, range_m, nea
     needed = received_min * pulse_s
     start, stop = recovery_s + needed, pri_s - guard_s - needed
     # The window itself must be open at all, and long enough for the needed part of the pulse.
-    stop = np.where(pri_s - guard_s > pulse_s + recovery_s, stop, start)
+    open_s = pri_s - guard_s - pulse_s - recovery_s
+    stop = np.where((open_s > 0) & (open_s >= needed), stop, start)
     scale = METRES_PER_SECOND_OF_DELAY
     return repeated(start * scale, stop * scale, pri_s * scale, range_m)
 
