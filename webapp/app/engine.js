@@ -48,13 +48,17 @@ export function startEngine({ payload = partOfPage, onStage = () => {}, onFail =
   async function boot() {
     if (typeof WebAssembly === 'undefined') throw new Error(SWITCHED_OFF);
     stage('parts of the engine');
-    engine.worker = startWorker(await payload('worker'));
+    const names = await partNames();
+    const script = payload('worker');
+    const parts = names.map(async (name) => [name, await payload(name)]); // all at once, while the worker starts
+    engine.worker = startWorker(await script);
     engine.worker.onmessage = heard;
     engine.worker.onerror = (event) => {
       event.preventDefault();
       fail(`its worker stopped${event.message ? `: ${event.message}` : ' before it began'}`);
     };
-    await sendParts(engine.worker, payload);
+    engine.worker.postMessage({ start: { snapshot: names.includes('snapshot') } });
+    await Promise.all(parts.map(async (part) => sendPart(engine.worker, ...(await part))));
   }
 
   boot().catch((error) => fail(causeOf(error)));
@@ -88,13 +92,12 @@ function startWorker(script) {
   return new Worker(`data:text/javascript,${encodeURIComponent(text)}`, { type: 'module' });
 }
 
-async function sendParts(worker, payload) {
-  const snapshot = hasPart('snapshot');
-  worker.postMessage({ start: { snapshot } });
-  await Promise.all([...PARTS, ...(snapshot ? ['snapshot'] : [])].map(async (name) => {
-    const bytes = await payload(name);
-    worker.postMessage({ part: name, bytes }, [bytes.buffer]);
-  }));
+async function partNames() {
+  return (await hasPart('snapshot')) ? [...PARTS, 'snapshot'] : PARTS;
+}
+
+function sendPart(worker, part, bytes) {
+  worker.postMessage({ part, bytes }, [bytes.buffer]);
 }
 
 function settle(engine, { id, text, buffer, error }) {

@@ -13,7 +13,8 @@ export async function partOfPage(name) {
   return inflated(name, bytesOf(name, text));
 }
 
-export function hasPart(name) {
+export async function hasPart(name) {
+  await parsed();
   return document.getElementById(`part-${name}`) !== null || name in places();
 }
 

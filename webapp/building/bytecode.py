@@ -9,6 +9,7 @@ import subprocess
 import tempfile
 from pathlib import Path
 
+from webapp.building import memory
 from webapp.building.places import ROOT, cache, content_key
 from webapp.building.runtime import FILES, NUMPY_WHEEL
 from webapp.building.session import requests
@@ -42,12 +43,13 @@ def engine_parts(node, runtime, with_snapshot=True):
     stdlib = made('stdlib.zip', lambda place: compile_library(node, runtime, kept, place), json.dumps(kept['library']), *_tools())
     numpy = made('numpy.pack', lambda place: compile_numpy(node, runtime, kept, place), json.dumps(kept['numpy']), *_tools())
     core = made('core.pack', lambda place: compile_core(node, runtime, place), *_engine_sources(), *_tools())
-    parts = {'wasm': Path(runtime) / 'pyodide.asm.wasm', 'stdlib': stdlib, 'numpy': numpy, 'core': core}
+    wasm = Path(runtime) / 'pyodide.asm.wasm'
+    parts = {'wasm': wasm, 'stdlib': stdlib, 'numpy': numpy, 'core': core}
     if with_snapshot:
         modules = json.dumps(kept['modules'])
-        parts['snapshot'] = made(
-            'snapshot.bin', lambda place: remember(node, runtime, stdlib, modules, place), modules, stdlib, *_tools()
-        )
+        started = (modules, stdlib, *_tools())
+        parts['snapshot'] = made('snapshot.bin', lambda place: remember(node, runtime, stdlib, kept['modules'], place), *started)
+        parts['stdlib'] = made('emptied.zip', lambda place: empty(stdlib, kept['modules'], place), *started)
 
     return parts
 
@@ -161,16 +163,33 @@ def remember(node, runtime, stdlib, modules, place):
     node, runtime, place : Path
         As in `record`. [unitless]
     stdlib : Path
-        The very archive that the page starts from: the memory holds offsets into it. [unitless]
-    modules : str
-        JSON list of the modules to import. [unitless]
+        The archive that the page starts from, in which every file has the same place: the memory holds offsets. [unitless]
+    modules : list of str
+        What to import. [unitless]
     """
     print('Keeping the memory of a started Python')
-    (place / 'preload.json').write_text(modules)
-    run(node, runtime, stdlib, 'preload.py', place, snapshot=place / 'snapshot.bin')
+    whole = place / 'whole.bin'
+    run(node, runtime, stdlib, 'preload.py', place, words=modules, snapshot=str(whole), folders={})
+    sent = memory.difference(whole.read_bytes(), (runtime / 'pyodide.asm.wasm').read_bytes())
+    (place / 'snapshot.bin').write_bytes(sent)
 
 
-def run(node, runtime, stdlib, script, place, snapshot=None):
+def empty(stdlib, modules, place):
+    """Write the library's archive without the contents of what the kept memory has imported.
+
+    Parameters
+    ----------
+    stdlib, place : Path
+        As in `remember`. [unitless]
+    modules : list of str
+        What has been imported. [unitless]
+    """
+    stems = {module.replace('.', '/') for module in modules}
+    names = {stem + ending for stem in stems for ending in ('.pyc', '/__init__.pyc')}
+    (place / 'emptied.zip').write_bytes(memory.emptied(stdlib.read_bytes(), names))
+
+
+def run(node, runtime, stdlib, script, place, **more):
     """Run a file of inside/ in Pyodide; stop with its own last words when it fails.
 
     Parameters
@@ -179,15 +198,16 @@ def run(node, runtime, stdlib, script, place, snapshot=None):
         As above. [unitless]
     script : str
         The file's name. [unitless]
-    snapshot : Path, optional
-        Where the memory is written afterwards. [unitless]
+    **more : dict
+        What else the job says, as in workshop.mjs. [unitless]
     """
     job = {
         'runtime': f'{runtime}/',
         'stdlib': str(stdlib),
         'script': str(INSIDE / script),
         'folders': {'project': str(ROOT), 'runtime': str(runtime), 'job': str(place)},
-        'snapshot': str(snapshot) if snapshot else None,
+        'words': [],
+        **more,
     }
     path = place / 'job.json'
     path.write_text(json.dumps(job))

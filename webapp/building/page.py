@@ -1,7 +1,7 @@
 """Assemble the two outputs from one template: a page with its scripts beside it, and the whole tool in one file.
 
-The template (webapp/page/index.html) is plain HTML. The policy, icon and styles go in after its charset, the data and the
-scripts before the end of its body. Both outputs boot in the same way; they differ only in where the scripts are.
+The template (webapp/page/index.html) is plain HTML with four marks, which the policy, the styles, the opening data and the
+scripts replace. Both outputs boot in the same way; they differ only in where the scripts are.
 """
 
 import base64
@@ -17,15 +17,9 @@ POLICY = (
     "default-src 'none'; script-src {scripts} 'wasm-unsafe-eval'; worker-src data:; style-src 'unsafe-inline'; "
     "img-src data: blob:; connect-src 'none'; base-uri 'none'; form-action 'none'"
 )
-CHARSET = '<meta charset="utf-8">'
-END_OF_BODY = '</body>'
-DEVELOPING = re.compile(r'[ \t]*<(?:link rel="stylesheet"[^>]*>|script type="module"[^>]*></script>)\n?')
-
-# A pulse train with its second pulse missing: a blind interval.
-ICON = (
-    '<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 16 16"><path d="M1 13h2V4h2v9h6V4h2v9h2" fill="none" '
-    'stroke="#7a3b12" stroke-width="1.6"/><path d="M6.5 13h3" stroke="#fff" stroke-width="2" stroke-dasharray="1 1"/></svg>'
-)
+MARK = re.compile(r'<!-- build: (\w+) -->')
+MARKS = ('policy', 'style', 'opening', 'scripts')  # <!-- build: policy --> and so on, each once
+ICON = '<link rel="icon" href="data:'  # without one, the browser asks for favicon.ico
 
 
 @dataclass(frozen=True, slots=True)
@@ -66,7 +60,7 @@ def hosted(contents):
     scripts = {hashed(name, text): text for name, text in contents.scripts.items()}
     parts = {name: payload.script(name, text) for name, text in contents.parts.items()}
     places = {name: hashed(name, text) for name, text in parts.items()}
-    body = data('parts', json_of(places)) + data('opening', contents.opening)
+    body = data('parts', json_of(places))
     body += ''.join(f'<script defer src="{name}"></script>\n' for name in scripts)
     index = assembled(contents, "'self'", body)
 
@@ -87,8 +81,7 @@ def single(contents):
         HTML.
     """
     inline = [f'\n{text}\n' for text in contents.scripts.values()]
-    body = data('opening', contents.opening)
-    body += ''.join(f'<script>{text}</script>\n' for text in inline)
+    body = ''.join(f'<script>{text}</script>\n' for text in inline)
     body += ''.join(payload.block(name, text) for name, text in contents.parts.items())
     body += f'<script type="text/plain" id="licences">\n{contents.licences}</script>\n'
 
@@ -96,7 +89,7 @@ def single(contents):
 
 
 def assembled(contents, scripts, body):
-    """Return the template with its head and body filled.
+    """Return the template with its marks replaced.
 
     Parameters
     ----------
@@ -105,22 +98,42 @@ def assembled(contents, scripts, body):
     scripts : str
         What the policy allows to run. [unitless]
     body : str
-        What goes at the end of the body. [unitless]
+        The scripts, and the data that is theirs. [unitless]
 
     Returns
     -------
     page : str
         HTML.
     """
-    for mark in (CHARSET, END_OF_BODY):
-        if contents.template.count(mark) != 1:
-            raise Stop(f'The template webapp/page/index.html must have {mark} once; it has it {contents.template.count(mark)} times.')
-    policy = f'<meta http-equiv="Content-Security-Policy" content="{POLICY.format(scripts=scripts)}">'
-    icon = f'<link rel="icon" href="data:image/svg+xml;base64,{base64.b64encode(ICON.encode()).decode()}">'
-    head = f'{CHARSET}\n{policy}\n{icon}\n<style>\n{contents.style}</style>'
-    page = DEVELOPING.sub('', contents.template)
+    filling = {
+        'policy': f'<meta http-equiv="Content-Security-Policy" content="{POLICY.format(scripts=scripts)}">',
+        'style': f'<style>\n{contents.style}</style>',
+        'opening': data('opening', contents.opening),
+        'scripts': body,
+    }
+    if ICON not in contents.template:
+        raise Stop(f'The template webapp/page/index.html needs an icon of its own: {ICON}...">.')
 
-    return page.replace(CHARSET, head).replace(END_OF_BODY, body + END_OF_BODY)
+    return MARK.sub(lambda found: filling.pop(found[1]), whole(contents.template))
+
+
+def whole(template):
+    """Return the template if it has each mark once; else stop.
+
+    Parameters
+    ----------
+    template : str
+        HTML. [unitless]
+
+    Returns
+    -------
+    template : str
+        The same.
+    """
+    if sorted(MARK.findall(template)) != sorted(MARKS):
+        raise Stop(f'The template webapp/page/index.html must have {", ".join(MARKS)} each once as <!-- build: NAME -->.')
+
+    return template
 
 
 def data(name, text):

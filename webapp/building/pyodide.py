@@ -4,6 +4,7 @@ What is changed in Pyodide's files is written here, piece by piece, and each pie
 another release stops the build instead of breaking the page.
 """
 
+from webapp.building.join import joined
 from webapp.building.stop import Stop
 
 # file: (piece, how often, what stands there instead)
@@ -43,7 +44,7 @@ def worker_module(runtime, worker):
             '// Pyodide (MPL-2.0), its two modules joined; what was changed is said in licences.txt.',
             machine,
             f'const createPyodideModule = _createPyodideModule;\nconst {{ loadPyodide }} = (() => {{\n{loader}\n}})();',
-            worker.read_text(encoding='utf-8'),
+            joined(worker.parent, worker.name),
         )
     )
 

@@ -1,5 +1,6 @@
 // Runs one Python file in the pinned Pyodide under Node, at build time. Usage: node workshop.mjs JOB.json
-// The job: {runtime, stdlib, script, folders: {name: path}, snapshot?}. The folders are seen by Python as /name.
+// The job: {runtime, stdlib, script, folders: {name: path}, words, snapshot?}. The folders are seen by Python as /name,
+// the words (a list of texts) as its global `words`.
 // With `snapshot` the memory is written there after the script has run; clock and chance stand still, so that it is always the same.
 
 import fs from 'node:fs';
@@ -24,12 +25,18 @@ async function booted() {
     indexURL: job.runtime,
     stdLibURL: job.stdlib,
     packageBaseUrl: job.runtime,
-    lockFileContents: { info: { arch: 'wasm32', platform: 'emscripten', version: '', python: '' }, packages: {} },
+    lockFileContents: { info: { arch: 'wasm32', platform: 'emscripten', abi_version: '2026_0' }, packages: {} },
     jsglobals: {},
     env: { PYTHONHASHSEED: '0', PYTHONNODEBUGRANGES: '1', PYTHONDONTWRITEBYTECODE: '1' },
     _makeSnapshot: Boolean(job.snapshot),
   });
 }
+
+// Node would print the line that threw, which in Pyodide's files is a megabyte.
+process.on('uncaughtException', (error) => {
+  process.stderr.write(`${String(error?.message ?? error)}\n`);
+  process.exit(1);
+});
 
 if (job.snapshot) standStill();
 const python = await booted();
@@ -37,11 +44,7 @@ for (const [name, folder] of Object.entries(job.folders)) {
   python.FS.mkdirTree(`/${name}`);
   python.mountNodeFS(`/${name}`, folder);
 }
-try {
-  python.runPython(fs.readFileSync(job.script, 'utf8'), { filename: path.basename(job.script) });
-} catch (error) {
-  process.stderr.write(`${error.message}\n`);
-  process.exit(1);
-}
+python.globals.set('words', python.toPy(job.words));
+python.runPython(fs.readFileSync(job.script, 'utf8'), { filename: path.basename(job.script) });
 for (const name of Object.keys(job.folders)) python.FS.unmount(`/${name}`);
 if (job.snapshot) fs.writeFileSync(job.snapshot, python.makeMemorySnapshot());

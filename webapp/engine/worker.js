@@ -2,9 +2,11 @@
 // Knows nothing of plans or figures. The build puts Pyodide's two modules before it as createPyodideModule and loadPyodide.
 // In: {part, bytes}, then {id, action, args}. Out: {stage}, {ready} or {failed}, then {id, text, buffer} or {id, error}.
 
+import { rememberedMemory } from './memory.js';
+
 const NOWHERE = 'https://pulsewright.invalid/'; // Pyodide wants an address; this one leads nowhere, and nothing is asked of it
 const FILES = { 'pyodide.asm.wasm': ['wasm', 'application/wasm'], 'python_stdlib.zip': ['stdlib', 'application/zip'] };
-const NO_PACKAGES = { info: { arch: 'wasm32', platform: 'emscripten', version: '', python: '' }, packages: {} };
+const NO_PACKAGES = { info: { arch: 'wasm32', platform: 'emscripten', abi_version: '2026_0' }, packages: {} };
 
 const parts = new Map();
 let answer = null;
@@ -51,6 +53,10 @@ async function placePacks(FS, { sitePackages }) {
   for (const name of ['numpy', 'core']) placePack(FS, sitePackages, await part(name).bytes);
 }
 
+async function remembered() {
+  return rememberedMemory(await part('snapshot').bytes, await part('wasm').bytes);
+}
+
 async function start({ snapshot }) {
   postMessage({ stage: 'Python' });
   const python = await loadPyodide({
@@ -60,7 +66,7 @@ async function start({ snapshot }) {
     lockFileContents: NO_PACKAGES,
     jsglobals: {}, // nothing of the browser is in Python's reach
     fsInit: placePacks,
-    ...(snapshot ? { _loadSnapshot: part('snapshot').bytes } : {}),
+    ...(snapshot ? { _loadSnapshot: remembered() } : {}),
   });
   postMessage({ stage: 'numpy' });
   python.pyimport('numpy').destroy();

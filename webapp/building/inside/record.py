@@ -52,7 +52,7 @@ def kept():
             files['library'].add(path.removeprefix(LIBRARY))
         elif path.startswith(PACKAGES + 'numpy/'):
             files['numpy'].add(path.removeprefix(PACKAGES))
-        if not name.startswith(('numpy', 'pycore', 'webapp', '__main__', 'pyodide_js', 'js')):
+        if path.startswith(LIBRARY) or name in sys.builtin_module_names:
             names.append(name)
     return {**{kind: sorted(found) for kind, found in files.items()}, 'modules': names}
 
@@ -68,7 +68,7 @@ for name in SELDOM:
 bridge = importlib.import_module('webapp.engine.bridge')
 for request in json.load(open('/job/session.json')):
     reply = json.loads(bridge.answer(json.dumps(request))[0])
-    if 'traceback' in reply.get('error', {}):
+    if 'traceback' in reply.get('error', {}) and request['action'] in bridge.api.ACTIONS:
         print(f'  {request["action"]} failed while the session was recorded: {reply["error"]["message"]}')
 
 json.dump(kept(), open('/job/kept.json', 'w'), indent=1)
