@@ -15,6 +15,9 @@ EDGE_TOLERANCE = 1e-9
 
 _BITS_AT_ONCE = 4
 
+# In 64 bits, though a browser's engine counts in 32 unless told otherwise: sixteen PRFs and their floors need 33.
+_BIT = 1 << np.arange(32, dtype=np.int64)
+
 
 @dataclass(frozen=True, slots=True)
 class Sweep:
@@ -55,15 +58,16 @@ def sweep(spans, limits):
     edge[0], edge[1 : count + 1], edge[count + 1 : -1], edge[-1] = low, spans.start, spans.stop, high
     # Within one PRF spans are disjoint, so a running sum of bits switched on and off never carries into a neighbour.
     step = np.zeros(2 * count + 2, dtype=np.int64)
-    # The browser's engine counts in 32 bits unless told otherwise; with a floor there are 32 PRFs' bits.
-    step[1 : count + 1] = bit = np.int64(1) << spans.prf
-    step[count + 1 : -1] -= bit
+    step[1 : count + 1] = bit = _BIT[spans.prf]
+    np.negative(bit, out=step[count + 1 : -1])
     order = edge.argsort()
     edge = edge[order]
-    keep = edge[1:] - edge[:-1] > EDGE_TOLERANCE * (high - low)
-    edges = edge[np.append(keep, True)]
+    # The segment after the upper end does not exist; its edge stays.
+    keep = np.ones(edge.size, dtype=bool)
+    np.greater(edge[1:] - edge[:-1], EDGE_TOLERANCE * (high - low), out=keep[:-1])
+    edges = edge[keep]
     edges[0] = low
-    return Sweep(edges, step[order].cumsum()[:-1][keep])
+    return Sweep(edges, step[order].cumsum()[keep][:-1])
 
 
 def lengths(swept, n):
