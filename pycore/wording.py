@@ -181,6 +181,40 @@ def with_unit(value, unit, limit=None):
     return f'{against(value, limit)}{THIN_SPACE}{unit}'
 
 
+def as_typed(value, unit):
+    """Return an input with its unit, as a person would type it.
+
+    Parameters
+    ----------
+    value : float
+        What was typed, in the unit. [any]
+    unit : str
+        Unit. [unitless]
+
+    Returns
+    -------
+    text : str
+        Such as ``'110 km'``.
+    """
+    return f'{trimmed(value)}{THIN_SPACE}{unit}'
+
+
+def as_typed_percent(share):
+    """Return a share that was typed as a percentage.
+
+    Parameters
+    ----------
+    share : float
+        Fraction. [unitless]
+
+    Returns
+    -------
+    text : str
+        Such as ``'95 %'``.
+    """
+    return as_typed(round(share * 100, 9), '%')
+
+
 def count_word(count):
     """Return a small count as a word, a larger one in digits.
 

@@ -1,0 +1,82 @@
+"""The house rules that a reader relies on: documented parameters with units, and imports that point one way."""
+
+import ast
+import importlib
+import inspect
+import pkgutil
+import re
+import sys
+from pathlib import Path
+
+import pytest
+
+import pycore
+
+ROOT = Path(pycore.__file__).parent
+MODULES = sorted(module.name for module in pkgutil.walk_packages([str(ROOT)], 'pycore.') if '__main__' not in module.name)
+NOT_IN_THE_CORE = {'scipy', 'bokeh', 'os', 'time', 'datetime', 'random', 'socket', 'subprocess', 'js', 'pyodide'}
+ONLY_THE_COMMAND_LINE = {'sys', 'pathlib', 'argparse'}
+
+
+def public_functions():
+    for name in MODULES:
+        module = importlib.import_module(name)
+        for label, function in inspect.getmembers(module, inspect.isfunction):
+            if function.__module__ == name and not label.startswith('_'):
+                yield pytest.param(function, id=f'{name}.{label}')
+
+
+@pytest.mark.parametrize('function', public_functions())
+def test_every_public_function_says_what_its_parameters_are_and_in_which_unit(function):
+    text = inspect.getdoc(function) or ''
+    assert text, 'no docstring'
+    for name in inspect.signature(function).parameters:
+        entry = re.search(rf'^(\w+, )*{name}(, \w+)* : .*?(?=^\S|\Z)', text, re.MULTILINE | re.DOTALL)
+        assert entry, f'{name} is not documented'
+        assert re.search(r'\[[^\]]+\]', entry.group()), f'{name} has no [unit]'
+
+
+@pytest.mark.parametrize('path', sorted(ROOT.rglob('*.py')), ids=lambda path: str(path.relative_to(ROOT)))
+def test_the_core_imports_nothing_that_touches_the_world(path):
+    imported = {name.split('.')[0] for name in _imports(path)}
+    forbidden = NOT_IN_THE_CORE | (set() if path.name == '__main__.py' else ONLY_THE_COMMAND_LINE)
+    assert not imported & forbidden
+    assert imported <= set(sys.stdlib_module_names) | {'numpy', 'pycore'}
+
+
+def test_no_two_modules_of_the_core_import_each_other_in_a_circle():
+    arrows = {_dotted(path): {name for name in _imports(path) if name.startswith('pycore')} for path in ROOT.rglob('*.py')}
+    done, walking = set(), []
+
+    def walk(name):
+        assert name not in walking, f'circle: {" -> ".join([*walking, name])}'
+        if name in done or name not in arrows:
+            return
+        walking.append(name)
+        for other in sorted(arrows[name]):
+            walk(other)
+        walking.pop()
+        done.add(name)
+
+    for name in sorted(arrows):
+        walk(name)
+    assert len(done) >= 30
+
+
+def _dotted(path):
+    parts = path.relative_to(ROOT.parent).with_suffix('').parts
+    return '.'.join(parts[:-1] if parts[-1] == '__init__' else parts)
+
+
+def _imports(path):
+    """Return the dotted names that a file imports; ``from pycore import x`` counts as ``pycore.x``."""
+    names = []
+    for node in ast.walk(ast.parse(path.read_text('utf-8'))):
+        if isinstance(node, ast.Import):
+            names.extend(alias.name for alias in node.names)
+        elif isinstance(node, ast.ImportFrom):
+            if node.module == 'pycore':
+                names.extend(f'pycore.{alias.name}' for alias in node.names)
+            else:
+                names.append(node.module)
+    return names
