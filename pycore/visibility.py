@@ -19,7 +19,7 @@ from functools import lru_cache
 
 import numpy as np
 
-from pycore.patterns import exactly, lengths, over_supersets, sweep
+from pycore.patterns import clear_lengths, exactly, lengths, over_supersets, sweep
 from pycore.spans import Spans
 
 
@@ -206,7 +206,7 @@ def visible(pattern_share, n, m):
 
 
 def visible_share(ranges, speeds, n, m, range_m, speed_m_s):
-    """Return the share of the coverage that at least M of N PRFs see, exactly.
+    """Return the share of the coverage that at least M of N PRFs see, exactly and as quickly as can be.
 
     Parameters
     ----------
@@ -217,7 +217,7 @@ def visible_share(ranges, speeds, n, m, range_m, speed_m_s):
     n : int
         Number of PRFs. [unitless]
     m : int
-        Number that must be clear. [unitless]
+        Number that must be clear, at least 1. [unitless]
     range_m : tuple of two floats
         The coverage's ranges. [m]
     speed_m_s : tuple of two floats
@@ -228,4 +228,9 @@ def visible_share(ranges, speeds, n, m, range_m, speed_m_s):
     share : float
         Between 0 and 1, but for rounding.
     """
-    return float(_enough(n, m) @ pattern_shares(sweep(ranges, range_m), sweep(speeds, speed_m_s), n))
+    table = np.empty((2, 1 << n))
+    table[0] = clear_lengths(ranges, n)
+    table[1] = clear_lengths(speeds, n)
+    on_range, on_speed = over_supersets(table, n)
+    area = (range_m[1] - range_m[0]) * (speed_m_s[1] - speed_m_s[0])
+    return float(_enough(n, m) @ exactly(on_range * on_speed, n)) / area

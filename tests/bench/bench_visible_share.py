@@ -13,7 +13,8 @@ from pycore.stagger import notch_clear_speeds
 from pycore.visibility import visible_share
 
 RANGE_M, SPEED_M_S = (0.0, 185_200.0), (0.0, 1500.0)
-WAVELENGTH_M, PULSE_S, RECOVERY_S, NOTCH_M_S, M = 0.03, 1e-6, 10e-6, 17.0, 3
+WAVELENGTH_M, RECOVERY_S, M = 0.03, 10e-6, 3
+PULSE_S, NOTCH_M_S = np.full(16, 1e-6), np.full(16, 17.0)
 EIGHT_US = (54, 59, 61, 67, 69, 78, 83, 87)
 SIXTEEN_US = (51, 53, 54, 57, 59, 61, 63, 67, 69, 73, 78, 83, 84, 87, 89, 93)
 CELLS = 1000
@@ -21,20 +22,20 @@ CELLS = 1000
 
 def exact(pri_s):
     """The project's own way: spans, sweep, sums over sets of PRFs."""
-    each = np.ones(pri_s.size)
-    ranges = clear_ranges(pri_s, PULSE_S * each, RECOVERY_S, 0.0, 0.5, RANGE_M)
-    speeds = notch_clear_speeds(WAVELENGTH_M / (2 * pri_s), NOTCH_M_S * each, SPEED_M_S)
-    return visible_share(ranges, speeds, pri_s.size, min(M, pri_s.size), RANGE_M, SPEED_M_S)
+    n = pri_s.size
+    ranges = clear_ranges(pri_s, PULSE_S[:n], RECOVERY_S, 0.0, 0.5, RANGE_M)
+    speeds = notch_clear_speeds(WAVELENGTH_M / (2 * pri_s), NOTCH_M_S[:n], SPEED_M_S)
+    return visible_share(ranges, speeds, n, min(M, n), RANGE_M, SPEED_M_S)
 
 
 def _clear_at_centres(pri_s):
     """Clear cells along each axis, one row for each PRF."""
     delay_s = 2 * RANGE_M[1] / SPEED_OF_LIGHT_M_S * (np.arange(CELLS) + 0.5) / CELLS
     since_pulse = np.mod(delay_s, pri_s[:, None])
-    on_range = (since_pulse >= RECOVERY_S + 0.5 * PULSE_S) & (since_pulse <= pri_s[:, None] - 0.5 * PULSE_S)
+    on_range = (since_pulse >= RECOVERY_S + 0.5 * PULSE_S[0]) & (since_pulse <= pri_s[:, None] - 0.5 * PULSE_S[0])
     blind = WAVELENGTH_M / (2 * pri_s[:, None])
     folded = np.mod(SPEED_M_S[1] * (np.arange(CELLS) + 0.5) / CELLS, blind)
-    return on_range, (folded >= NOTCH_M_S) & (folded <= blind - NOTCH_M_S)
+    return on_range, (folded >= NOTCH_M_S[0]) & (folded <= blind - NOTCH_M_S[0])
 
 
 def grid_of_small_integers(pri_s):

@@ -7,7 +7,7 @@ from hypothesis import strategies as st
 
 from pycore import sight
 from pycore.floor import floor_share
-from pycore.patterns import exactly, lengths, over_supersets, sweep
+from pycore.patterns import clear_lengths, exactly, lengths, over_supersets, sweep
 from pycore.spans import Spans
 from pycore.visibility import (
     Piece,
@@ -112,6 +112,15 @@ def test_shares_by_count_add_up_to_the_coverage_and_from_m_on_to_the_visible_sha
     assert found.by_count[seen.m :].sum() == pytest.approx(found.share, abs=ROUNDING)
 
 
+@settings(max_examples=60, deadline=None)
+@given(data=st.data())
+def test_the_quick_share_is_the_share_of_the_sweeps(plain, data):
+    seen = plain.sight(data.draw(plain.plans()))
+    swept = visible(pattern_shares(*sweeps(seen), seen.n), seen.n, seen.m)
+    edges = sum(axis.edges.size for axis in sweeps(seen))
+    assert sight.share(seen) == pytest.approx(swept.share, abs=edges * ONE_EDGE)
+
+
 @settings(max_examples=40, deadline=None)
 @given(data=st.data())
 def test_the_share_with_one_lost_is_the_worst_of_all_plans_with_one_taken_away(plain, data):
@@ -200,6 +209,12 @@ def test_a_prf_that_is_never_clear_and_one_that_always_is_are_told_apart():
 def test_spans_of_one_prf_that_touch_do_not_carry_over_into_the_next_prf():
     swept = sweep(Spans(np.array([0, 0]), np.array([0.0, 3.0]), np.array([3.0, 8.0])), (0.0, 10.0))
     assert lengths(swept, 2).tolist() == pytest.approx([0.2, 0.8, 0.0, 0.0])
+
+
+@pytest.mark.parametrize('overlap', [0.0, 1e-15, -1e-15])
+def test_spans_of_the_last_prf_that_touch_keep_the_table_in_its_size(overlap):
+    touching = Spans(np.array([1, 1]), np.array([0.0, 3.0 - overlap]), np.array([3.0, 8.0]))
+    assert clear_lengths(touching, 2).tolist() == pytest.approx([0.0, 0.0, 8.0, 0.0])
 
 
 def test_a_coverage_no_prf_sees_is_wholly_blind():
