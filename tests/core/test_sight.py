@@ -70,6 +70,12 @@ def test_the_projects_own_spans_are_those_of_the_plain_definition(plain, data):
     assert sight.share(own) == pytest.approx(sight.share(expected), abs=20 * ONE_EDGE)
 
 
+def test_a_window_shorter_than_the_part_of_the_pulse_that_is_needed_is_never_clear():
+    # Found by the test above: of 30 us, 0.58 us are open, and a quarter of 7.5 us is needed.
+    clear = eclipsing.clear_ranges(np.array([30e-6]), np.array([7.5e-6]), 14.62e-6, 7.3e-6, 0.25, (0.0, 4500.0))
+    assert clear.start.size == 0
+
+
 def test_spans_are_cut_to_a_region_and_those_outside_it_left_out():
     spans = Spans(np.array([0, 0, 1]), np.array([0.0, 4.0, 8.0]), np.array([3.0, 6.0, 9.0]))
     part = sight.cut(spans, (2.0, 5.0))
