@@ -175,7 +175,7 @@ def covered_spans(speed_m_s, half_width_m_s, blind_speed_m_s, axis_m_s):
     for speed, half in zip(speed_m_s, half_width_m_s, strict=True):
         if half >= 0.5 * blind_speed_m_s:
             return np.array([float(low)]), np.array([float(high)])
-        first = math.floor((low - half - speed) / blind_speed_m_s)
+        first = math.floor((low - half - speed) / blind_speed_m_s) + 1
         turns = np.arange(first, math.ceil((high + half - speed) / blind_speed_m_s) + 1)
         middle = speed + turns * blind_speed_m_s
         parts.append(np.clip(np.stack((middle - half, middle + half), axis=1), low, high))

@@ -78,14 +78,11 @@ def covered_half_width(leak, clutter_to_noise):
     half_width_m_s : float
         h: 0 where no filter is above the noise, v_b/2 where every filter is. [m/s]
     """
-    half = 0.5 * leak.blind_speed_m_s
-    if clutter_to_noise * leak.passed[-1] > 1.0:
-        return half
     low, high = _last_fall(leak, clutter_to_noise)
     for _ in range(60):
         middle = 0.5 * (low + high)
         low, high = (middle, high) if clutter_to_noise * leak.at(middle) > 1.0 else (low, middle)
-    return min(high * leak.blind_speed_m_s, half)
+    return min(high, 0.5) * leak.blind_speed_m_s
 
 
 def _last_fall(leak, ratio):

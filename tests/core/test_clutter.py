@@ -62,6 +62,19 @@ def test_the_covered_half_width_is_where_the_residue_last_falls_below_the_noise(
     assert expected - 1e-6 <= found <= expected + 1.01 * step
 
 
+def test_a_sidelobe_that_just_rises_above_the_noise_is_covered_to_its_top():
+    # 13 uniform pulses: the fourth sidelobe's top, between the points that are looked at first
+    cpi = a_cpi(pulses=13, name='rectangular')
+    leak = covered.leakage(cpi, 0.0)
+    turn = np.linspace(4.3 / 13, 4.7 / 13, 40_001)
+    height = (np.sin(13 * np.pi * turn) / np.sin(np.pi * turn)) ** 2 / 13
+    top, place = height.max(), turn[height.argmax()] * cpi.blind_speed_m_s
+    above, below = (covered.covered_half_width(leak, factor / top) for factor in (1 + 1e-7, 1 - 1e-7))
+    assert above == pytest.approx(place, abs=0.01)
+    assert below < place - 0.5 * cpi.blind_speed_m_s / 13
+
+
+@settings(deadline=None)
 @given(st.floats(-20.0, 80.0), st.floats(0.0, 10.0), st.floats(0.0, 4.0))
 def test_stronger_clutter_never_covers_less(db, more_db, spread):
     leak = covered.leakage(a_cpi(), spread)
@@ -93,6 +106,7 @@ def test_clutter_goes_with_the_energy_and_the_length_of_the_gate():
     assert clutter.pulse_factor(fixed, 4e-6, 1e6, 1e-6, 1e6) == 2.0
 
 
+@settings(deadline=None)
 @given(st.floats(0.0, 200e3), st.floats(5e3, 160e3), st.floats(0.0, 50e3), st.floats(0.0, 90e3))
 def test_a_gate_holds_clutter_from_every_whole_number_of_unambiguous_ranges_away(target_m, reach_m, near_m, long_m):
     patch = replace(RAIN, range_m=(near_m, near_m + long_m))
@@ -169,6 +183,17 @@ def test_maps_of_ranges_and_speeds_get_what_each_cell_gets_alone():
         for column, speed in enumerate(speeds):
             outputs = scnr.filter_outputs(cpi, speed, signal[row], (SURFACE, RAIN), ratio[:, row], received[row])
             assert together[row, column] == pytest.approx(outputs.scnr[outputs.best], rel=1e-9, abs=1e-15)
+
+
+@settings(max_examples=30, deadline=None)
+@given(st.floats(0.0, 90.0), st.floats(0.2, 6.0), st.sampled_from(['rectangular', 'hamming']))
+def test_a_filter_far_from_the_target_is_taken_where_rain_drowns_the_near_ones(rain_db, spread, name):
+    cpi, speeds, rain = a_cpi(pulses=64, name=name), np.linspace(-40.0, 10.0, 60), replace(RAIN, spread_m_s=spread)
+    ratio = np.array([[ratio_of(rain_db)]])
+    found = scnr.best_scnr(cpi, speeds, np.ones(1), (rain,), ratio, np.ones(1))[0]
+    usable = bank.outside_notch(cpi, bank.centres(cpi))
+    quiet = 1.0 / (1.0 + ratio[0] * bank.clutter_gain(cpi, rain.speed_m_s, spread))
+    assert found == pytest.approx((bank.target_gain(cpi, speeds) * quiet)[:, usable].max(axis=1), rel=1e-9)
 
 
 def test_what_a_target_is_lost_to_is_named():

@@ -46,6 +46,7 @@ def steady(signal, level, outputs=1):
     return 1.0 - special.chndtr(2 * level, 2 * outputs, 2 * np.asarray(signal))
 
 
+@settings(deadline=None)
 @given(PROBABILITIES, st.data())
 def test_m_of_n_with_unequal_probabilities_is_what_enumeration_says(probability, data):
     m = data.draw(st.integers(1, len(probability)))
@@ -69,8 +70,8 @@ def test_a_fluctuating_cpi_is_the_average_of_a_steady_one(case, outputs, false_a
 
 
 @pytest.mark.parametrize('case', FLUCTUATING)
-@pytest.mark.parametrize(('n', 'm'), [(1, 1), (2, 1), (3, 2), (8, 3)])
-@pytest.mark.parametrize('false_alarm', [1e-12, 1e-6, 1e-2])
+@pytest.mark.parametrize(('n', 'm'), [(2, 1), (3, 2), (8, 3)])
+@pytest.mark.parametrize('false_alarm', [1e-12, 1e-2])
 def test_m_of_n_is_averaged_over_the_strength_as_the_case_says(case, n, m, false_alarm):
     level = detection.set_threshold(false_alarm, n, m)
     mean = 10 ** np.linspace(0.4, 1.6, n)
@@ -89,6 +90,7 @@ def test_a_shared_strength_is_not_the_poisson_binomial_of_the_averages():
     assert shared > renewed + 0.05
 
 
+@settings(deadline=None)
 @given(SIGNALS, st.sampled_from(swerling.CASES), st.data())
 def test_a_target_without_signal_is_detected_with_the_false_alarm_probability(signals_db, case, data):
     n = len(signals_db)
@@ -98,7 +100,7 @@ def test_a_target_without_signal_is_detected_with_the_false_alarm_probability(si
     assert swerling.set_probability(10 ** (np.array(signals_db) / 10), m, level, case) >= 1e-6 * (1 - 1e-9)
 
 
-@settings(max_examples=30)
+@settings(max_examples=30, deadline=None)
 @given(SIGNALS, st.sampled_from(swerling.CASES))
 def test_arrays_of_cells_get_what_each_cell_gets_alone(signals_db, case):
     cells = 10 ** (np.array([signals_db, signals_db[::-1]]) / 10)
@@ -107,6 +109,7 @@ def test_arrays_of_cells_get_what_each_cell_gets_alone(signals_db, case):
     assert together == pytest.approx(apart, rel=1e-12)
 
 
+@settings(deadline=None)
 @given(st.floats(1e-15, 0.3), st.integers(1, 16), st.data())
 def test_the_false_alarm_of_a_cpi_gives_back_the_overall_one(overall, n, data):
     m = data.draw(st.integers(1, n))

@@ -5,7 +5,7 @@ import warnings
 
 import numpy as np
 import pytest
-from hypothesis import given
+from hypothesis import given, settings
 from hypothesis import strategies as st
 from scipy.signal import windows as scipy_windows
 
@@ -48,6 +48,7 @@ def test_one_and_two_pulses_are_weighted_alike(name):
 
 
 @pytest.mark.parametrize('name', windows.WINDOWS)
+@settings(deadline=None)
 @given(pulses=st.integers(1, 300), sidelobe_db=st.floats(10.0, 120.0))
 def test_windows_are_symmetric(name, pulses, sidelobe_db):
     weights = windows.window(name, pulses, sidelobe_db)
@@ -142,6 +143,7 @@ def matrix_gains(cpi, speed, spread):
     return target, np.einsum('fa,ab,fb->f', steered.conj(), cover, steered).real / noise
 
 
+@settings(deadline=None)
 @given(SPEED, st.floats(0.0, 20.0), st.integers(1, 40), st.sampled_from(windows.WINDOWS))
 def test_the_banks_gains_are_those_of_the_matrices(speed, spread, pulses, name):
     cpi = a_cpi(pulses, name)
@@ -150,6 +152,7 @@ def test_the_banks_gains_are_those_of_the_matrices(speed, spread, pulses, name):
     assert bank.clutter_gain(cpi, speed, spread) == pytest.approx(clutter, abs=1e-9)
 
 
+@settings(deadline=None)
 @given(SPEED, st.integers(-5, 5))
 def test_a_bank_cannot_tell_speeds_a_blind_speed_apart(speed, turns):
     cpi = a_cpi()

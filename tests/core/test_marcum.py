@@ -4,7 +4,7 @@ import math
 
 import numpy as np
 import pytest
-from hypothesis import given
+from hypothesis import given, settings
 from hypothesis import strategies as st
 from scipy import special, stats
 
@@ -44,6 +44,7 @@ def test_one_output_has_the_threshold_minus_the_logarithm_of_the_false_alarm():
     assert marcum.threshold(1e-6) == pytest.approx(13.815510557964274, rel=1e-15)
 
 
+@settings(deadline=None)
 @given(st.lists(st.floats(0.0, 1e12), min_size=2, max_size=20), st.floats(1e-12, 0.5), st.integers(1, 40))
 def test_more_signal_is_never_detected_less(signals, false_alarm, outputs):
     level = marcum.threshold(false_alarm, outputs)
