@@ -27,11 +27,11 @@ def repeated(start, stop, period, limits):
     """
     low, high = limits
     first = np.floor((low - stop) / period).astype(np.intp)
-    last = np.ceil((high - start) / period).astype(np.intp)
-    counts = np.where(stop > start, np.maximum(last - first + 1, 0), 0)
+    counts = np.ceil((high - start) / period).astype(np.intp) - first + 1
+    counts[(counts < 0) | (stop <= start)] = 0
     prf = np.arange(counts.size).repeat(counts)
-    step = first[prf] + np.arange(prf.size) - (counts.cumsum() - counts)[prf]
-    shift = step * period[prf]
+    # Numbered through over all PRFs, less where each one's own numbers begin.
+    shift = ((first + counts - counts.cumsum())[prf] + np.arange(prf.size)) * period[prf]
     begin = np.maximum(start[prf] + shift, low)
     end = np.minimum(stop[prf] + shift, high)
     some = begin < end
