@@ -36,7 +36,18 @@ class Leakage:
     blind_speed_m_s: float
 
     def at(self, turn):
-        """Return the share passed at an offset in turns of v_b."""
+        """Return the share passed at an offset.
+
+        Parameters
+        ----------
+        turn : float
+            Offset over v_b. [unitless]
+
+        Returns
+        -------
+        passed : float
+            Share of the clutter's one-pulse power, against the noise's.
+        """
         lags = np.arange(1, len(self.coefficients))
         return self.coefficients[0] + 2.0 * float(np.cos(2.0 * np.pi * turn * lags) @ self.coefficients[1:])
 

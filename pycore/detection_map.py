@@ -12,9 +12,9 @@ import numpy as np
 from pycore.bank import outside_notch
 from pycore.clutter import clutter_to_noise, folded_clutter_to_noise, late_share
 from pycore.constants import SPEED_OF_LIGHT_M_S
-from pycore.detection import one_pulse_signal
 from pycore.scnr import best_scnr
 from pycore.swerling import at_least, cpi_probability, set_probability, steady_curve
+from pycore.target import one_pulse_signal
 
 _PER_E_FOLD = 1024  # entries of the table in one e-fold of signal-to-noise
 _STRENGTH_STEP = _PER_E_FOLD // 2

@@ -9,12 +9,9 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from pycore.bank import centres, outside_notch, target_gain
+from pycore.speed_samples import best_gain, sampled_speeds
 from pycore.swerling import set_probability
 
-_PER_FILTER = 8
-_MOST_SPEEDS = 1024
-_ELEMENTS_AT_ONCE = 500_000
 _STRENGTH_STEP = 0.2
 
 
@@ -109,67 +106,6 @@ def reach_over(speed_m_s, length_m_s, strength_m4, m, threshold, case, wanted, l
     range_m = np.minimum(factor**-0.25, limits_m[1])
     range_m = np.where(range_m >= limits_m[0], range_m, np.nan)
     return Reach(*_by_length(range_m, length_m_s), speed_m_s, length_m_s, range_m)
-
-
-def sampled_speeds(cpis, m, speed_m_s):
-    """Return speeds between all edges of notches, and the length that each stands for.
-
-    Parameters
-    ----------
-    cpis : sequence of Cpi, length N
-        The PRFs. [unitless]
-    m : int
-        Number of CPIs that must detect. [unitless]
-    speed_m_s : tuple of two floats
-        The wanted speeds. [m/s]
-
-    Returns
-    -------
-    speed_m_s, length_m_s : float arrays, shape V
-        Rising speeds outside the floor, and lengths. [m/s]
-    """
-    low, high = speed_m_s
-    edges = np.unique(np.concatenate(([low, high], *(_notch_edges(cpi, low, high) for cpi in cpis))))
-    narrowest = min(cpi.blind_speed_m_s / cpi.pulses for cpi in cpis)
-    step = max(narrowest / _PER_FILTER, (high - low) / _MOST_SPEEDS)
-    count = np.maximum(np.ceil(np.diff(edges) / step), 1.0).astype(int)
-    length = np.repeat(np.diff(edges) / count, count)
-    place = np.concatenate([np.arange(number) + 0.5 for number in count])
-    speed = np.repeat(edges[:-1], count) + place * length
-    seen = np.abs(speed) >= np.sort([cpi.notch_m_s for cpi in cpis])[m - 1]
-    return speed[seen], length[seen]
-
-
-def _notch_edges(cpi, low, high):
-    """Return the edges of a PRF's notches within an interval of speeds."""
-    blind = cpi.blind_speed_m_s
-    middle = np.arange(math.floor(low / blind), math.ceil(high / blind) + 1) * blind
-    edges = np.concatenate((middle - cpi.notch_m_s, middle + cpi.notch_m_s))
-    return edges[(edges > low) & (edges < high)]
-
-
-def best_gain(cpi, speed_m_s):
-    """Return the gain of the best usable filter at each speed, in noise alone.
-
-    Parameters
-    ----------
-    cpi : Cpi
-        Pulses, window and notch. [unitless]
-    speed_m_s : float array, shape V
-        Closing speeds. [m/s]
-
-    Returns
-    -------
-    gain : float array, shape V
-        Against one pulse; 0 inside the notch.
-    """
-    usable = outside_notch(cpi, centres(cpi))
-    if not usable.any():
-        return np.zeros(len(speed_m_s))
-    step = max(_ELEMENTS_AT_ONCE // cpi.pulses, 1)
-    blocks = [speed_m_s[first : first + step] for first in range(0, len(speed_m_s), step)]
-    gains = [target_gain(cpi, block)[:, usable].max(axis=1) for block in blocks]
-    return np.concatenate([*gains, np.empty(0)]) * outside_notch(cpi, speed_m_s)
 
 
 def _needed_factor(gain, m, threshold, case, wanted, outputs):

@@ -9,7 +9,7 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 from scipy import integrate, special, stats
 
-from pycore import detection, detection_map, reach, swerling
+from pycore import detection, detection_map, reach, speed_samples, swerling, target
 from pycore.clutter import Clutter
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.cpi import cpis
@@ -131,30 +131,30 @@ def test_one_swerling_1_cpi_needs_what_the_closed_form_says():
 
 
 def test_strength_goes_with_energy_and_the_square_of_wavelength():
-    strength = detection.reference_strength(10.0, 60e3, [1e-6, 2e-6], [0.1, 0.05])
+    strength = target.reference_strength(10.0, 60e3, [1e-6, 2e-6], [0.1, 0.05])
     assert strength / 60e3**4 == pytest.approx([10.0, 10.0 * 2 * 0.25])
-    measured = detection.reference_strength(10.0, 60e3, [1e-6, 2e-6], [0.1, 0.1], at_pulse_s=4e-6)
+    measured = target.reference_strength(10.0, 60e3, [1e-6, 2e-6], [0.1, 0.1], at_pulse_s=4e-6)
     assert measured / 60e3**4 == pytest.approx([2.5, 5.0])
 
 
 def test_the_radar_equation_by_hand():
     # 1 MW, 1 us = 1 J; 30 dBi; 0.1 m; 1 m2; 3 dB and 5 dB: 1e6 0.01/(1984.4 x 4.0039e-21) 10^-0.8 = 1.9947e20 m4
-    strength = detection.radar_equation_strength(1e6, 30.0, 1.0, 3.0, 5.0, 1e-6, 0.1)
+    strength = target.radar_equation_strength(1e6, 30.0, 1.0, 3.0, 5.0, 1e-6, 0.1)
     assert strength == pytest.approx(1.9947e20, rel=1e-4)
 
 
 def test_a_targets_law_is_held_constant_nearer_than_the_first_opening():
-    signal = detection.one_pulse_signal(1e16, np.array([0.0, 500.0, 1e3, 1e4]), 1e3)
+    signal = target.one_pulse_signal(1e16, np.array([0.0, 500.0, 1e3, 1e4]), 1e3)
     assert signal == pytest.approx([1e4, 1e4, 1e4, 1.0])
 
 
 def test_a_cpi_half_a_beamwidth_off_axis_loses_six_decibels_both_ways():
-    assert detection.beam_loss_db(0.5) == pytest.approx(2 * 10 * math.log10(2))
+    assert target.beam_loss_db(0.5) == pytest.approx(2 * 10 * math.log10(2))
 
 
 def test_beam_offsets_of_two_cpis_by_hand():
     # 10 ms dwell; fill 1 + 9 of 0.5 ms, 1 + 9 of 0.4 ms: counted middles 2.75 and 7.2 ms, the set's 4.5 ms
-    offset = detection.beam_offsets([0.5e-3, 0.4e-3], 9, 1, 10e-3)
+    offset = target.beam_offsets([0.5e-3, 0.4e-3], 9, 1, 10e-3)
     assert offset == pytest.approx([-0.175, 0.27])
 
 
@@ -174,10 +174,10 @@ def two_cpis(notch_m_s=6.0):
 
 @pytest.mark.parametrize('case', swerling.CASES)
 def test_at_the_reach_the_probability_is_the_wanted_one(case):
-    pair, strength = two_cpis(), detection.reference_strength(10.0, 60e3, [1e-6] * 2, [LAMBDA] * 2)
+    pair, strength = two_cpis(), target.reference_strength(10.0, 60e3, [1e-6] * 2, [LAMBDA] * 2)
     level = detection.set_threshold(1e-6, 2, 1)
     far = reach.reach(pair, strength, 1, level, case, 0.8, np.full(2, 225.0), 110e3, (0.0, 50.0))
-    gain = np.stack([reach.best_gain(cpi, far.speed_m_s) for cpi in pair], axis=1)
+    gain = np.stack([speed_samples.best_gain(cpi, far.speed_m_s) for cpi in pair], axis=1)
     found = swerling.set_probability(gain * strength / far.range_m[:, None] ** 4, 1, level, case)
     assert found == pytest.approx(0.8, abs=1e-6)
     assert far.worst <= far.median <= far.best
@@ -185,7 +185,7 @@ def test_at_the_reach_the_probability_is_the_wanted_one(case):
 
 def test_a_speed_that_all_prfs_notch_is_not_reached():
     pair, level = two_cpis(), detection.set_threshold(1e-6, 2, 1)
-    strength = detection.reference_strength(10.0, 60e3, [1e-6] * 2, [LAMBDA] * 2)
+    strength = target.reference_strength(10.0, 60e3, [1e-6] * 2, [LAMBDA] * 2)
     far = reach.reach(pair, strength, 1, level, 'swerling1', 0.8, np.full(2, 225.0), 110e3, (0.0, 300.0))
     unseen = far.speed_m_s[np.isnan(far.range_m)]
     assert math.isnan(far.worst)

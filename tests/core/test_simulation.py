@@ -15,7 +15,7 @@ import math
 import numpy as np
 import pytest
 
-from pycore import bank, clutter, detection, eclipsing, scnr, swerling
+from pycore import bank, clutter, detection, eclipsing, scnr, swerling, target
 from pycore.clutter import Clutter
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.cpi import cpis
@@ -65,10 +65,10 @@ def test_filters_gain_and_lose_what_noise_and_a_target_give(name, offset):
     # 20 000 trials of noise and of the target in it
     draw, cpi = np.random.default_rng(1), a_cpi(name)
     noise = complex_noise(draw, TRIALS, cpi.pulses)
-    target = 2.0 * echo(draw, TRIALS, np.arange(9) * cpi.pri_s, (3 + offset) * cpi.blind_speed_m_s / 9)
+    moving = 2.0 * echo(draw, TRIALS, np.arange(9) * cpi.pri_s, (3 + offset) * cpi.blind_speed_m_s / 9)
     power = (cpi.weights**2).sum()
     quiet = np.abs(bank_outputs(noise, cpi.weights)) ** 2 / power
-    heard = np.abs(bank_outputs(noise + target, cpi.weights)) ** 2 / power
+    heard = np.abs(bank_outputs(noise + moving, cpi.weights)) ** 2 / power
     gain = bank.target_gain(cpi, (3 + offset) * cpi.blind_speed_m_s / 9)
     assert agree(quiet, np.ones(9))
     assert agree(heard, 1.0 + 4.0 * gain)
@@ -137,7 +137,7 @@ def test_an_echo_keeps_the_share_that_falls_into_the_open_receiver(form, delay_u
     assert is_open.mean() == pytest.approx(share, abs=1e-9)
     level = 1.0 if form == 'whole' else share
     assert agree(quiet, level)
-    assert agree(heard, level * (1.0 + 9.0 * 32 * detection.received_power(share, form)))
+    assert agree(heard, level * (1.0 + 9.0 * 32 * target.received_power(share, form)))
 
 
 DWELL = cpis([980e-6, 860e-6, 790e-6], LAMBDA, 1e-6, 1e6, 6.0, [9, 9, 12], 1, 'hamming')
