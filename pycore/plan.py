@@ -80,7 +80,7 @@ class Platform:
 
 @dataclass(frozen=True, slots=True)
 class RadarEquation:
-    """Signal-to-noise from first principles: peak power [W], gain [dBi], cross-section [m²], noise figure, losses [dB]."""
+    """Peak power [W], gain [dBi], cross-section [m²], noise figure and losses [dB] instead of a reference."""
 
     peak_w: float
     gain_dbi: float

@@ -267,7 +267,7 @@ _SENT = _rows(
         'number',
         'near-at',
         'Near pulse sent at',
-        'When the short pulse starts, after the start of the long one; not before the long pulse and the guard are over.',
+        'When the short pulse starts, counted from the long one, which must be over by then.',
         'µs',
         'time',
         _TIME,
