@@ -22,7 +22,12 @@ export function rememberedMemory(sent, wasm) {
 }
 
 function change(page, difference) {
-  for (let i = 0; i < page.length; i += 1) page[i] ^= difference[i];
+  const [words, changes] = [wordsOf(page), wordsOf(difference)];
+  for (let i = 0; i < words.length; i += 1) words[i] ^= changes[i];
+}
+
+function wordsOf(bytes) {
+  return new Uint32Array(bytes.buffer, bytes.byteOffset, bytes.length / 4); // all sizes before it are multiples of four
 }
 
 // Copies the data segments of a WebAssembly binary to where they belong in memory.

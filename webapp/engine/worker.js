@@ -5,7 +5,7 @@
 import { rememberedMemory } from './memory.js';
 
 const NOWHERE = 'https://pulsewright.invalid/'; // Pyodide wants an address; this one leads nowhere, and nothing is asked of it
-const FILES = { 'pyodide.asm.wasm': ['wasm', 'application/wasm'], 'python_stdlib.zip': ['stdlib', 'application/zip'] };
+const FILES = { 'pyodide.asm.wasm': 'wasm', 'python_stdlib.zip': 'stdlib' };
 const NO_PACKAGES = { info: { arch: 'wasm32', platform: 'emscripten', abi_version: '2026_0' }, packages: {} };
 
 const parts = new Map();
@@ -25,32 +25,53 @@ function fail(error) {
 }
 
 globalThis.fetch = async (address) => {
-  const file = FILES[String(address).slice(NOWHERE.length)];
-  if (!file) throw new TypeError(`the engine asked for ${address}, which is not part of it`);
-  return new Response(await part(file[0]).bytes, { headers: { 'Content-Type': file[1] } });
+  const name = FILES[String(address).slice(NOWHERE.length)];
+  if (!name) throw new TypeError(`the engine asked for ${address}, which is not part of it`);
+  return new Response(name === 'wasm' ? null : await part(name).bytes);
 };
 
-// When WebAssembly refuses its bytes, Pyodide warns and waits for ever: say it instead.
-const instantiate = WebAssembly.instantiateStreaming;
-WebAssembly.instantiateStreaming = (...given) => instantiate(...given).catch((error) => {
-  fail(error);
-  throw error;
+// The binary is compiled while all else is still on its way; and where Pyodide would only warn and wait for ever, this says why.
+const compiled = part('wasm').bytes.then(WebAssembly.compile);
+compiled.catch(fail);
+WebAssembly.instantiateStreaming = async (_, imports) => {
+  const module = await compiled;
+  return { module, instance: await WebAssembly.instantiate(module, imports) };
+};
+
+// numpy's libraries too: Python asks for them at once when it needs them, and by then they are there.
+const AHEAD = /^numpy\/(_core|linalg)\/.*\.so$/; // what importing numpy loads; the rest is compiled when it is used
+const libraries = [];
+WebAssembly.Module = new Proxy(WebAssembly.Module, {
+  construct: (Module, [bytes]) => libraries.find((library) => same(library.bytes, bytes))?.module ?? new Module(bytes),
 });
 
-// A pack is a length, a JSON list of [path, length], and the files one after the other.
-function placePack(FS, folder, pack) {
-  const head = 4 + new DataView(pack.buffer, pack.byteOffset).getUint32(0, true);
-  let start = head;
-  for (const [path, length] of JSON.parse(new TextDecoder().decode(pack.subarray(4, head)))) {
-    const file = `${folder}/${path}`;
-    FS.mkdirTree(file.slice(0, file.lastIndexOf('/')));
-    FS.writeFile(file, pack.subarray(start, start + length), { canOwn: true });
-    start += length;
-  }
+function compileAhead(bytes) {
+  WebAssembly.compile(bytes).then((module) => libraries.push({ bytes, module }), () => {});
 }
 
+function same(one, other) {
+  return one.length === other.length && one.every((byte, i) => byte === other[i]);
+}
+
+// A pack is a length, a JSON list of [path, length], and the files one after the other.
+function unpacked(pack) {
+  const head = 4 + new DataView(pack.buffer, pack.byteOffset).getUint32(0, true);
+  let start = head;
+  return JSON.parse(new TextDecoder().decode(pack.subarray(4, head))).map(([path, length]) => {
+    start += length;
+    return { path, bytes: pack.subarray(start - length, start) };
+  });
+}
+
+const packs = ['numpy', 'core'].map((name) => part(name).bytes.then(unpacked));
+packs[0].then((files) => files.filter(({ path }) => AHEAD.test(path)).forEach(({ bytes }) => compileAhead(bytes)));
+
 async function placePacks(FS, { sitePackages }) {
-  for (const name of ['numpy', 'core']) placePack(FS, sitePackages, await part(name).bytes);
+  for (const { path, bytes } of (await Promise.all(packs)).flat()) {
+    const file = `${sitePackages}/${path}`;
+    FS.mkdirTree(file.slice(0, file.lastIndexOf('/')));
+    FS.writeFile(file, bytes, { canOwn: true });
+  }
 }
 
 async function remembered() {
