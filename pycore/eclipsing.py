@@ -11,7 +11,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from pycore.combs import repeated
+from pycore.combs import Comb, repeated
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.spans import Spans
 
@@ -109,6 +109,39 @@ def _share(windows, pri_s, start_s, length_s):
     return np.clip(received / length_s, 0.0, 1.0)
 
 
+def clear_comb(pri_s, pulse_s, recovery_s, guard_s, received_min):
+    """Return the clear ranges of each PRF as one interval that repeats with its unambiguous range.
+
+    Parameters
+    ----------
+    pri_s : float array, shape N
+        Intervals. [s]
+    pulse_s : float array, shape N
+        Pulse lengths, each shorter than its interval. [s]
+    recovery_s, guard_s : float
+        Times that the receiver stays shut after and before a pulse. [s]
+    received_min : float
+        Least received share, 0 to 1; at 0 anything above nothing counts. [unitless]
+
+    Returns
+    -------
+    ranges : Comb
+        No interval where recovery, guard and pulse leave too little of one open. [m]
+
+    Notes
+    -----
+    Derived here: of an echo [t, t + τ] at least q τ lies inside an open window [a, b] that is at least q τ long for
+    t from a - (1 - q) τ to b - q τ.
+    """
+    needed = received_min * pulse_s
+    start, stop = recovery_s + needed, pri_s - guard_s - needed
+    # The window itself must be open at all, and long enough for the needed part of the pulse.
+    open_s = pri_s - guard_s - pulse_s - recovery_s
+    stop = np.where((open_s > 0) & (open_s >= needed), stop, start)
+    scale = METRES_PER_SECOND_OF_DELAY
+    return Comb(start * scale, stop * scale, pri_s * scale)
+
+
 def clear_ranges(pri_s, pulse_s, recovery_s, guard_s, received_min, range_m, near=None):
     """Return the ranges at which each PRF receives enough of an echo.
 
@@ -131,21 +164,11 @@ def clear_ranges(pri_s, pulse_s, recovery_s, guard_s, received_min, range_m, nea
     -------
     ranges : Spans
         Exact edges, cut to the axis; none where recovery, guard and pulse fill the interval. [m]
-
-    Notes
-    -----
-    Derived here: of an echo [t, t + τ] at least q τ lies inside an open window [a, b] that is at least q τ long for
-    t from a - (1 - q) τ to b - q τ.
     """
     if near is not None:
         return _with_near_pulse(pri_s, pulse_s, recovery_s, guard_s, received_min, range_m, near)
-    needed = received_min * pulse_s
-    start, stop = recovery_s + needed, pri_s - guard_s - needed
-    # The window itself must be open at all, and long enough for the needed part of the pulse.
-    open_s = pri_s - guard_s - pulse_s - recovery_s
-    stop = np.where((open_s > 0) & (open_s >= needed), stop, start)
-    scale = METRES_PER_SECOND_OF_DELAY
-    return repeated(start * scale, stop * scale, pri_s * scale, range_m)
+    comb = clear_comb(pri_s, pulse_s, recovery_s, guard_s, received_min)
+    return repeated(comb.start, comb.stop, comb.period, range_m)
 
 
 def first_opening(recovery_s, received_min, pulse_s, near=None):
