@@ -1,8 +1,29 @@
 """Intervals that repeat: one interval in every period, cut to an axis, for all PRFs at once."""
 
+from dataclasses import dataclass
+
 import numpy as np
 
 from pycore.spans import Spans
+
+
+@dataclass(frozen=True, slots=True)
+class Comb:
+    """One clear interval in every period, for each of N PRFs, on an axis without ends.
+
+    Parameters
+    ----------
+    start : float array, shape N
+        Lower end in the period that begins at 0. [m or m/s]
+    stop : float array, shape N
+        Upper end; a PRF whose upper end is not above its lower one is never clear. [m or m/s]
+    period : float array, shape N
+        What it repeats with. [m or m/s]
+    """
+
+    start: np.ndarray
+    stop: np.ndarray
+    period: np.ndarray
 
 
 def repeated(start, stop, period, limits):

@@ -107,12 +107,32 @@ def clear_lengths(spans, n):
         as they are and the stretches at both ends, on which no PRF is clear, left out. [m or m/s]
     """
     bit = _BIT[spans.prf]
-    edge = np.concatenate((spans.start, spans.stop))
+    return lengths_between(np.concatenate((spans.start, spans.stop)), np.concatenate((bit, -bit)), n)
+
+
+def lengths_between(edge, step, n):
+    """Return the length of each pattern from edges in any order, each with the bit that it switches on or off.
+
+    Parameters
+    ----------
+    edge : float array, shape K
+        Where something changes. [m or m/s]
+    step : int array, shape K
+        2^i where PRF i becomes clear, -2^i where it becomes blind. [unitless]
+    n : int
+        Number of PRFs. [unitless]
+
+    Returns
+    -------
+    length : float array, shape 2^N
+        Between the first edge and the last. [m or m/s]
+    """
     order = edge.argsort()
     edge = edge[order]
-    pattern = np.concatenate((bit, -bit))[order].cumsum()[:-1].astype(np.intp, copy=False)
-    # Where spans of one PRF touch, the highest bit can be switched on twice for a stretch of no length.
-    return np.bincount(pattern, edge[1:] - edge[:-1], 1 << n)[: 1 << n]
+    # Edges in the same place come in any order, and the running sum may pass through patterns
+    # that do not exist; they have no length, but must not point outside the table.
+    pattern = step[order].cumsum()[:-1] & (1 << n) - 1
+    return np.bincount(pattern.astype(np.intp, copy=False), edge[1:] - edge[:-1], 1 << n)
 
 
 def over_supersets(table, n):

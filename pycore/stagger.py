@@ -10,7 +10,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from pycore.combs import repeated
+from pycore.combs import Comb, repeated
 from pycore.crossings import clear_speeds, deepest_dip, first_fall, first_notch, first_peak
 from pycore.patterns import sweep
 from pycore.response import Response, binomial_weights, repeat_counts, staggered_response
@@ -55,6 +55,24 @@ class Stagger:
     share_above: float
 
 
+def notch_comb(blind_speed_m_s, notch_m_s):
+    """Return the clear speeds of each constant PRF as one interval that repeats with its blind speed.
+
+    Parameters
+    ----------
+    blind_speed_m_s : float array, shape N
+        First blind speeds. [m/s]
+    notch_m_s : float array, shape N
+        Half widths of the notches; half a blind speed or more leaves nothing. [m/s]
+
+    Returns
+    -------
+    speeds : Comb
+        From one notch to the next. [m/s]
+    """
+    return Comb(notch_m_s, blind_speed_m_s - notch_m_s, blind_speed_m_s)
+
+
 def notch_clear_speeds(blind_speed_m_s, notch_m_s, speed_m_s):
     """Return the radial speeds at which each constant PRF is clear.
 
@@ -72,7 +90,8 @@ def notch_clear_speeds(blind_speed_m_s, notch_m_s, speed_m_s):
     speeds : Spans
         Exact edges, cut to the axis. [m/s]
     """
-    return repeated(notch_m_s, blind_speed_m_s - notch_m_s, blind_speed_m_s, speed_m_s)
+    comb = notch_comb(blind_speed_m_s, notch_m_s)
+    return repeated(comb.start, comb.stop, comb.period, speed_m_s)
 
 
 def wanted_magnitudes(speed_m_s):

@@ -228,9 +228,32 @@ def visible_share(ranges, speeds, n, m, range_m, speed_m_s):
     share : float
         Between 0 and 1, but for rounding.
     """
-    table = np.empty((2, 1 << n))
-    table[0] = clear_lengths(ranges, n)
-    table[1] = clear_lengths(speeds, n)
-    on_range, on_speed = over_supersets(table, n)
     area = (range_m[1] - range_m[0]) * (speed_m_s[1] - speed_m_s[0])
+    return share_from_lengths(clear_lengths(ranges, n), clear_lengths(speeds, n), n, m, area)
+
+
+def share_from_lengths(range_length_m, speed_length_m_s, n, m, area):
+    """Return the share of an area that at least M of N PRFs see from the lengths of the patterns on its two axes.
+
+    Parameters
+    ----------
+    range_length_m : float array, shape 2^N
+        Length of each pattern of clear PRFs; that of no PRF does not matter. [m]
+    speed_length_m_s : float array, shape 2^N
+        Likewise. [m/s]
+    n : int
+        Number of PRFs. [unitless]
+    m : int
+        Number that must be clear, at least 1. [unitless]
+    area : float
+        The whole. [m²/s]
+
+    Returns
+    -------
+    share : float
+        Between 0 and 1, but for rounding.
+    """
+    table = np.empty((2, 1 << n))
+    table[0], table[1] = range_length_m, speed_length_m_s
+    on_range, on_speed = over_supersets(table, n)
     return float(_enough(n, m) @ exactly(on_range * on_speed, n)) / area
