@@ -8,10 +8,12 @@ python3 build.py bench      builds, prints how fast things are, as ratios
 
 import sys
 
-if sys.version_info < (3, 11):
-    sys.exit(f'Python 3.11 or newer is needed, and this is {sys.version.split()[0]}: run build.py with a newer python3.')
+if sys.version_info < (3, 11):  # noqa: UP036 - this file alone must run on any Python, to say so
+    sys.exit(
+        f'Python 3.11 or newer is needed, and this is {sys.version.split()[0]}: run build.py with a newer python3.'
+    )
 
-import argparse  # noqa: E402 - after the check, which must run on any Python
+import argparse  # noqa: E402 - after the check
 import shutil  # noqa: E402
 import subprocess  # noqa: E402
 from pathlib import Path  # noqa: E402
@@ -25,6 +27,7 @@ from webapp.building.stop import Stop, no_space  # noqa: E402
 def build(given=None, kind='build', snapshot=True):
     """Make dist/ and return the interpreter of the environment that made it."""
     # Python with numpy and bokeh, and Node; Pyodide and numpy for WebAssembly
+    given = given and runtime.checked(given)
     python = environment.interpreter(kind, wheels_in(given))
     parts_of_others = runtime.parts(python, given)
 
@@ -121,9 +124,13 @@ def arguments():
     )
     parser.add_argument('verb', nargs='?', default='build', choices=['build', 'serve', 'test', 'bench'])
     parser.add_argument('--runtime', type=Path, metavar='DIR', help="take Pyodide's files and numpy's wheel from there")
-    parser.add_argument('--port', type=int, default=serve.USUAL_PORT, help='for serve (default %(default)s; 0: any free one)')
+    parser.add_argument(
+        '--port', type=int, default=serve.USUAL_PORT, help='for serve (default %(default)s; 0: any free one)'
+    )
     parser.add_argument('--no-open', dest='open', action='store_false', help='for serve: open no browser')
-    parser.add_argument('--no-snapshot', dest='snapshot', action='store_false', help='leave the started memory out: 5 MB less')
+    parser.add_argument(
+        '--no-snapshot', dest='snapshot', action='store_false', help='leave the started memory out: 5 MB less'
+    )
     options, options.selected = parser.parse_known_args(namespace=argparse.Namespace())
     if options.selected and options.verb in ('build', 'serve'):
         parser.error(f'{options.verb} takes no {" ".join(options.selected)}')

@@ -39,16 +39,24 @@ def engine_parts(node, runtime, with_snapshot=True):
     parts : dict of str to Path
         wasm, stdlib, numpy, core and, if wanted, snapshot.
     """
-    kept = json.loads(made('kept.json', lambda place: record(node, runtime, place), *_engine_sources(), *_tools()).read_text())
-    stdlib = made('stdlib.zip', lambda place: compile_library(node, runtime, kept, place), json.dumps(kept['library']), *_tools())
-    numpy = made('numpy.pack', lambda place: compile_numpy(node, runtime, kept, place), json.dumps(kept['numpy']), *_tools())
+    kept = json.loads(
+        made('kept.json', lambda place: record(node, runtime, place), *_engine_sources(), *_tools()).read_text()
+    )
+    stdlib = made(
+        'stdlib.zip', lambda place: compile_library(node, runtime, kept, place), json.dumps(kept['library']), *_tools()
+    )
+    numpy = made(
+        'numpy.pack', lambda place: compile_numpy(node, runtime, kept, place), json.dumps(kept['numpy']), *_tools()
+    )
     core = made('core.pack', lambda place: compile_core(node, runtime, place), *_engine_sources(), *_tools())
     wasm = Path(runtime) / 'pyodide.asm.wasm'
     parts = {'wasm': wasm, 'stdlib': stdlib, 'numpy': numpy, 'core': core}
     if with_snapshot:
         modules = json.dumps(kept['modules'])
         started = (modules, stdlib, *_tools())
-        parts['snapshot'] = made('snapshot.bin', lambda place: remember(node, runtime, stdlib, kept['modules'], place), *started)
+        parts['snapshot'] = made(
+            'snapshot.bin', lambda place: remember(node, runtime, stdlib, kept['modules'], place), *started
+        )
         parts['stdlib'] = made('emptied.zip', lambda place: empty(stdlib, kept['modules'], place), *started)
 
     return parts
@@ -163,7 +171,7 @@ def remember(node, runtime, stdlib, modules, place):
     node, runtime, place : Path
         As in `record`. [unitless]
     stdlib : Path
-        The archive that the page starts from, in which every file has the same place: the memory holds offsets. [unitless]
+        The archive that the page starts from, or one with every file in the same place. [unitless]
     modules : list of str
         What to import. [unitless]
     """

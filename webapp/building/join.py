@@ -1,4 +1,4 @@
-"""Join ES modules into one classic script, which loads from everywhere: a file, a sandboxed frame, a server that sends odd types.
+"""Join ES modules into one classic script, which loads from a file, in a sandboxed frame and under any type.
 
 Each module becomes a function of its own, so names cannot meet. Only the syntax that our modules use is known; anything
 else stops the build, because a joiner that guesses breaks pages.
@@ -11,8 +11,14 @@ from webapp.building.stop import Stop
 IMPORT = re.compile(r"^import\s*\{([^}]*)\}\s*from\s*'\./([\w-]+\.js)';[ \t]*$", re.MULTILINE)
 EXPORT = re.compile(r'^export\s+((?:async\s+)?function\*?|const|class)\s+([A-Za-z_$][\w$]*)', re.MULTILINE)
 UNKNOWN = (
-    (re.compile(r'^\s*(import\b(?!\s*\().*)$', re.MULTILINE), 'an import that is not "import { a, b } from \'./x.js\';"'),
-    (re.compile(r'^\s*(export\b.*)$', re.MULTILINE), 'an export that is not "export function|async function|const|class NAME"'),
+    (
+        re.compile(r'^\s*(import\b(?!\s*\().*)$', re.MULTILINE),
+        'an import that is not "import { a, b } from \'./x.js\';"',
+    ),
+    (
+        re.compile(r'^\s*(export\b.*)$', re.MULTILINE),
+        'an export that is not "export function|async function|const|class NAME"',
+    ),
     (re.compile(r'(?<![\w.$])(import\s*[(.].*)$', re.MULTILINE), 'a dynamic import or import.meta'),
     (re.compile(r'^(await\b.*)$', re.MULTILINE), 'a top-level await'),
     (re.compile(r'(</script.*|<!--.*)$', re.MULTILINE | re.IGNORECASE), 'text that ends or hides a script in a page'),
@@ -64,7 +70,7 @@ def ordered(folder, first):
         if name in done:
             return
         if name in path:
-            raise Stop(f'The modules {" -> ".join([*path, name])} import each other in a ring: move what they share to a third.')
+            raise Stop(f'The modules {" -> ".join([*path, name])} import each other in a ring: move what they share.')
         if not (folder / name).is_file():
             raise Stop(f'{path[-1] if path else folder} needs {name}, and there is no such file in {folder}.')
         for _, needed in IMPORT.findall((folder / name).read_text(encoding='utf-8')):

@@ -9,8 +9,8 @@ from webapp.building.runtime import NUMPY_WHEEL, PYODIDE_VERSION
 
 RULE = '=' * 100
 PYODIDE = f"""Pyodide {PYODIDE_VERSION} (with CPython for WebAssembly), Mozilla Public License 2.0, below.
-The files pyodide.asm.wasm, pyodide.asm.mjs and pyodide.mjs are used as released; their source is that of the release of this
-version in Pyodide's public repository. Its two modules were joined into one by replacing these pieces of text, and nothing else:
+The files pyodide.asm.wasm, pyodide.asm.mjs and pyodide.mjs are used as released; their source is that of the release of
+this version in Pyodide's public repository. The two modules were joined by replacing these pieces, and nothing else:
 {{changes}}
 The standard library was compiled to byte code, without docstrings and line tables, and reduced to the modules in use.
 Pyodide's core holds further libraries under licences of their own, among them Emscripten and musl (MIT), libffi (MIT),
@@ -53,7 +53,9 @@ def changes():
         Straight from what the build does.
     """
     return '\n'.join(
-        f'  {file}: {piece} -> {instead or "(nothing)"}' for file, pieces in CHANGES.items() for piece, _, instead in pieces
+        f'  {file}: {piece} -> {instead or "(nothing)"}'
+        for file, pieces in CHANGES.items()
+        for piece, _, instead in pieces
     )
 
 

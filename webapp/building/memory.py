@@ -98,7 +98,9 @@ def place_segments(memory, wasm, at):
     for _ in range(segments):
         kind, at = count(wasm, at)
         if kind != 0 or wasm[at] != I32_CONST:
-            raise Stop('pyodide.asm.wasm has a data segment of a kind that this build does not know: build with --no-snapshot.')
+            raise Stop(
+                'pyodide.asm.wasm has a data segment of a kind that this build does not know: build with --no-snapshot.'
+            )
         place, at = count(wasm, at + 1)
         length, at = count(wasm, at + 1)
         memory[place : place + length] = wasm[at : at + length]

@@ -1,7 +1,7 @@
 """Assemble the two outputs from one template: a page with its scripts beside it, and the whole tool in one file.
 
-The template (webapp/page/index.html) is plain HTML with four marks, which the policy, the styles, the opening data and the
-scripts replace. Both outputs boot in the same way; they differ only in where the scripts are.
+The template (webapp/page/index.html) is plain HTML with four marks, which the policy, the styles, the opening data and
+the scripts replace. Both outputs boot in the same way; they differ only in where the scripts are.
 """
 
 import base64
@@ -12,7 +12,7 @@ from dataclasses import dataclass
 from webapp.building import payload
 from webapp.building.stop import Stop
 
-# Nothing is requested from anywhere, and no text becomes code. The worker is a data: address, WebAssembly needs its own word.
+# Nothing is requested from anywhere, and no text becomes code. The worker is a data: address; WebAssembly has its own word.
 POLICY = (
     "default-src 'none'; script-src {scripts} 'wasm-unsafe-eval'; worker-src data:; style-src 'unsafe-inline'; "
     "img-src data: blob:; connect-src 'none'; base-uri 'none'; form-action 'none'"
@@ -64,7 +64,12 @@ def hosted(contents):
     body += ''.join(f'<script defer src="{name}"></script>\n' for name in scripts)
     index = assembled(contents, "'self'", body)
 
-    return {'index.html': index, **scripts, **{places[name]: text for name, text in parts.items()}, 'licences.txt': contents.licences}
+    return {
+        'index.html': index,
+        **scripts,
+        **{places[name]: text for name, text in parts.items()},
+        'licences.txt': contents.licences,
+    }
 
 
 def single(contents):
@@ -131,7 +136,9 @@ def whole(template):
         The same.
     """
     if sorted(MARK.findall(template)) != sorted(MARKS):
-        raise Stop(f'The template webapp/page/index.html must have {", ".join(MARKS)} each once as <!-- build: NAME -->.')
+        raise Stop(
+            f'The template webapp/page/index.html must have {", ".join(MARKS)} each once as <!-- build: NAME -->.'
+        )
 
     return template
 

@@ -1,4 +1,4 @@
-"""Where the build reads and writes: the project, the output, and a cache outside the project that can be deleted at any time."""
+"""Where the build reads and writes: the project, the output, and a cache elsewhere that can be deleted at any time."""
 
 import hashlib
 import os

@@ -1,7 +1,7 @@
-"""Join Pyodide's two modules and our worker into one module that imports nothing, so that the strictest policy lets it run.
+"""Join Pyodide's two modules and our worker into one that imports nothing, so that the strictest policy lets it run.
 
-What is changed in Pyodide's files is written here, piece by piece, and each piece must be found exactly as often as said:
-another release stops the build instead of breaking the page.
+What is changed in Pyodide's files is written here, and each piece must be found exactly as often as said: another release
+stops the build instead of breaking the page.
 """
 
 from webapp.building.join import joined
@@ -65,7 +65,10 @@ def changed(path):
     text = path.read_text(encoding='utf-8')
     for piece, times, instead in CHANGES[path.name]:
         if text.count(piece) != times:
-            raise Stop(f'{path.name} has "{piece}" {text.count(piece)} times, not {times}: it is not the release this build knows.')
+            raise Stop(
+                f'{path.name} has "{piece}" {text.count(piece)} times, not {times}: '
+                'it is not the release this build knows.'
+            )
         text = text.replace(piece, instead)
     for piece in LEFT_OVER:
         if piece in text:

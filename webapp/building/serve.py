@@ -43,7 +43,9 @@ def server(folder, port):
         return http.server.ThreadingHTTPServer((HOST, port), functools.partial(Handler, directory=folder))
     except OSError as fault:
         if fault.errno in (errno.EADDRINUSE, errno.EACCES):
-            raise Stop(f'Port {port} is taken or not allowed: choose another with --port N (0 takes any free one).') from fault
+            raise Stop(
+                f'Port {port} is taken or not allowed: choose another with --port N (0 takes any free one).'
+            ) from fault
         raise
 
 

@@ -9,45 +9,40 @@ EDITS = (
     {'key': 'waveform.pri_us.0', 'text': '900 Hz'},
     {'key': 'radar.carrier_ghz', 'text': 'abc'},
     {'do': 'add-pri'},
-    {'do': 'set-kind', 'value': 'stagger'},
     {'do': 'add-rain'},
 )
 
 
 def requests():
-    """Return the requests of a session: every example, some edits (one refused), a link, a bare list, a fault.
+    """Return the requests of a session: every example, some edits (one refused), links, a fault.
 
     Returns
     -------
     requests : list of dict
-        As the worker passes them to the bridge.
+        As the worker passes them to the bridge; the figures "all" stand for every one that there is.
     """
-    plans = [json.loads(path.read_text(encoding='utf-8')) for path in sorted((WEBAPP / 'examples').glob('*.json'))]
-    notes = [{'plan': plan, 'figures': figures(), 'edits': edits} for plan in plans for edits in ([], *([edit] for edit in EDITS))]
-    links = [{'open': text} for text in ('v=1&pri=980,860us', 'v=1&pri=980,86', '980 860 us')]
+    plans = [example_plan(path) for path in sorted((WEBAPP / 'examples').glob('*.json'))]
+    notes = [{'plan': plan, 'figures': 'all', 'edits': edits} for plan in plans for edits in ([], EDITS)]
+    links = [{'opened': text} for text in ('v=1&pri=980,860us', 'v=1&pri=980,86')]
 
     return [
         *({'action': 'note', 'args': args} for args in [*notes, *links]),
-        *({'action': 'assess', 'args': {'document': plan}} for plan in plans),
+        *({'action': 'assess', 'args': {'plan': plan}} for plan in plans),
         {'action': 'no such action', 'args': {}},
     ]
 
 
-def figures():
-    """Return the names of the figures.
+def example_plan(path):
+    """Return the plan of a worked example.
+
+    Parameters
+    ----------
+    path : Path
+        A file of webapp/examples. [unitless]
 
     Returns
     -------
-    names : list of str
-        In the order of the page.
+    plan : dict
+        As it is written there.
     """
-    return [
-        'trade-line',
-        'eclipsed-ranges',
-        'blind-speeds',
-        'blind-zones',
-        'decoding',
-        'doppler-filters',
-        'detection',
-        'dwell',
-    ]
+    return json.loads(path.read_text(encoding='utf-8'))['plan']

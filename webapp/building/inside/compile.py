@@ -1,4 +1,4 @@
-"""Run inside Pyodide: compile the modules named in /job/compile.json to byte code that this Python, and only this, reads.
+"""Run inside Pyodide: compile the modules named in /job/compile.json to byte code that only this Python reads.
 
 The job: a list of {"archive": "zip" or "pack", "out": name, "optimize": level, "bare": bool, "blank": [paths],
 "files": {path in the archive: source}}, where a source is /folder/file or /folder/file.zip::member.
@@ -42,7 +42,7 @@ def compiled(path, data, job):
 
 
 def write_zip(out, members):
-    """Write a zip archive without compression: the page compresses it as a whole, which is smaller and quicker to read."""
+    """Write a zip archive without compression: it is compressed as a whole, which is smaller and quicker to read."""
     with zipfile.ZipFile(out, 'w', zipfile.ZIP_STORED) as archive:
         for path, data in members:
             archive.writestr(zipfile.ZipInfo(path, FIXED_DATE), data)
@@ -55,6 +55,6 @@ def write_pack(out, members):
         file.write(struct.pack('<I', len(index)) + index + b''.join(data for _, data in members))
 
 
-for job in json.load(open('/job/compile.json')):
+for job in json.loads(content('/job/compile.json')):
     members = [compiled(path, content(source), job) for path, source in sorted(job['files'].items())]
     {'zip': write_zip, 'pack': write_pack}[job['archive']](f'/job/{job["out"]}', members)

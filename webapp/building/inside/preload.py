@@ -1,6 +1,6 @@
-"""Run inside Pyodide just before its memory is kept: import the modules named in `words`, which are the library's, not numpy's.
+"""Run inside Pyodide just before its memory is kept: import modules of the library, but not numpy.
 
-Reads no file: when a file was last read would be in the memory.
+Their names are in `words`. Reads no file: when a file was last read would be in the memory.
 """
 
 import gc

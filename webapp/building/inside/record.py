@@ -17,14 +17,20 @@ PACKAGES = '/lib/python3.14/site-packages/'
 SELDOM = ('encodings.ascii', 'encodings.cp437', 'encodings.latin_1', 'traceback', 'linecache', 'tokenize')
 
 
+def text_of(path):
+    """Return what is written in a file."""
+    with open(path, encoding='utf-8') as file:
+        return file.read()
+
+
 def sources():
     """Return the text of each of our modules that go to the browser."""
     paths = [*glob.glob('/project/pycore/**/*.py', recursive=True), '/project/webapp/engine/bridge.py']
-    return [open(path, encoding='utf-8').read() for path in sorted(paths)]
+    return [text_of(path) for path in sorted(paths)]
 
 
 def named_imports(text):
-    """Yield every module outside our own that a source names, in a function or not, and the parts of numpy it reaches into."""
+    """Yield each module that a source imports, in a function or not, and each part of numpy that it reaches into."""
     for node in ast.walk(ast.parse(text)):
         if isinstance(node, ast.Import):
             yield from (alias.name for alias in node.names)
@@ -66,9 +72,13 @@ for name in SELDOM:
     importlib.import_module(name)
 
 bridge = importlib.import_module('webapp.engine.bridge')
-for request in json.load(open('/job/session.json')):
+columns = importlib.import_module('pycore.columns')
+for request in json.loads(text_of('/job/session.json')):
+    if request['args'].get('figures') == 'all':
+        request['args']['figures'] = columns.FIGURES
     reply = json.loads(bridge.answer(json.dumps(request))[0])
     if 'traceback' in reply.get('error', {}) and request['action'] in bridge.api.ACTIONS:
         print(f'  {request["action"]} failed while the session was recorded: {reply["error"]["message"]}')
 
-json.dump(kept(), open('/job/kept.json', 'w'), indent=1)
+with open('/job/kept.json', 'w') as file:
+    json.dump(kept(), file, indent=1)
