@@ -1,0 +1,50 @@
+"""What the figures show: named columns, axes, captions, summaries and tables, one module for each figure."""
+
+from pycore.columns import blind_speeds, blind_zones, eclipsed_ranges, trade_line
+
+_MODULES = {module.NAME: module for module in (blind_zones, trade_line, eclipsed_ranges, blind_speeds)}
+
+FIGURES = tuple(_MODULES)
+"""Names of the figures, in the order in which a note of dwells shows them. [unitless]"""
+
+
+def order(kind):
+    """Return the figures in the order in which a note shows them: the chief one first.
+
+    Parameters
+    ----------
+    kind : str
+        ``'dwells'`` or ``'stagger'``. [unitless]
+
+    Returns
+    -------
+    names : tuple of str
+        Blind zones are the chief figure of dwells, blind speeds that of a stagger.
+    """
+    if kind != 'stagger':
+        return FIGURES
+    swap = {blind_zones.NAME: blind_speeds.NAME, blind_speeds.NAME: blind_zones.NAME}
+    return tuple(swap.get(name, name) for name in FIGURES)
+
+
+def picture(name, computed, units, size=None):
+    """Return one figure of a plan.
+
+    Parameters
+    ----------
+    name : str
+        One of ``FIGURES``. [unitless]
+    computed : Computed
+        What the plan gives. [SI]
+    units : mapping
+        Units that the reader prefers, by ``range``, ``speed``, ``pri``. [unitless]
+    size : mapping or None
+        Width and height of its plot. [px]
+
+    Returns
+    -------
+    picture : dict
+        ``title``; ``caption``, ``short`` (one line), ``summary`` (for a screen reader), ``table`` (``head``, ``rows``);
+        ``columns`` by source; ``ranges``, ``labels``, ``units`` and fixed ``ticks`` by axis.
+    """
+    return _MODULES[name].picture(computed, units, size)

@@ -1,0 +1,151 @@
+"""How a stagger answers at each speed: the part of the figure of blind speeds that dwells do not have."""
+
+import numpy as np
+
+from pycore.columns.blind_parts import gaps
+from pycore.columns.named import names_at
+from pycore.wording import percent, significant, trimmed, with_unit
+
+LOWEST_DB, HIGHEST_DB = -50.0, 10.0
+"""Response at the bottom and the top of the figure, unless the least response asks for more. [dB]"""
+
+_FEWEST, _MOST, _PER_STEP = 480, 1920, 1.0
+_BAR_DB = 2.2
+
+
+def nothing():
+    """Return the columns of a plan that is no stagger.
+
+    Returns
+    -------
+    columns : dict
+        All of them, empty.
+    """
+    empty = np.zeros(0)
+    return {
+        'response': {'x': empty, 'y': empty},
+        'threshold': {'x0': empty, 'x1': empty, 'y': empty},
+        'below': {'y': empty, 'left': empty, 'right': empty, 'height': empty},
+        'speeds': {'x': empty, 'y0': empty, 'y1': empty},
+        'names': names_at(empty, empty, [], []),
+    }
+
+
+def picture(computed, axis):
+    """Return columns, ranges, ticks and words of a stagger's response.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [SI]
+    axis : Axis
+        Of radial speed. [m/s]
+
+    Returns
+    -------
+    picture : dict
+        As a figure's, without its title.
+    """
+    least = float(computed.plan.response_min_db)
+    low, high = min(LOWEST_DB, least - 20.0), max(HIGHEST_DB, least + 6.0)
+    step = 10 if high - low <= 80 else 20
+    at = list(range(int(np.ceil(low / step)) * step, int(high) + 1, step))
+    return {
+        **_words(computed, axis, least),
+        'columns': _columns(computed, axis, least, low, high),
+        'ranges': {'x': axis.ends, 'y': [low, high]},
+        'labels': {'x': axis.label, 'y': 'response (dB)'},
+        'ticks': {'y': {'at': [float(value) for value in at], 'text': [significant(float(value), 2) for value in at]}},
+    }
+
+
+def _columns(computed, axis, least, low, high):
+    speeds = _sampled(computed.response.response, axis.limits)
+    level = computed.response.response.decibels(speeds)
+    blind = gaps(computed.response.clear_speeds, 1, axis.limits)
+    left, right = axis.ends
+    count = blind.start.size
+    return {
+        'response': {'x': axis.shown(speeds), 'y': np.maximum(level, low - 10.0)},
+        'threshold': {'x0': np.array([left]), 'x1': np.array([right]), 'y': np.array([least])},
+        'below': {
+            'y': np.full(count, low + _BAR_DB / 2),
+            'left': axis.shown(blind.start),
+            'right': axis.shown(blind.stop),
+            'height': np.full(count, _BAR_DB),
+        },
+        **_marked(computed, axis, least, low, high),
+    }
+
+
+def _sampled(response, limits):
+    """Return speeds close enough together for the curve, and among them those where it is zero or repeats."""
+    steps = (limits[1] - limits[0]) / response.step_m_s
+    return np.linspace(*limits, int(np.clip(_PER_STEP * steps, _FEWEST, _MOST)) + 1)
+
+
+def _marked(computed, axis, least, low, high):
+    """Return the marked speeds inside the axis, with their names beside the line that leaves them room."""
+    found = computed.response
+    repeat = 'true first blind speed' if found.is_blind else 'response repeats'
+    marks = [(found.first_below_m_s, f'first below {trimmed(least)} dB'), (found.true_first_blind_m_s, repeat)]
+    inside = [(speed, name) for speed, name in marks if speed is not None and axis.limits[0] < speed < axis.limits[1]]
+    x = np.array([float(axis.shown(speed)) for speed, _ in inside])
+    # Names stand at the top, one under the other, on the side of the line with more room.
+    rows = high - 0.02 * (high - low) - 0.075 * (high - low) * np.arange(len(inside))
+    right_half = x > sum(axis.ends) / 2
+    return {
+        'speeds': {'x': x, 'y0': np.full(x.size, low), 'y1': np.full(x.size, high)},
+        'names': names_at(
+            np.append(x, axis.ends[1]),
+            np.append(rows, least),
+            [*(f'{name}, {axis.text(speed)}' for speed, name in inside), f'blind below {trimmed(least)} dB'],
+            ['top_right' if right else 'top_left' for right in [*right_half.tolist(), True]],
+            np.append(np.where(right_half, -3.0, 3.0), 0.0),
+            np.append(np.zeros(x.size), 2.0),
+        ),
+    }
+
+
+def _words(computed, axis, least):
+    found, limit = computed.response, f'{trimmed(least)} dB'
+    sentences = [_first_fall(found, axis, limit), _repeat(found, axis), *_deepest(found, axis)]
+    share = f'{percent(found.share_above)} of the speeds, {axis.span()}, stand at or above {limit}.'
+    return {
+        'caption': ' '.join([*sentences, share]),
+        'short': sentences[0],
+        'summary': f'Response of the stagger in decibels over the radial speed, {axis.span()}. '
+        + ' '.join([*sentences, share]),
+        'table': _table(computed, axis),
+    }
+
+
+def _first_fall(found, axis, limit):
+    if not np.isfinite(found.notch_m_s):
+        return f'The response never reaches {limit}.'
+    if found.first_below_m_s is None:
+        return f'Outside the notch around zero the response never falls below {limit}.'
+    return (
+        f'The response first falls below {limit} at {axis.text(found.first_below_m_s)}, '
+        f'beyond the notch around zero, {axis.text(found.notch_m_s)} wide to either side.'
+    )
+
+
+def _repeat(found, axis):
+    what = 'The true first blind speed is' if found.is_blind else 'The response repeats at'
+    ratio = significant(found.ratio_to_mean)
+    return f'{what} {axis.text(found.true_first_blind_m_s)}, {ratio} times that of the mean PRI.'
+
+
+def _deepest(found, axis):
+    if found.deepest_db is None:
+        return []
+    return [f'The deepest dip is {with_unit(found.deepest_db, "dB")} at {axis.text(found.deepest_at_m_s)}.']
+
+
+def _table(computed, axis):
+    """Return the speeds at which the response is too low."""
+    blind = gaps(computed.response.clear_speeds, 1, axis.limits)
+    pairs = zip(axis.shown(blind.start).tolist(), axis.shown(blind.stop).tolist(), strict=True)
+    rows = [[significant(start, 4), significant(stop, 4)] for start, stop in pairs]
+    return {'head': [f'Response too low from ({axis.unit})', f'to ({axis.unit})'], 'rows': rows}

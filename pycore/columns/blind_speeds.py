@@ -1,0 +1,141 @@
+"""Figure: the speeds at which each PRF is blind, or how a stagger answers at each speed.
+
+Sources: for dwells ``lanes``, ``notches`` (of each PRF), ``unseen`` (clear on fewer
+than M); for a stagger ``response``, ``threshold``, ``below`` (where the response is
+too low), ``speeds`` (marked speeds) and their names. Those of the other kind are empty.
+"""
+
+import numpy as np
+
+from pycore.columns import answering
+from pycore.columns.axes import interval_name, speed_axis
+from pycore.columns.blind_parts import avoidable, gaps, zones
+from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
+from pycore.columns.looks import looks
+from pycore.columns.zone_sentences import zones_sentence
+from pycore.wording import listed, percent, significant
+
+NAME, TITLE = 'blind-speeds', 'Blind speeds'
+
+_NO_BARS = {'y': np.zeros(0), 'left': np.zeros(0), 'right': np.zeros(0)}
+
+
+def picture(computed, units, size=None):
+    """Return the figure of blind speeds.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [SI]
+    units : mapping
+        Units that the reader prefers. [unitless]
+    size : mapping or None
+        Width of the plot, for the curve of a stagger. [px]
+
+    Returns
+    -------
+    picture : dict
+        Columns, ranges, labels, ticks and words.
+    """
+    axis = speed_axis(computed.plan.speed_m_s, units)
+    if not computed.is_stagger:
+        return _of_dwells(computed, axis, units)
+    answer = answering.picture(computed, axis)
+    answer['columns'] |= {'lanes': _NO_BARS, 'notches': _NO_BARS, 'unseen': _NO_BARS}
+    return {'title': TITLE, **answer, 'units': {'x': axis.unit}}
+
+
+def _of_dwells(computed, axis, units):
+    plan = computed.plan
+    names = [interval_name(pri, units) for pri in plan.pri_s.tolist()]
+    notches = gaps(computed.prf_speeds, plan.n, plan.speed_m_s)
+    unseen = zones(computed.speed_sweep, plan.n, plan.m)
+    counted = f'{plan.m} of {plan.n}' if plan.n > 1 else None
+    return {
+        'title': TITLE,
+        **_words(computed, axis, names, notches, unseen),
+        'columns': {**_lanes(plan, axis, notches, unseen), **answering.nothing()},
+        'ranges': {'x': axis.ends, 'y': lane_range(plan.n, plan.n > 1)},
+        'labels': {'x': axis.label, 'y': ''},
+        'units': {'x': axis.unit},
+        'ticks': {'y': lane_ticks(names, counted)},
+    }
+
+
+def _lanes(plan, axis, notches, unseen):
+    middle, top = middles(plan.n)
+    every, bars = (np.append(middle, top), unseen) if plan.n > 1 else (middle, unseen[:0])
+    return {
+        'lanes': lane_bars(every, axis),
+        'notches': lane_bars(middle, axis, notches.prf, notches.start, notches.stop),
+        'unseen': lane_bars(np.array([top]), axis, np.zeros(len(bars), dtype=int), bars[:, 0], bars[:, 1]),
+    }
+
+
+def _words(computed, axis, names, notches, unseen):
+    said = looks(computed.looks, computed.m, 'blind')
+    found, floor = avoidable(computed.sight, 1)
+    outside = 'outside the notch around zero' if len(floor) else ''
+    first = zones_sentence(found, axis, 'speed', said, _only_around_zero(computed, notches), outside)
+    return {
+        'caption': f'{first} {_first_blind_speeds(computed, axis)}',
+        'short': first,
+        'summary': _summary(computed, axis, names, unseen),
+        'table': _table(computed, axis, names, notches),
+    }
+
+
+def _only_around_zero(computed, notches):
+    """Return whether no PRF is blind but in its notch around zero."""
+    notch = computed.plan.notch_m_s[notches.prf]
+    return bool(((notches.start >= -notch - 1e-9) & (notches.stop <= notch + 1e-9)).all())
+
+
+def _first_blind_speeds(computed, axis):
+    """Say where the single PRFs have their first blind speeds, and what weather practice would call it."""
+    speeds, first = np.unique(axis.shown(computed.blind_speed_m_s), return_index=True)
+    if speeds.size == 1:
+        lead = 'The first blind speed is' if computed.plan.n == 1 else 'Each PRF has its first blind speed at'
+        shown = significant(speeds[0])
+    elif speeds.size <= 3:
+        lead, shown = (
+            'The PRFs have their first blind speeds at',
+            listed(significant(speed) for speed in speeds[first.argsort()]),
+        )
+    else:
+        lead, shown = (
+            'The PRFs have their first blind speeds',
+            f'from {significant(speeds[0])} to {significant(speeds[-1])}',
+        )
+    return f'{lead} {shown} {axis.unit}.'
+
+
+def _summary(computed, axis, names, unseen):
+    """Describe the whole figure for someone who does not see it."""
+    lost = ', '.join(
+        f'{name} {percent(float(share))}' for name, share in zip(names, computed.notched_shares, strict=True)
+    )
+    said = '; '.join(axis.interval(*zone) for zone in unseen[:12])
+    more = f'; and {len(unseen) - 12} more' if len(unseen) > 12 else ''
+    counted = f'Clear on too few: {said}{more}.' if said else 'No speed is clear on too few.'
+    return (
+        f'One lane for each PRF along the radial speed, {axis.span()}, dark in the Doppler notch and its repeats; '
+        f'on top the lane that counts. Blind part of the speeds: {lost}. {counted}'
+    )
+
+
+def _table(computed, axis, names, notches):
+    """Return one row for each PRF: first blind speed, Nyquist speed, what it loses, and its blind speeds."""
+    rows = []
+    for prf, name in enumerate(names):
+        start, stop = notches.of(prf)
+        found = [axis.interval(*zone) for zone in zip(start[:6].tolist(), stop[:6].tolist(), strict=True)]
+        more = [f'{start.size - 6} more'] if start.size > 6 else []
+        blind = float(axis.shown(computed.blind_speed_m_s[prf]))
+        lost = percent(float(computed.notched_shares[prf]))
+        rows.append([name, significant(blind), f'± {significant(blind / 2)}', lost, '; '.join(found + more) or 'none'])
+    unit = axis.unit
+    return {
+        'head': ['PRF', f'First blind speed ({unit})', f'Nyquist speed ({unit})', 'Blind', 'Blind speeds'],
+        'rows': rows,
+    }

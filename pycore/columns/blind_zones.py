@@ -1,0 +1,163 @@
+"""Figure: the number of clear PRFs over range and radial speed.
+
+Sources: ``map`` (classes, see :mod:`pycore.columns.classes`), ``regions`` and
+``region-names`` (must-see), ``holes`` (their numbers). The colours of the classes
+belong to the page, so that only its palette changes with its scheme.
+"""
+
+import numpy as np
+
+from pycore import zones
+from pycore.columns.axes import range_axis, speed_axis
+from pycore.columns.classes import classes
+from pycore.columns.named import names_at
+from pycore.columns.zone_words import words
+
+NAME, TITLE = 'blind-zones', 'Blind zones'
+
+SIZE = {'width': 560, 'height': 320}
+"""Cells of the map where the page has not said how large its plot is. [px]"""
+
+MOST_NUMBERED = 9
+"""Holes that carry their number in the figure. [unitless]"""
+
+_LARGEST = 1400
+_AT_THE_END = 0.94
+_DISC = 17
+_WAYS = ((12.0, -12.0), (-12.0, -12.0), (12.0, 12.0), (-12.0, 12.0))
+
+
+def picture(computed, units, size=None):
+    """Return the figure of blind zones.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [SI]
+    units : mapping
+        Units that the reader prefers. [unitless]
+    size : mapping or None
+        Width and height of the plot. [px]
+
+    Returns
+    -------
+    picture : dict
+        Columns, ranges, labels, ticks and words.
+    """
+    x, y = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)
+    count, blind = _counted(computed, size or SIZE)
+    return {
+        'title': TITLE,
+        **words(computed, x, y),
+        'columns': {
+            'map': {'image': classes(count, computed.looks, computed.m), **_frame(x, y)},
+            **_regions(computed, x, y),
+            'holes': _numbers(computed, x, y, blind),
+        },
+        'ranges': {'x': x.ends, 'y': y.ends},
+        'labels': {'x': x.label, 'y': y.label},
+        'units': {'x': x.unit, 'y': y.unit},
+        'ticks': {},
+    }
+
+
+def _frame(x, y):
+    (left, right), (bottom, top) = x.ends, y.ends
+    return {
+        name: np.array([value])
+        for name, value in zip(('x', 'y', 'dw', 'dh'), (left, bottom, right - left, top - bottom), strict=True)
+    }
+
+
+def _counted(computed, size):
+    """Return the number of clear PRFs in every cell, and which cells another plan could see and this one does not."""
+    width, height = (int(np.clip(size[side], 16, _LARGEST)) for side in ('width', 'height'))
+    seen = computed.sight
+    at_range, at_speed = zones.centres(seen.range_m, width), zones.centres(seen.speed_m_s, height)
+    count = zones.count_map(seen.ranges, seen.speeds, at_range, at_speed)
+    could = [
+        zones.clear_marks(spans, at) for spans, at in ((seen.floor_ranges, at_range), (seen.floor_speeds, at_speed))
+    ]
+    return count, _Blind(count < seen.m, *could, seen.m)
+
+
+class _Blind:
+    """Cells of a map that are blind and outside the floor, looked at piece by piece."""
+
+    def __init__(self, blind, on_range, on_speed, m):
+        self.blind, self.on_range, self.on_speed, self.m = blind, on_range, on_speed, m
+
+    def within(self, rows, columns):
+        could = np.bitwise_count(self.on_speed[rows, None] & self.on_range[columns]) >= self.m
+        return self.blind[rows, columns] & could
+
+
+def _regions(computed, x, y):
+    """Return the must-see regions and where their names stand: above each where there is room, else inside its top."""
+    found = computed.must_see
+    left, right, bottom, top = (
+        axis.shown(np.array([getattr(region, key)[end] for region in found], dtype=float))
+        for axis, key, end in ((x, 'range_m', 0), (x, 'range_m', 1), (y, 'speed_m_s', 0), (y, 'speed_m_s', 1))
+    )
+    room = top <= y.ends[0] + 0.9 * (y.ends[1] - y.ends[0])
+    late = left > x.ends[0] + 0.6 * (x.ends[1] - x.ends[0])
+    anchor = [
+        f'{"bottom" if above else "top"}_{"right" if end else "left"}' for above, end in zip(room, late, strict=True)
+    ]
+    text = [region.name or f'region {i + 1}' for i, region in enumerate(found)]
+    offset = np.where(late, -2.0, 2.0), np.where(room, -4.0, 4.0)
+    return {
+        'regions': {'left': left, 'right': right, 'bottom': bottom, 'top': top},
+        'region-names': names_at(np.where(late, right, left), top, text, anchor, *offset),
+    }
+
+
+def _numbers(computed, x, y, blind):
+    """Return where the holes' numbers stand: inside each hole, towards the right end of one that fills the range."""
+    height, width = blind.blind.shape
+    spots = [_spot(hole, x, y, blind) for hole in computed.holes.listed[:MOST_NUMBERED]]
+    at = np.array([(column, row) for column, row, _ in spots]).reshape(-1, 2)
+    beside = _beside(at, [small for *_, small in spots], (width, height))
+    text = [str(i + 1) for i in range(len(spots))]
+    at = _centre(at[:, 0], x.ends, width), _centre(at[:, 1], y.ends, height)
+    return names_at(*at, text, ['center'] * len(spots), *beside.T)
+
+
+def _beside(at, small, size):
+    """Return how far each number is moved: off a hole that it would hide, off those before it, into the map."""
+    moved = np.zeros((len(small), 2))
+    for i in np.flatnonzero(small).tolist():
+        # Offsets count down the screen, cells up.
+        placed = at[:i] + moved[:i] * (1, -1)
+        clear = [
+            way for way in _WAYS if not (np.abs(placed - at[i] - way * np.array((1, -1))).max(axis=1) < _DISC).any()
+        ]
+        moved[i] = clear[0] if clear else _WAYS[0]
+    inside = np.clip(at + moved * (1, -1), _DISC / 1.7, np.array(size) - _DISC / 1.7)
+    return (inside - at) * (1, -1)
+
+
+def _spot(hole, x, y, blind):
+    """Return a cell inside a hole, in its longest row of cells, and whether a number there would hide the hole."""
+    height, width = blind.blind.shape
+    columns, rows = _cells(hole.range_m, x.limits, width), _cells(hole.speed_m_s, y.limits, height)
+    inside = blind.within(rows, columns)
+    if not inside.any():
+        return (columns.start + columns.stop - 1) / 2, (rows.start + rows.stop - 1) / 2, True
+    lengths = inside.sum(axis=1)
+    longest = np.flatnonzero(lengths == lengths.max())
+    row = longest[longest.size // 2]
+    cells = np.flatnonzero(inside[row])
+    far = cells.size > 0.6 * width
+    column = cells[int(cells.size * (_AT_THE_END if far else 0.5))]
+    return column + columns.start, row + rows.start, max(inside.shape) < 1.5 * _DISC
+
+
+def _cells(ends, limits, count):
+    """Return the cells that an interval takes part in."""
+    low, high = ((end - limits[0]) / (limits[1] - limits[0]) * count for end in ends)
+    return slice(max(int(low), 0), min(int(np.ceil(high)), count))
+
+
+def _centre(cell, ends, count):
+    return ends[0] + (ends[1] - ends[0]) * (cell + 0.5) / count

@@ -1,0 +1,56 @@
+"""The classes of the map of blind zones: what each cell is, never which colour it has.
+
+Fewer than M clear PRFs is dark (none: hatched at 45 degrees), at least M is light;
+the blind side of the M-of-N edge is drawn as a line.
+"""
+
+from functools import lru_cache
+
+import numpy as np
+
+NONE, NONE_HATCH, TOO_FEW, TOO_FEW_EDGE, JUST_ENOUGH, MORE, ALL = range(7)
+"""Clear on none; its hatch; on too few; their edge; on exactly M; on more; on all N. [unitless]"""
+
+NAMES = ('none', 'none-hatch', 'too-few', 'too-few-edge', 'just-enough', 'more', 'all')
+"""The classes' names, in the order of their codes. [unitless]"""
+
+PITCH = 7
+"""Distance of the hatch lines along a row. [px]"""
+
+
+@lru_cache
+def _class_of_count(n, m):
+    table = np.full(n + 1, MORE, dtype=np.uint8)
+    table[:m], table[m], table[n], table[0] = TOO_FEW, JUST_ENOUGH, ALL, NONE
+    return table
+
+
+def classes(count, n, m):
+    """Return the class of every cell.
+
+    Parameters
+    ----------
+    count : uint8 array, shape (V, R)
+        Number of clear PRFs. [unitless]
+    n : int
+        Number of PRFs. [unitless]
+    m : int
+        Number that must be clear. [unitless]
+
+    Returns
+    -------
+    code : uint8 array, shape (V, R)
+        Index into ``NAMES``.
+    """
+    code = _class_of_count(n, m)[count]
+    blind = count < m
+    inner = np.ones_like(blind)
+    inner[1:] &= blind[:-1]
+    inner[:-1] &= blind[1:]
+    inner[:, 1:] &= blind[:, :-1]
+    inner[:, :-1] &= blind[:, 1:]
+    row, column = np.arange(count.shape[0]) % PITCH, np.arange(count.shape[1]) % PITCH
+    code[(code == NONE) & inner & (row[:, None] == column)] = NONE_HATCH
+    if m > 1:
+        code[(code == TOO_FEW) & ~inner] = TOO_FEW_EDGE
+    return code

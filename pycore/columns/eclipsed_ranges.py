@@ -1,0 +1,168 @@
+"""Figure: which ranges each PRF receives, how much of the echo, and which of them enough PRFs receive.
+
+Sources: ``lanes`` (a bar along each lane), ``eclipsed`` (on each PRF), ``unseen``
+(on fewer than M), ``received`` (the received share as one line with gaps).
+"""
+
+import numpy as np
+
+from pycore.columns.axes import interval_name, range_axis
+from pycore.columns.blind_parts import avoidable, gaps, zones
+from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
+from pycore.columns.looks import cycle_looks, looks
+from pycore.columns.received import received_corners
+from pycore.columns.zone_sentences import zones_sentence
+from pycore.wording import count_word, percent, significant
+
+NAME, TITLE = 'eclipsed-ranges', 'Eclipsed ranges'
+
+MOST_WITH_SHARE = 6
+"""PRFs up to which the received share is drawn as well: with more, its lanes would be too low to read. [unitless]"""
+
+_SHARE_FROM, _SHARE_HIGH = -0.44, 0.2
+
+
+def picture(computed, units, size=None):
+    """Return the figure of eclipsed ranges.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [SI]
+    units : mapping
+        Units that the reader prefers. [unitless]
+    size : mapping or None
+        Not used: nothing here depends on the size. [px]
+
+    Returns
+    -------
+    picture : dict
+        Columns, ranges, labels, ticks and words.
+    """
+    plan, axis = computed.plan, range_axis(computed.plan.range_m, units)
+    names = [interval_name(pri, units) for pri in plan.pri_s.tolist()]
+    eclipsed = gaps(computed.prf_ranges, plan.n, plan.range_m)
+    unseen = zones(computed.range_sweep, computed.looks, computed.m)
+    counted = None if plan.n == 1 else 'all intervals' if computed.is_stagger else f'{plan.m} of {plan.n}'
+    return {
+        'title': TITLE,
+        **_words(computed, axis, names, eclipsed, unseen),
+        'columns': _columns(computed, axis, eclipsed, unseen, counted is not None),
+        'ranges': {'x': axis.ends, 'y': lane_range(plan.n, counted is not None)},
+        'labels': {'x': axis.label, 'y': ''},
+        'units': {'x': axis.unit},
+        'ticks': {'y': lane_ticks(names, counted)},
+    }
+
+
+def _columns(computed, axis, eclipsed, unseen, with_top):
+    n = computed.plan.n
+    middle, top = middles(n)
+    every = np.append(middle, top) if with_top else middle
+    bars = unseen if with_top else unseen[:0]
+    return {
+        'lanes': lane_bars(every, axis),
+        'eclipsed': lane_bars(middle, axis, eclipsed.prf, eclipsed.start, eclipsed.stop),
+        'unseen': lane_bars(np.array([top]), axis, np.zeros(len(bars), dtype=int), bars[:, 0], bars[:, 1]),
+        'received': _received(computed.plan, axis, middle),
+    }
+
+
+def _received(plan, axis, middle):
+    """Return the received share of all PRFs as one line under their bars, parted by nan."""
+    if plan.n > MOST_WITH_SHARE:
+        return {'x': np.zeros(0), 'y': np.zeros(0)}
+    parts = received_corners(plan)
+    x = [axis.shown(range_m)[_down_to_the_base(range_m)] for range_m, _ in parts]
+    y = [
+        at + _SHARE_FROM + _SHARE_HIGH * np.concatenate(([0.0], share, [0.0, np.nan]))
+        for at, (_, share) in zip(middle, parts, strict=True)
+    ]
+    return {'x': np.concatenate(x), 'y': np.concatenate(y)}
+
+
+def _down_to_the_base(corners):
+    """Return indices that repeat the first and the last corner, and the last once more for the gap after it."""
+    return np.concatenate(([0], np.arange(corners.size), [-1, -1]))
+
+
+def _words(computed, axis, names, eclipsed, unseen):
+    said = cycle_looks() if computed.is_stagger else looks(computed.looks, computed.m, 'eclipsed')
+    found, floor = avoidable(computed.sight, 0)
+    found, where = _within_the_cycle(computed, axis, found, _beyond(floor, axis))
+    first = zones_sentence(found, axis, 'range', said, not eclipsed.start.size, where)
+    sentences = [first]
+    if computed.is_stagger:
+        sentences += _beyond_the_cycle(computed, axis)
+    elif computed.plan.n > 1:
+        sentences += _worst(computed, names)
+    if computed.plan.n <= MOST_WITH_SHARE:
+        sentences.append('Under each lane: the received share of the echo.')
+    return {
+        'caption': ' '.join(sentences),
+        'short': first,
+        'summary': _summary(computed, axis, names, eclipsed, unseen),
+        'table': _table(computed, axis, names, eclipsed),
+    }
+
+
+def _beyond(floor, axis):
+    """Return the clause for the ranges before the first opening, where the coverage begins within them."""
+    return (
+        f'from the first opening at {axis.text(floor[0, 1])} on' if len(floor) and floor[0, 1] < axis.limits[1] else ''
+    )
+
+
+def _worst(computed, names):
+    """Say which PRF loses most, where any loses something."""
+    shares = computed.eclipsed_shares
+    if shares.max() <= 1e-12:
+        return []
+    if np.ptp(shares) <= 1e-9:
+        return [f'Each PRF loses {percent(float(shares[0]))} of the ranges.']
+    worst = int(shares.argmax())
+    return [f'The most, {percent(float(shares[worst]))} of the ranges, is lost on {names[worst]}.']
+
+
+def _within_the_cycle(computed, axis, found, where):
+    """Leave out the zone that reaches beyond the shortest interval of a stagger: it has a sentence of its own."""
+    shortest = float(computed.unambiguous_range_m.min())
+    if not computed.is_stagger or shortest >= axis.limits[1]:
+        return found, where
+    found = found[found[:, 1] < shortest]
+    return found, f'{where} and up to {axis.text(shortest)}' if where else f'up to {axis.text(shortest)}'
+
+
+def _beyond_the_cycle(computed, axis):
+    """Say from which range on a stagger sees nothing, where the coverage reaches so far."""
+    shortest = float(computed.unambiguous_range_m.min())
+    if shortest >= axis.limits[1]:
+        return []
+    return [f'From {axis.text(shortest)} on an echo changes its gate from pulse to pulse and is not seen.']
+
+
+def _summary(computed, axis, names, eclipsed, unseen):
+    """Describe the whole figure for someone who does not see it."""
+    lost = ', '.join(
+        f'{name} {percent(float(share))}' for name, share in zip(names, computed.eclipsed_shares, strict=True)
+    )
+    zones_said = '; '.join(axis.interval(*zone) for zone in unseen[:12])
+    more = f'; and {count_word(len(unseen) - 12)} more' if len(unseen) > 12 else ''
+    counted = f'Clear on too few: {zones_said}{more}.' if zones_said else 'No range is clear on too few.'
+    return (
+        f'One lane for each PRF along the range, {axis.span()}, dark where an echo is eclipsed, with the received '
+        f'share under it; on top the lane that counts. Eclipsed part of the ranges: {lost}. {counted}'
+    )
+
+
+def _table(computed, axis, names, eclipsed):
+    """Return one row for each PRF: its unambiguous range, what it loses, and its zones."""
+    rows = []
+    for prf, name in enumerate(names):
+        start, stop = eclipsed.of(prf)
+        found = [axis.interval(*zone) for zone in zip(start[:6].tolist(), stop[:6].tolist(), strict=True)]
+        more = [f'{start.size - 6} more'] if start.size > 6 else []
+        reach = significant(float(axis.shown(computed.unambiguous_range_m[prf])))
+        lost = percent(float(computed.eclipsed_shares[prf]))
+        rows.append([name, reach, lost, '; '.join(found + more) or 'none'])
+    return {'head': ['PRF', f'Unambiguous range ({axis.unit})', 'Eclipsed', 'Eclipsed ranges'], 'rows': rows}

@@ -1,0 +1,143 @@
+"""Figure: what a PRF gives in range against what it gives in speed.
+
+On logarithmic axes all PRFs of one carrier lie on a line of slope -1, those of a
+band in a strip. Sources: ``edges`` (of the bands), ``band`` (the strips that the
+plan's carriers lie in), ``band-names``, ``lines`` (one for each carrier), ``asked``
+(what one PRF would have to reach) and ``asked-name``, ``prfs`` and ``prf-names``.
+"""
+
+import numpy as np
+
+from pycore import ambiguity, bands
+from pycore.columns.axes import decade_ticks, interval_name, range_axis, speed_axis
+from pycore.columns.named import names_at
+from pycore.columns.trade_words import words
+
+NAME, TITLE = 'trade-line', 'Trade line'
+
+_ROOM = 2.2
+"""Factor between the outermost mark and the end of the axis. [unitless]"""
+
+
+def picture(computed, units, size=None):
+    """Return the figure of the trade between unambiguous range and first blind speed.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [SI]
+    units : mapping
+        Units that the reader prefers. [unitless]
+    size : mapping or None
+        Not used: nothing here depends on the size. [px]
+
+    Returns
+    -------
+    picture : dict
+        Columns, ranges, labels, ticks and words.
+    """
+    x, y = _axes(computed, units)
+    names = [interval_name(pri, units) for pri in computed.plan.pri_s.tolist()]
+    ticks = {
+        side: dict(zip(('at', 'text'), decade_ticks(*axis.ends), strict=True)) for side, axis in (('x', x), ('y', y))
+    }
+    return {
+        'title': TITLE,
+        **words(computed, x, y, names),
+        'columns': {**_bands(computed.plan, x, y), **_asked(computed.plan, x, y), **_prfs(computed, x, y, names)},
+        'ranges': {'x': x.ends, 'y': y.ends},
+        'labels': {'x': x.label, 'y': f'{y.label}, twice the Nyquist speed'},
+        'units': {'x': x.unit, 'y': y.unit},
+        'ticks': ticks,
+    }
+
+
+def _axes(computed, units):
+    """Return axes with room around the plan's PRFs and the corner of what is asked for."""
+    low, high = computed.plan.speed_m_s
+    ranges = np.append(computed.unambiguous_range_m, computed.plan.range_m[1])
+    speeds = np.append(computed.blind_speed_m_s, high - low)
+    x, y = ((float(values.min()) / _ROOM, float(values.max()) * _ROOM) for values in (ranges, speeds))
+    return range_axis(x, units, 'unambiguous range'), speed_axis(y, units, 'first blind speed')
+
+
+def _product(frequency_hz, x, y):
+    """Return range times speed of one frequency, in the shown units."""
+    return ambiguity.trade_product(ambiguity.wavelength(np.asarray(frequency_hz))) / (x.si * y.si)
+
+
+def _line(product, x):
+    """Return the ends of trade lines that cross the whole figure."""
+    left, right = x.ends
+    return {
+        'x0': np.full(product.size, left),
+        'y0': product / left,
+        'x1': np.full(product.size, right),
+        'y1': product / right,
+    }
+
+
+def _bands(plan, x, y):
+    """Return the bands' edges and names, the strips of the plan's own bands, and its carriers' lines."""
+    edges = sorted({edge for band in bands.BANDS for edge in (band.low_hz, band.high_hz)})
+    own = [band for band in bands.BANDS if any(band.low_hz <= carrier <= band.high_hz for carrier in plan.carrier_hz)]
+    left, right = x.ends
+    outer, inner = (_product([getattr(band, end) for band in own], x, y) for end in ('low_hz', 'high_hz'))
+    strips = np.column_stack((inner / left, inner / right, outer / right, outer / left))
+    return {
+        'edges': _line(_product(edges, x, y), x),
+        'band': {'xs': [[left, right, right, left] for _ in own], 'ys': strips.tolist()},
+        'band-names': _band_names(plan, x, y),
+        'lines': _line(_product(np.unique(plan.carrier_hz), x, y), x),
+    }
+
+
+def _free_middle(band, carrier_hz):
+    """Return the middle of the widest part of a band between its edges and the plan's carriers, as drawn."""
+    inside = carrier_hz[(carrier_hz > band.low_hz) & (carrier_hz < band.high_hz)]
+    cuts = np.log(np.sort(np.concatenate(([band.low_hz, band.high_hz], inside))))
+    widest = np.diff(cuts).argmax()
+    return float(np.exp(cuts[widest : widest + 2].mean()))
+
+
+def _band_names(plan, x, y):
+    """Return the bands' letters where the middles of their strips enter the figure, at its left side or its top."""
+    (left, right), (bottom, top) = x.ends, y.ends
+    product = _product([_free_middle(band, plan.carrier_hz) for band in bands.BANDS], x, y)
+    from_left = product / left < top
+    at_x = np.where(from_left, left, product / top)
+    at_y = np.where(from_left, product / left, top)
+    shown = (at_x < right / 1.1) & (at_y > bottom * 1.1)
+    anchor = ['center_left' if side else 'top_center' for side in from_left[shown].tolist()]
+    text = [band.name for band, here in zip(bands.BANDS, shown.tolist(), strict=True) if here]
+    beside = from_left[shown]
+    return names_at(at_x[shown], at_y[shown], text, anchor, np.where(beside, 4.0, 0.0), np.where(beside, 0.0, 2.0))
+
+
+def _asked(plan, x, y):
+    """Return the region in which one PRF would be unambiguous over the whole coverage, and where its name stands."""
+    corner = x.shown(plan.range_m[1]), y.shown(plan.speed_m_s[1] - plan.speed_m_s[0])
+    names = ('left', 'bottom', 'right', 'top')
+    box = {name: np.array([value]) for name, value in zip(names, (*corner, x.ends[1], y.ends[1]), strict=True)}
+    return {
+        'asked': box,
+        'asked-name': names_at(box['right'], box['bottom'], ['what is asked for'], ['bottom_right'], -3.0, -3.0),
+    }
+
+
+def _prfs(computed, x, y, names):
+    """Return the PRFs' marks and the names of the shortest and the longest interval, on either side of the line."""
+    reach, speed = x.shown(computed.unambiguous_range_m), y.shown(computed.blind_speed_m_s)
+    short, long = int(reach.argmin()), int(reach.argmax())
+    named = [short, long] if reach[long] > reach[short] else [long]
+    return {
+        'prfs': {'x': reach, 'y': speed},
+        'prf-names': names_at(
+            reach[named],
+            speed[named],
+            [names[i] for i in named],
+            ['top_right', 'bottom_left'][-len(named) :],
+            [-4.0, 4.0][-len(named) :],
+            [3.0, -3.0][-len(named) :],
+        ),
+    }

@@ -1,0 +1,98 @@
+"""The words of the trade line: how far one PRF falls short, and what the plan's PRFs give."""
+
+import numpy as np
+
+from pycore import bands
+from pycore.constants import SPEED_OF_LIGHT_M_S
+from pycore.wording import capitalised, count_word, listed, significant, trimmed
+
+
+def words(computed, x, y, names):
+    """Return caption, short caption, summary and table of the trade line.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [SI]
+    x, y : Axis
+        Of unambiguous range and of first blind speed. [m, m/s]
+    names : sequence of str
+        The PRFs' names. [unitless]
+
+    Returns
+    -------
+    words : dict
+        caption, short, summary, table.
+    """
+    first, second = _shortfall(computed, x, y), _given(computed, x, y)
+    return {
+        'caption': f'{first} {second}',
+        'short': first,
+        'summary': f'Unambiguous range against first blind speed on logarithmic axes. {first} {second}',
+        'table': _table(computed, x, y, names),
+    }
+
+
+def _carrier(plan):
+    """Say the carrier, or the lowest of several, and its band."""
+    lowest = float(plan.carrier_hz.min())
+    name = bands.band(lowest)
+    shown = f'{trimmed(lowest / 1e9)} GHz'
+    where = f'at {shown} ({name} band)' if name else f'at {shown}'
+    return where if np.ptp(plan.carrier_hz) == 0 else f'even {where}'
+
+
+def _shortfall(computed, x, y):
+    """Say whether one PRF can be unambiguous over the coverage, and at which PRFs or how far it falls short."""
+    plan, times = computed.plan, computed.shortfall
+    span = plan.speed_m_s[1] - plan.speed_m_s[0]
+    asked = f'{_typed(plan.range_m[1], x)} and over {_typed(span, y)}'
+    if times > 1:
+        short = f'it falls short {significant(times)} times over'
+        return capitalised(f'{_carrier(plan)} no single PRF is unambiguous out to {asked}: {short}.')
+    low = 2 * span / float(plan.wavelength_m.max())
+    high = SPEED_OF_LIGHT_M_S / 2 / plan.range_m[1]
+    prf = f'a single PRF from {significant(low)} to {significant(high)} Hz'
+    return capitalised(f'{_carrier(plan)} {prf} is unambiguous out to {asked}.')
+
+
+def _typed(value, axis):
+    """Return a wanted value as it was typed."""
+    return f'{trimmed(axis.shown(value))} {axis.unit}'
+
+
+def _given(computed, x, y):
+    """Say what the PRFs give: each of up to three, the span of more."""
+    reach, speed = x.shown(computed.unambiguous_range_m), y.shown(computed.blind_speed_m_s)
+    nyquist = speed / 2
+    _, first = np.unique(np.column_stack((reach, speed)), axis=0, return_index=True)
+    order = np.sort(first)
+    if order.size > 3:
+        ends = [f'{significant(values.min())} to {significant(values.max())}' for values in (reach, speed)]
+        ends.append(f'± {significant(nyquist.min())} to ± {significant(nyquist.max())}')
+    else:
+        shown = [list(dict.fromkeys(map(significant, values[order].tolist()))) for values in (reach, speed, nyquist)]
+        ends = [listed(shown[0]), listed(shown[1]), listed(f'± {text}' for text in shown[2])]
+    count = computed.plan.n
+    who = "The plan's " + ('one PRF gives' if count == 1 else f'{count_word(count)} PRFs give')
+    blind = f'{"a first blind speed" if count == 1 else "first blind speeds"} of {ends[1]} {y.unit}'
+    return f'{who} {ends[0]} {x.unit} and {blind} (Nyquist {ends[2]} {y.unit}).'
+
+
+def _table(computed, x, y, names):
+    """Return one row for each PRF: what it gives in range and speed, and its regime."""
+    triples = zip(
+        names, x.shown(computed.unambiguous_range_m), y.shown(computed.blind_speed_m_s), computed.regimes, strict=True
+    )
+    rows = [
+        [name, significant(reach), significant(speed), f'± {significant(speed / 2)}', regime]
+        for name, reach, speed, regime in triples
+    ]
+    head = [
+        'PRF',
+        f'Unambiguous range ({x.unit})',
+        f'First blind speed ({y.unit})',
+        f'Nyquist speed ({y.unit})',
+        'Regime',
+    ]
+    return {'head': head, 'rows': rows}

@@ -1,0 +1,35 @@
+"""Lanes of bars along one axis: clear is a pale lane, blind a bar on it, blind for the whole set ink with hatching."""
+
+from bokeh.models import HBar
+
+from webapp.figures.style import draw, source
+
+HEIGHT = 0.62
+"""Height of a bar. [lanes]"""
+
+
+def lanes(made, name, picture, blind, height=HEIGHT):
+    """Draw the lanes of a figure.
+
+    Parameters
+    ----------
+    made : bokeh figure
+        The figure. [unitless]
+    name : str
+        Its name. [unitless]
+    picture : dict
+        Its columns. [shown units]
+    blind : str
+        The source of the bars of single PRFs. [unitless]
+    height : float
+        Height of a bar. [lanes]
+    """
+    ends = {'y': 'y', 'left': 'left', 'right': 'right', 'height': height, 'line_alpha': 0}
+    draw(made, source(name, picture, 'lanes'), HBar(**ends), fill_color='lane')
+    # A line around a bar keeps the narrowest ones in sight.
+    bar = HBar(**{**ends, 'line_alpha': 1}, line_width=0.75)
+    draw(made, source(name, picture, blind), bar, fill_color='bar', line_color='bar')
+    hatched = HBar(
+        **{**ends, 'line_alpha': 1}, line_width=0.75, hatch_pattern='right_diagonal_line', hatch_scale=7, hatch_weight=1
+    )
+    draw(made, source(name, picture, 'unseen'), hatched, fill_color='ink', line_color='ink', hatch_color='hatch')

@@ -1,0 +1,38 @@
+"""Trade line: bands as strips, carriers as lines, PRFs as marks on them, what is asked for as a corner."""
+
+from bokeh.models import Patches, Quad, Scatter, Segment
+
+from pycore.columns import trade_line
+from webapp.figures.names import write
+from webapp.figures.style import draw, plot, source
+
+NAME = trade_line.NAME
+
+_ENDS = {end: end for end in ('x0', 'y0', 'x1', 'y1')}
+
+
+def build(picture):
+    """Return the figure.
+
+    Parameters
+    ----------
+    picture : dict
+        What the core gives. [shown units]
+
+    Returns
+    -------
+    figure : bokeh figure
+        Sources ``edges``, ``band``, ``band-names``, ``lines``, ``asked``, ``asked-name``, ``prfs``, ``prf-names``.
+    """
+    made = plot(NAME, picture, 'log', 'log')
+    draw(made, source(NAME, picture, 'band'), Patches(xs='xs', ys='ys', line_alpha=0), fill_color='band')
+    asked = Quad(left='left', bottom='bottom', right='right', top='top', line_alpha=0)
+    draw(made, source(NAME, picture, 'asked'), asked, fill_color='asked')
+    draw(made, source(NAME, picture, 'edges'), Segment(**_ENDS, line_width=1), line_color='hair')
+    draw(made, source(NAME, picture, 'lines'), Segment(**_ENDS, line_width=2.25), line_color='line')
+    write(made, NAME, picture, 'band-names', ground=0.0)
+    write(made, NAME, picture, 'asked-name', role='line', ground=0.0)
+    write(made, NAME, picture, 'prf-names', role='strong-text', ground=0.6)
+    mark = Scatter(x='x', y='y', size=10, line_width=1.5)
+    draw(made, source(NAME, picture, 'prfs'), mark, fill_color='ink', line_color='paper')
+    return made
