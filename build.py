@@ -18,7 +18,7 @@ import shutil  # noqa: E402
 import subprocess  # noqa: E402
 from pathlib import Path  # noqa: E402
 
-from webapp.building import browser, bytecode, environment, join, licences, opening, page, payload, runtime, serve  # noqa: E402
+from webapp.building import browser, bytecode, environment, join, licences, opening, page, payload, runtime, serve  # noqa: E402, E501
 from webapp.building.places import DIST, ROOT, WEBAPP  # noqa: E402
 from webapp.building.pyodide import worker_module  # noqa: E402
 from webapp.building.stop import Stop, no_space  # noqa: E402

@@ -10,7 +10,8 @@ const SWITCHED_OFF = 'WebAssembly is switched off in this browser, and the engin
 
 export function startEngine({ payload = partOfPage, onStage = () => {}, onFail = () => {} } = {}) {
   const engine = { worker: null, failure: null, count: 0, waiting: new Map() };
-  const ready = new Promise((resolve) => { engine.settleReady = resolve; });
+  const ready = new Promise((resolve, reject) => Object.assign(engine, { isReady: resolve, isBroken: reject }));
+  ready.catch(() => {}); // a failure is told by onFail, whether or not somebody waits
   const watch = watchdog((stage) => fail(`nothing was heard for ${PATIENCE_MS / 1000} s at the step "${stage}"`));
 
   function fail(reason) {
@@ -18,7 +19,7 @@ export function startEngine({ payload = partOfPage, onStage = () => {}, onFail =
     engine.failure = new Error(reason);
     watch.end();
     engine.worker?.terminate();
-    engine.settleReady(engine.failure);
+    engine.isBroken(engine.failure);
     for (const { reject } of engine.waiting.values()) reject(engine.failure);
     onFail(reason);
   }
@@ -33,7 +34,7 @@ export function startEngine({ payload = partOfPage, onStage = () => {}, onFail =
     else if (data.stage) stage(data.stage);
     else if (data.ready) {
       watch.end();
-      engine.settleReady(null);
+      engine.isReady();
     } else settle(engine, data);
   }
 
@@ -62,7 +63,7 @@ export function startEngine({ payload = partOfPage, onStage = () => {}, onFail =
   }
 
   boot().catch((error) => fail(causeOf(error)));
-  return { ask, newest: newestOf(ask), ready }; // ready resolves to null, or to the failure
+  return { ask, newest: newestOf(ask), ready }; // ready rejects where the start fails
 }
 
 // One request runs and only the newest waits: what it replaces is answered with null.

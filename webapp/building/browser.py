@@ -7,8 +7,10 @@ from webapp.building.environment import debian_packages
 from webapp.building.stop import Stop
 
 NAMES = ('chromium', 'chromium-browser', 'google-chrome', 'google-chrome-stable')
-MISSING = 'No Chromium was found: install one (on Debian: apt-get install chromium) '
+MISSING = (
+    'No Chromium was found: install one (on Debian: apt-get install chromium) '
     'or name it in the variable CHROMIUM, and try again.'
+)
 
 # A browser of its own for each test, that asks nothing of any network.
 OPTIONS = (

@@ -41,10 +41,10 @@ def opening():
     Returns
     -------
     opening : dict
-        answer, items (one Bokeh document for each figure), keys, clauses, examples, version, checksum.
+        answer, items (one Bokeh document for each figure), their order, keys, grammar, units, examples, version, checksum.
     """
-    from pycore import __version__, api, plan_keys, sentence
-    from pycore.columns import FIGURES
+    from pycore import __version__, api, plan_keys
+    from pycore.columns import FIGURES, order
     from webapp import figures
 
     plans = examples()
@@ -57,11 +57,51 @@ def opening():
     return {
         'answer': answer,
         'items': items,
+        'order': {kind: list(order(kind)) for kind in ('dwells', 'stagger')},
         'keys': plan_keys.table(),
-        'clauses': sentence.CLAUSES,
+        'grammar': grammar(),
+        'units': units(),
         'examples': [{'name': name, **shown(example, api)} for name, example in plans.items()],
         'version': __version__,
         'checksum': content_key(*sorted((ROOT / 'pycore').rglob('*.py'))),
+    }
+
+
+def grammar():
+    """Return what the page needs to say a plan in words before the engine is there.
+
+    Returns
+    -------
+    grammar : dict
+        The core's own templates and lists, nothing of the page's.
+    """
+    from pycore import clauses, plan_keys, shown
+
+    return {
+        'clauses': clauses.CLAUSES,
+        'patch': clauses.PATCH,
+        'also': clauses.ALSO,
+        'not_in_also': clauses.NOT_IN_ALSO,
+        'judged': plan_keys.JUDGED,
+        'optional_records': plan_keys.OPTIONAL_RECORDS,
+        'other_units': shown.OTHER_UNITS,
+        'family_choice': shown.FAMILY_CHOICE,
+    }
+
+
+def units():
+    """Return the units that may be typed, for the page's list of them and its reader of links.
+
+    Returns
+    -------
+    units : dict
+        By family: what one of each unit is in the family's base unit; and how else a unit may be spelt.
+    """
+    from pycore.quantity import FAMILIES, SPELLINGS
+
+    return {
+        'families': {name: {unit: float(base) for unit, base in family.items()} for name, family in FAMILIES.items()},
+        'spellings': SPELLINGS,
     }
 
 

@@ -12,7 +12,7 @@ from dataclasses import dataclass
 from webapp.building import payload
 from webapp.building.stop import Stop
 
-# Nothing is requested from anywhere, and no text becomes code. The worker is a data: address; WebAssembly has its own word.
+# Nothing is requested from anywhere and no text becomes code; the worker is a data: address, WebAssembly has a word.
 POLICY = (
     "default-src 'none'; script-src {scripts} 'wasm-unsafe-eval'; worker-src data:; style-src 'unsafe-inline'; "
     "img-src data: blob:; connect-src 'none'; base-uri 'none'; form-action 'none'"

@@ -1,7 +1,7 @@
 """Join Pyodide's two modules and our worker into one that imports nothing, so that the strictest policy lets it run.
 
-What is changed in Pyodide's files is written here, and each piece must be found exactly as often as said: another release
-stops the build instead of breaking the page.
+What is changed in Pyodide's files is written here, and each piece must be found exactly as often as said: another
+release stops the build instead of breaking the page.
 """
 
 from webapp.building.join import joined
