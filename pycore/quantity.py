@@ -45,7 +45,10 @@ SPELLINGS = {
 }
 """Other ways of writing a unit; k, M and G alone are meant of hertz."""
 
-_NUMBER = r'[+\-]?(?:\d+(?:[.,]\d*)?|[.,]\d+)(?:[eE][+\-]?\d+)?'
+_ALONE = {'range': {'k': 'km'}, 'power': {'k': 'kW', 'M': 'MW'}}
+"""What k and M alone are meant of in families without hertz."""
+
+_NUMBER = r'[+\-]?(?:[0-9]+(?:[.,][0-9]*)?|[.,][0-9]+)(?:[eE][+\-]?[0-9]+)?'
 _ONE = re.compile(rf'\s*({_NUMBER})\s*(.*?)\s*', re.DOTALL)
 _RELATIVE = re.compile(rf'\s*([+\-])\s*({_NUMBER.removeprefix("[+" + chr(92) + "-]?")})\s*%\s*')
 _LONGEST = 4000
@@ -136,7 +139,7 @@ def typed(text, key, field, unit=None, current=None):
     InputError
         Where it is not a number with a unit of the family.
     """
-    text = plain(text)
+    text = _unspaced(plain(text))
     relative = _RELATIVE.fullmatch(text)
     if relative and current is not None and key.family not in ('percent', 'share'):
         change = number(relative[2]) / 100
@@ -146,11 +149,16 @@ def typed(text, key, field, unit=None, current=None):
         value = number(match[1]) if match else None
     except ValueError:
         value = None
-    if value is None:
+    if value is None or re.match(r'[0-9.,+\-]', match[2]):
         raise InputError(field, f'{key.label} must be {_limits(key)}; got {shown(text.strip())}.')
-    if re.fullmatch(r'[+\-]?\d{1,3},\d{3}', match[1]):
+    if re.fullmatch(r'[+\-]?[0-9]{1,3},[0-9]{3}', match[1]):
         raise InputError(field, _two_readings(key, match[1]))
     return _in_key_unit(value, match[2], key, field, unit)
+
+
+def _unspaced(text):
+    """Take the spaces out of a number whose thousands are spaced: ``10 000 µs``."""
+    return re.sub(r'^\s*([+\-]?[0-9]{1,3}(?: [0-9]{3})+)(?![0-9])', lambda found: found[1].replace(' ', ''), text)
 
 
 def _limits(key):
@@ -166,7 +174,8 @@ def _two_readings(key, text):
 def _in_key_unit(value, unit_text, key, field, unit):
     """Turn a number with its unit into the unit of the key; a frequency turns a PRI over."""
     units = FAMILIES[key.family]
-    meant = unit_of(unit_text, units) if unit_text else (unit or key.unit)
+    alone = _ALONE.get(key.family, {})
+    meant = unit_of(alone.get(unit_text, unit_text), units) if unit_text else (unit or key.unit)
     if meant is None:
         known = ', '.join(name for name in units if name) or 'no unit'
         raise InputError(field, f'{key.label} is given in {known}; got {shown(unit_text)}.')
@@ -271,13 +280,23 @@ def words(text):
     words : list of str
         Numbers and units; a first line without any number is a heading and is left out.
     """
-    lines = plain(text).splitlines() or ['']
-    if len(lines) > 1 and not re.match(rf'\s*{_NUMBER}', lines[0]):
-        lines = lines[1:]
-    joined = re.sub(r',(?=\s|$)', ' ', '\n'.join(lines))
+    _, body = _heading(plain(text))
+    joined = re.sub(r',(?=\s|$)|\band\b', ' ', body)
     separates = '.' in joined
     split = [word.replace(',', ' ') if separates or word.count(',') > 1 else word for word in _SEPARATORS.split(joined)]
     return ' '.join(split).split()
+
+
+def _heading(text):
+    """Part the heading of a column, a first line that does not begin with a number, from the lines under it."""
+    first, _, rest = text.strip().partition('\n')
+    return (first, rest) if rest and not re.match(rf'\s*{_NUMBER}', first) else ('', text)
+
+
+def _unit_in(heading, units):
+    """Return the unit that a heading such as ``PRF (Hz)`` names, or ``None``."""
+    found = [unit_of(word, units) for word in re.findall(r'[^\s()\[\]/,;:]+', heading)]
+    return next((unit for unit in found if unit), None)
 
 
 def typed_list(text, key, field, unit=None):
@@ -286,7 +305,7 @@ def typed_list(text, key, field, unit=None):
     Parameters
     ----------
     text : str
-        Numbers, each with a unit or one unit for all that stand before it. [unitless]
+        Numbers, each with a unit or one unit for all that stand before it, or one in the column's heading. [unitless]
     key : Key
         The key. [unitless]
     field : str
@@ -299,9 +318,10 @@ def typed_list(text, key, field, unit=None):
     typed : list of Typed
         In the key's unit, not yet held against its limits.
     """
+    unit = _unit_in(_heading(plain(text))[0], FAMILIES[key.family]) or unit
     parts = []
     for word in words(text):
-        if parts and not re.match(r'[+\-]?[.,]?\d', word):
+        if parts and not re.match(r'[+\-]?[.,]?[0-9]', word):
             parts = [[value, given or word] for value, given in parts]
             continue
         match = re.match(_NUMBER, word)
