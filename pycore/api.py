@@ -59,7 +59,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None):
         The plan, its link, what was said and refused, verdict, findings, figures.
     """
     units = {**SHOWN_UNITS, **(units or {})}
-    start = None if opened is None else link.read(opened)
+    start = None if opened is None else link.read_link(opened)
     document, said, refused = _edited(plan if start is None else start.document, edits, units)
     computed = Computed(read(document))
     found = findings(computed, units)

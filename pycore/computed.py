@@ -11,6 +11,7 @@ from functools import cached_property
 import numpy as np
 
 from pycore import ambiguity, decoding, dwell, eclipsing, floor, holes, patterns, sight, stagger, unseen, visibility
+from pycore.crossings import clear_speeds
 from pycore.decode_blur import default_blur, gate_counts, motion_counts, range_half_widths
 from pycore.spans import Spans
 
@@ -98,9 +99,12 @@ class Computed:
     @cached_property
     def prf_ranges(self):
         """Clear ranges of each PRI on its own, as Spans. [m]"""
+        return self._prf_ranges(self.plan.range_m)
+
+    def _prf_ranges(self, range_m):
         plan = self.plan
         return eclipsing.clear_ranges(
-            plan.pri_s, plan.pulse_s, plan.recovery_s, plan.guard_s, plan.received_min, plan.range_m, plan.near
+            plan.pri_s, plan.pulse_s, plan.recovery_s, plan.guard_s, plan.received_min, range_m, plan.near
         )
 
     @cached_property
@@ -132,30 +136,51 @@ class Computed:
     @cached_property
     def sight(self):
         """Clear spans, floor and coverage of the plan as a whole."""
+        return self.sight_of(self.plan.range_m, self.plan.speed_m_s)
+
+    def sight_of(self, range_m, speed_m_s):
+        """Return the plan's sight of any region, inside its coverage or not.
+
+        Parameters
+        ----------
+        range_m : pair of float
+            Ranges. [m]
+        speed_m_s : pair of float
+            Radial speeds. [m/s]
+
+        Returns
+        -------
+        sight : Sight
+            Clear spans of every look, and those of the floor.
+        """
         plan = self.plan
         if self.is_stagger:
-            ranges, speeds = self._stagger_ranges(), self.response.clear_speeds
+            ranges = self._stagger_ranges(range_m)
+            speeds = clear_speeds(self.response.response, plan.response_min_db, speed_m_s)
             opening, notch = self.first_opening_m.max(keepdims=True), np.array([self.response.notch_m_s])
         else:
-            ranges, speeds, opening, notch = self.prf_ranges, self.prf_speeds, self.first_opening_m, plan.notch_m_s
-        return sight.Sight(
-            ranges,
-            speeds,
-            floor.floor_ranges(opening, plan.range_m),
-            floor.floor_speeds(notch, plan.speed_m_s),
-            self.looks,
-            self.m,
-            plan.range_m,
-            plan.speed_m_s,
-        )
+            ranges = self._prf_ranges(range_m)
+            speeds = stagger.notch_clear_speeds(self.blind_speed_m_s, plan.notch_m_s, speed_m_s)
+            opening, notch = self.first_opening_m, plan.notch_m_s
+        floor_ranges = floor.floor_ranges(opening, range_m, *self._near_opening)
+        floor_speeds = floor.floor_speeds(notch, speed_m_s)
+        return sight.Sight(ranges, speeds, floor_ranges, floor_speeds, self.looks, self.m, range_m, speed_m_s)
 
-    def _stagger_ranges(self):
+    @property
+    def _near_opening(self):
+        """First opening of the near pulse and how far it serves; nothing without one."""
+        plan = self.plan
+        if plan.near is None:
+            return ()
+        opening = eclipsing.first_opening(plan.recovery_s, plan.received_min, plan.near.pulse_s)
+        return float(opening), plan.near.to_range_m
+
+    def _stagger_ranges(self, limits):
         """Ranges that are clear on every interval of the cycle and short of the smallest unambiguous range."""
-        limits = self.plan.range_m
-        swept = patterns.sweep(self.prf_ranges, limits)
-        everywhere = (swept.pattern == (1 << self.plan.n) - 1) & (swept.edges[:-1] < self.unambiguous_range_m.min())
-        start = swept.edges[:-1][everywhere]
-        stop = np.minimum(swept.edges[1:][everywhere], self.unambiguous_range_m.min())
+        swept = patterns.sweep(self._prf_ranges(limits), limits)
+        shortest = self.unambiguous_range_m.min()
+        everywhere = (swept.pattern == (1 << self.plan.n) - 1) & (swept.edges[:-1] < shortest)
+        start, stop = swept.edges[:-1][everywhere], np.minimum(swept.edges[1:][everywhere], shortest)
         return Spans(np.zeros(start.size, dtype=np.intp), start, stop)
 
     # --- what is seen --------------------------------------------------------------------------------------------
@@ -203,7 +228,7 @@ class Computed:
         return tuple(self._must_see(region) for region in self.plan.must_see)
 
     def _must_see(self, region):
-        part = sight.within(self.sight, region.range_m, region.speed_m_s)
+        part = self.sight_of(region.range_m, region.speed_m_s)
         found = holes.holes(part, 0.0, 0.0)
         return MustSeeSight(region.name, region.range_m, region.speed_m_s, sight.share(part), found, region.visible)
 

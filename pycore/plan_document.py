@@ -187,11 +187,11 @@ def checked_number(key, value, here):
     Returns
     -------
     value : int or float
-        As it came.
+        As it came; a whole number as an integer, so that 980 and 980.0 are one and the same plan.
     """
     if isinstance(value, bool) or not isinstance(value, int | float) or not key.lowest <= value <= key.highest:
         raise InputError(here, f'{key.label} must be {limits_text(key)}; got {shown(value)}.')
-    return value
+    return int(value) if value == int(value) and abs(value) < 10**15 else value
 
 
 def _number(key, value, here):

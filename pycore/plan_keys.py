@@ -98,8 +98,16 @@ def _rows(group, record, *rows):
     keys = []
     for name, kind, short, label, help_text, unit, family, limits, more in rows:
         path = f'{record}.{name}' if record else name
-        keys.append(Key(path, kind, short, label, help_text, unit, family, *limits, group=group, **more))
+        plain = {**more, 'default': _whole(more['default'])} if 'default' in more else more
+        keys.append(Key(path, kind, short, label, help_text, unit, family, *limits, group=group, **plain))
     return tuple(keys)
+
+
+def _whole(value):
+    """Keep a whole number as an integer, as a plan does."""
+    if isinstance(value, list):
+        return [_whole(one) for one in value]
+    return int(value) if isinstance(value, float) and value.is_integer() else value
 
 
 _ANY = (None, None)
