@@ -50,16 +50,22 @@ export function startEngine({ payload = partOfPage, onStage = () => {}, onFail =
     if (typeof WebAssembly === 'undefined') throw new Error(SWITCHED_OFF);
     stage('parts of the engine');
     const names = await partNames();
-    const script = payload('worker');
-    const parts = names.map(async (name) => [name, await payload(name)]); // all at once, while the worker starts
-    engine.worker = startWorker(await script);
+    const worker = payload('worker').then((script) => openWorker(script, names.includes('snapshot')));
+    await Promise.all([worker, ...names.map(async (name) => { // all at once, while the worker starts
+      const bytes = await payload(name);
+      (await worker).postMessage({ part: name, bytes }, [bytes.buffer]);
+    })]);
+  }
+
+  function openWorker(script, snapshot) {
+    engine.worker = startWorker(script);
     engine.worker.onmessage = heard;
     engine.worker.onerror = (event) => {
       event.preventDefault();
       fail(`its worker stopped${event.message ? `: ${event.message}` : ' before it began'}`);
     };
-    engine.worker.postMessage({ start: { snapshot: names.includes('snapshot') } });
-    await Promise.all(parts.map(async (part) => sendPart(engine.worker, ...(await part))));
+    engine.worker.postMessage({ start: { snapshot } });
+    return engine.worker;
   }
 
   boot().catch((error) => fail(causeOf(error)));
@@ -95,10 +101,6 @@ function startWorker(script) {
 
 async function partNames() {
   return (await hasPart('snapshot')) ? [...PARTS, 'snapshot'] : PARTS;
-}
-
-function sendPart(worker, part, bytes) {
-  worker.postMessage({ part, bytes }, [bytes.buffer]);
 }
 
 function settle(engine, { id, text, buffer, error }) {

@@ -1,4 +1,4 @@
-"""Run the benchmarks: every tests/bench/bench_*.py has a `measure()` that returns names and numbers, or tables of numbers.
+"""Run the benchmarks: `measure()` of every tests/bench/bench_*.py returns names and numbers, or tables of numbers.
 
 ``python -m webapp.building.bench [NAME ...]`` prints them; nothing is judged here, and no test depends on a time.
 """

@@ -6,11 +6,11 @@ Each product is kept in the cache under the contents that it was made of.
 
 import json
 import subprocess
-import tempfile
 from pathlib import Path
 
 from webapp.building import memory
-from webapp.building.places import ROOT, cache, content_key
+from webapp.building.cached import made
+from webapp.building.places import ROOT
 from webapp.building.runtime import FILES, NUMPY_WHEEL
 from webapp.building.session import requests
 from webapp.building.stop import Stop
@@ -60,34 +60,6 @@ def engine_parts(node, runtime, with_snapshot=True):
         parts['stdlib'] = made('emptied.zip', lambda place: empty(stdlib, kept['modules'], place), *started)
 
     return parts
-
-
-def made(name, make, *contents):
-    """Return a product from the cache, made first if these contents have not been seen.
-
-    Parameters
-    ----------
-    name : str
-        The file that `make` leaves in the folder it is given. [unitless]
-    make : function of Path
-        Makes it. [unitless]
-    *contents : str, bytes or Path
-        All that the product depends on. [unitless]
-
-    Returns
-    -------
-    path : Path
-        The product.
-    """
-    stem, dot, ending = name.partition('.')
-    path = cache() / 'made' / f'{stem}-{content_key(*contents)}{dot}{ending}'
-    if not path.exists():
-        path.parent.mkdir(exist_ok=True)
-        with tempfile.TemporaryDirectory(dir=path.parent) as place:
-            make(Path(place))
-            (Path(place) / name).replace(path)
-
-    return path
 
 
 def record(node, runtime, place):

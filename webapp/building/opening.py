@@ -6,7 +6,9 @@ Run by the environment's Python: ``python -m webapp.building.opening``; prints t
 import json
 import subprocess
 import sys
+from pathlib import Path
 
+from webapp.building.cached import made
 from webapp.building.places import ROOT, WEBAPP, content_key
 from webapp.building.stop import Stop
 
@@ -26,13 +28,28 @@ def opening_json(python):
     text : str
         One JSON object.
     """
+    sources = [path for folder in ('pycore', 'webapp/figures') for path in sorted((ROOT / folder).rglob('*.py'))]
+    sources += [*sorted((WEBAPP / 'examples').glob('*.json')), WEBAPP / 'engine' / 'bridge.py', Path(__file__)]
+
+    return made('opening.json', lambda place: compute(python, place), str(python), *sources).read_text(encoding='utf-8')
+
+
+def compute(python, place):
+    """Write the opening answer.
+
+    Parameters
+    ----------
+    python : Path
+        As in `opening_json`. [unitless]
+    place : Path
+        Gets opening.json. [unitless]
+    """
     print('Computing the opening example')
     command = [python, '-m', 'webapp.building.opening']
     done = subprocess.run(command, cwd=ROOT, capture_output=True, text=True, encoding='utf-8')
     if done.returncode:
         raise Stop(f'The opening example could not be computed: {done.stderr.strip().splitlines()[-1][:300]}')
-
-    return done.stdout
+    (place / 'opening.json').write_text(done.stdout, encoding='utf-8')
 
 
 def opening():
@@ -41,7 +58,8 @@ def opening():
     Returns
     -------
     opening : dict
-        answer, items (one Bokeh document for each figure), their order, keys, grammar, units, examples, version, checksum.
+        answer, items (one Bokeh document for each figure) and their order, keys, grammar, units, examples, version,
+        checksum.
     """
     from pycore import __version__, api, plan_keys
     from pycore.columns import FIGURES, order
@@ -75,7 +93,7 @@ def grammar():
     grammar : dict
         The core's own templates and lists, nothing of the page's.
     """
-    from pycore import clauses, plan_keys, shown
+    from pycore import clauses, link, link_items, plan_keys, shown
 
     return {
         'clauses': clauses.CLAUSES,
@@ -86,6 +104,9 @@ def grammar():
         'optional_records': plan_keys.OPTIONAL_RECORDS,
         'other_units': shown.OTHER_UNITS,
         'family_choice': shown.FAMILY_CHOICE,
+        'link_records': link.RECORDS,
+        'link_lists': {short: path for short, (path, _) in link.LISTS.items()},
+        'link_units': {text: unit for unit, text in link_items.UNIT_TEXT.items()},
     }
 
 

@@ -3,7 +3,7 @@
 import base64
 import gzip
 
-from webapp.building.bytecode import made
+from webapp.building.cached import made
 
 
 def encoded(data):
