@@ -1,24 +1,24 @@
 // Fields for keys that are not numbers: a choice, a yes or no, a text. Each is {node, update(value)} and tells its edit.
 
-export function choiceField(key, commit) {
-  const node = labelled('select', key);
+export function choiceField(key, path, commit) {
+  const node = labelled('select', key, path);
   node.append(...key.choices.map((choice) => new Option(choice, choice)));
   node.addEventListener('change', () => commit({ value: node.value }));
   return { node, update: (value) => { if (document.activeElement !== node) node.value = value; } };
 }
 
-export function flagField(key, commit) {
-  const node = labelled('input', key);
+export function flagField(key, path, commit) {
+  const node = labelled('input', key, path);
   node.type = 'checkbox';
   node.addEventListener('change', () => commit({ value: node.checked }));
   return { node, update: (value) => { node.checked = Boolean(value); } };
 }
 
-export function textField(key, commit) {
-  const node = labelled('input', key);
+export function textField(key, path, commit) {
+  const node = labelled('input', key, path);
   let shown = '';
   Object.assign(node, { type: 'text', autocomplete: 'off' });
-  if (key.highest) node.maxLength = key.highest;
+  if (key.longest) node.maxLength = key.longest;
   node.addEventListener('change', () => commit({ text: node.value }));
   node.addEventListener('keydown', (event) => {
     if (event.key === 'Escape') node.value = shown;
@@ -32,9 +32,17 @@ export function textField(key, commit) {
   };
 }
 
-function labelled(tag, key) {
+export function quietButton(word, label, act) {
+  const node = document.createElement('button');
+  Object.assign(node, { type: 'button', className: 'quiet', textContent: word });
+  if (label) node.setAttribute('aria-label', label);
+  node.addEventListener('click', act);
+  return node;
+}
+
+function labelled(tag, key, path) {
   const node = document.createElement(tag);
   node.setAttribute('aria-label', key.label);
-  node.dataset.key = key.path;
+  node.dataset.key = path;
   return node;
 }

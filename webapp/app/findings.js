@@ -19,12 +19,9 @@ export function createFindings(list, onRemark) {
     },
     // While an opened link is not computed yet, no number of any other plan may stand here.
     clear() {
-      for (const { node, parts } of items.values()) {
-        for (const name of ['data-value', 'data-met']) node.removeAttribute(name);
-        parts.mark.removeAttribute('data-sign');
-        for (const part of [parts.mark, parts.detail, parts.wanted]) setText(part, '');
-        setText(parts.value, '…');
-      }
+      const waiting = document.createElement('li');
+      waiting.textContent = '…';
+      list.replaceChildren(waiting);
     },
   };
 }

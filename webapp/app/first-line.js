@@ -16,12 +16,10 @@ export function createFirstLine({ form, assumed, onPaste }) {
     onPaste(text);
   });
   return {
-    update({ offered, said, refused }) {
+    update({ offered, said }) {
       form.hidden = !offered;
-      field.toggleAttribute('aria-invalid', Boolean(refused));
       assumed.hidden = !said;
       if (assumed.textContent !== said) assumed.textContent = said;
     },
-    clear: () => { field.value = ''; },
   };
 }

@@ -4,8 +4,10 @@
 import { valueAt } from './keys.js';
 
 const RUN_PAUSE_MS = 1200;
+const LIST = 'waveform.pri_us';
+const NAMES = { 'add-pri': 'Adding a PRI', 'remove-pri': 'Removing a PRI', 'move-pri': 'Moving a PRI', 'sort-pris': 'Sorting the PRIs', 'paste-pris': 'Your own PRIs', 'add-rain': 'Adding rain', 'remove-rain': 'Taking the rain away', remark: 'The remark' };
 
-export function createHands({ state, keys, quantities, status, redraw }) {
+export function createHands({ state, keys, quantities, status, families, redraw, onAnswered, focus }) {
   const run = { path: '', at: 0, name: '' };
 
   function runOf(path) {
@@ -30,8 +32,24 @@ export function createHands({ state, keys, quantities, status, redraw }) {
     else redraw();
   }
 
+  // An action on the list of PRIs; `then` is the number that has the focus when it is done.
+  function act(action, given = {}, then = action === 'add-pri' ? `${LIST}.${state.now.plan.waveform.pri_us.length}` : null) {
+    run.path = '';
+    state.commit({ do: action, ...given, name: NAMES[action] ?? 'The last step' });
+    if (then) onAnswered(() => focus(then, action === 'add-pri'));
+  }
+
+  // What the strip shows of a number.
+  function entry(path) {
+    const key = keys.of(path);
+    return { name: key.label, units: units(key), shown: { digits: quantities.digitsOf(key, value(path)), unit: quantities.unitOf(key) } };
+  }
+
+  const units = ({ family }) => Object.keys(families[family] ?? {}).filter(Boolean);
+
   return {
     step,
+    entry,
     value,
     commit: (edit) => {
       run.path = '';
@@ -41,11 +59,23 @@ export function createHands({ state, keys, quantities, status, redraw }) {
     takeBack: (name) => state.takeBack(name),
     refusedText: (path) => state.now.refused.find((edit) => edit.key === path)?.text,
     remove(path) {
-      const [, list, index] = path.match(/^(.*)\.(\d+)$/) ?? [];
-      if (!keys.of(list ?? path)?.counts) return false;
-      state.commit({ do: 'remove-pri', at: Number(index), name: 'Removing one' });
+      const index = placeOf(path);
+      if (index === null) return false;
+      act('remove-pri', { index });
       return true;
     },
+    move(path, by) {
+      const [index, count] = [placeOf(path), state.now.plan.waveform.pri_us.length];
+      const to = index + by;
+      if (index === null || to < 0 || to >= count) return;
+      act('move-pri', { index, to }, `${LIST}.${to}`);
+    },
+    act,
     redraw,
   };
+}
+
+function placeOf(path) {
+  const [, index] = path.match(/^waveform\.pri_us\.(\d+)$/) ?? [];
+  return index === undefined ? null : Number(index);
 }

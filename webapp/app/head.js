@@ -1,5 +1,6 @@
 // The head of the note and its actions in words: where the plan comes from, what was said of its link, copy, print, examples.
 
+import { assumedText } from './assumed.js';
 import { copyText } from './copying.js';
 import { createExamples } from './examples.js';
 import { createFirstLine } from './first-line.js';
@@ -9,15 +10,20 @@ import { setText } from './number.js';
 const LONG_FOR_CHAT = 1900; // characters of a link; some chats cut what is longer
 const at = (id) => document.getElementById(id);
 
-export function createHead({ opening, state, status, address, hands, openExample }) {
+export function createHead({ opening, state, status, address, hands, page, keys, quantities, openExample }) {
   let origin = opening.answer.plan;
   let link = address.opened || opening.answer.link;
-  let assumed = '';
-  const firstLine = createFirstLine({ form: at('first-line'), assumed: at('assumed'), onPaste: (text) => hands.paste(text) });
+  let pasted = false;
+  const firstLine = createFirstLine({ form: at('first-line'), assumed: at('assumed'), onPaste: paste });
   createExamples({ button: at('examples'), sheet: at('examples-sheet'), list: at('examples-list'), examples: opening.examples, open: openExample });
   at('copy-link').addEventListener('click', () => copyLink(address.whole(link), status));
   at('print').addEventListener('click', () => print());
   setText(at('foot'), `Pulsewright ${opening.version}, computation ${opening.checksum.slice(0, 8)}. Nothing leaves this page: it asks no server for anything.`);
+
+  function paste(text) {
+    pasted = true;
+    hands.act('paste-pris', { text });
+  }
 
   function standing() {
     const { plan, pending } = state.now;
@@ -33,7 +39,8 @@ export function createHead({ opening, state, status, address, hands, openExample
   function update() {
     setText(at('standing'), standing());
     const untouched = !address.opened && differing(state.now.plan, opening.answer.plan) === 0;
-    firstLine.update({ offered: untouched, said: assumed });
+    const said = pasted && !untouched ? assumedText({ plan: state.now.plan, opening: opening.answer.plan, clauses: page.said(), keys, quantities }) : '';
+    firstLine.update({ offered: untouched, said });
     setText(at('link-text'), address.whole(link));
   }
 
@@ -45,11 +52,11 @@ export function createHead({ opening, state, status, address, hands, openExample
     },
     answered(answer) {
       link = answer.link;
-      assumed = answer.assumed ?? '';
       update();
     },
     opened(answer) {
       origin = answer.plan;
+      pasted = false;
       announce(sentenceOf(answer.opened));
     },
     failed(reason) {

@@ -3,8 +3,24 @@
 
 export function createKeys(table) {
   const byPath = new Map(table.map((key) => [key.path, key]));
-  const of = (path) => byPath.get(path) ?? byPath.get(path.replace(/\.\d+(?=\.|$)/g, '')) ?? null;
-  return { table, of };
+  // In the table `[]` stands for the elements of a list of records; a part's own number is not written there.
+  const of = (path) => {
+    const whole = path.replace(/\.\d+(?=\.)/g, '[]').replace(/\.\d+$/, '');
+    return byPath.get(whole) ?? byPath.get(whole.replace('.', '[].')) ?? null;
+  };
+  // One value for each PRF: first what is sent, then how often.
+  const lists = table.filter((key) => key.per_prf);
+  const perPrf = [...lists.filter(({ kind }) => kind !== 'count'), ...lists.filter(({ kind }) => kind === 'count')].map(({ path }) => path);
+  return { table, of, perPrf };
+}
+
+// The places that a key has in a plan: several for a list of records, none where the record is not there.
+export function placesOf({ path }, plan) {
+  const [list, rest] = path.split('[].');
+  if (rest === undefined) return valueAt(plan, path) === undefined ? [] : [path];
+  const records = valueAt(plan, list);
+  if (Array.isArray(records)) return records.map((record, i) => `${list}.${i}.${rest}`);
+  return records ? [`${list}.${rest}`] : [];
 }
 
 export function valueAt(document, path) {

@@ -7,7 +7,7 @@ export function createLooks({ state, keys, quantities, engineState }) {
   function pendingShown(path, key) {
     const edit = state.now.pending.findLast((pending) => pending.key === path);
     if (!edit) return undefined;
-    return edit.text ?? quantities.shown(key, edit.value, path);
+    return edit.text ?? quantities.shown(key, edit.value);
   }
 
   // What the sentence shows for a path: `said` is its own way of showing (a list shares one unit).
@@ -15,15 +15,17 @@ export function createLooks({ state, keys, quantities, engineState }) {
     const key = keys.of(path);
     const value = valueAt(state.now.plan, path);
     const refusal = state.now.refused.find((edit) => edit.key === path);
+    const pair = state.now.refused.some((edit) => path.startsWith(`${edit.field}.`) && edit.key !== edit.field);
     const pending = pendingShown(path, key);
     return {
-      shown: pending ?? said ?? quantities.shown(key, value, path),
+      shown: pending ?? said ?? quantities.shown(key, value),
       value,
       label: key?.label ?? path,
       lowest: key?.lowest,
       highest: key?.highest,
       waiting: pending !== undefined && engineState() !== 'ready',
       refused: refusal?.text,
+      invalid: Boolean(refusal) || pair, // of two ends that do not agree either may be the wrong one
       plain: engineState() === 'failed',
     };
   }
@@ -32,7 +34,7 @@ export function createLooks({ state, keys, quantities, engineState }) {
   function refusals() {
     return state.now.refused.map(({ key: path, message }) => {
       const key = keys.of(path);
-      return { key: path, label: key?.label ?? path, message, still: quantities.shown(key, valueAt(state.now.plan, path), path) };
+      return { key: path, label: key?.label ?? path, message, still: quantities.shown(key, valueAt(state.now.plan, path)) };
     });
   }
 

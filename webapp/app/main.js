@@ -15,6 +15,7 @@ import { createQuantities } from './quantities.js';
 import { flipped } from './quiet.js';
 import { createState } from './state.js';
 import { createStatus } from './status.js';
+import { followScheme } from './scheme.js';
 import { createStrip } from './strip.js';
 import { createTravel } from './travel.js';
 import { listenToTyping } from './typing.js';
@@ -22,15 +23,16 @@ import { listenToTyping } from './typing.js';
 const root = document.documentElement;
 const opening = JSON.parse(document.getElementById('opening').textContent);
 const keys = createKeys(opening.keys);
-const quantities = createQuantities(opening);
+const quantities = createQuantities(opening.grammar, { range: 'km', speed: 'm/s', pri: 'us' });
 const status = createStatus(document.getElementById('status'));
 const state = createState(opening.answer.plan);
 const address = createAddress(openLink);
-const hands = createHands({ state, keys, quantities, status, redraw: () => page.redraw() });
+const hands = createHands({ state, keys, quantities, status, families: opening.units.families, redraw: () => page.redraw(), onAnswered: (act) => waiting.push(act), focus: (path, typing) => page.focus(path, typing) });
 const page = createPage({ opening, keys, quantities, state, hands, ask: () => asking.ask() });
 const travel = createTravel({ state, status, page, buttons: { undo: document.getElementById('undo'), redo: document.getElementById('redo') } });
-const head = createHead({ opening, state, status, address, hands, openExample });
+const head = createHead({ opening, state, status, address, hands, page, keys, quantities, openExample });
 let findings = opening.answer.findings;
+const waiting = []; // what is to be done when the next answer stands on the page
 
 // The engine's parts are unpacked on this thread: first the note is painted.
 let painted = null;
@@ -41,7 +43,9 @@ const asking = createAsking({ engine, state, figures: page.pictures.visible, uni
 function answered(answer, request) {
   status.sayWhenQuiet(flipped(request.opened ? [] : findings, answer.findings));
   findings = answer.findings;
-  if (answer.said.length) status.say(answer.said.join(' '));
+  const told = answer.refused.filter(({ edit }) => edit.text === undefined || edit.do).map(({ message }) => message);
+  if (answer.said.length + told.length) status.say([...told, ...answer.said].join(' '));
+  waiting.splice(0).forEach((act) => act());
   if (request.opened !== null) head.opened(answer);
   head.answered(answer);
   address.show(answer.link);
@@ -60,9 +64,14 @@ function failed(reason) {
 
 // A link stands as a sentence at once; its numbers come from the engine, never from another plan.
 async function openLink(text, name = 'The link') {
+  const plan = await readLink(text);
+  state.open(plan ?? state.now.plan, name);
+}
+
+async function readLink(text) {
   page.clear();
   asking.open(text);
-  state.open(await openedPlan(text, opening) ?? state.now.plan, name);
+  return openedPlan(text, opening);
 }
 
 function openExample({ link, title }) {
@@ -74,18 +83,20 @@ state.watch((cause) => {
   page.redraw();
   travel.update();
   head.update();
+  if (cause === 'travel') asking.open(null);
   if (cause !== 'answer') asking.ask();
 });
 
 const wasDragged = listenToDragging(document.body, hands);
 const strip = createStrip(document.getElementById('strip'), hands);
 listenToTyping(document.body, { ...hands, wasDragged, strip });
+followScheme();
 page.redraw();
 head.update();
 
 async function begin() {
   root.dataset.engine = 'starting';
-  if (address.opened) await openLink(address.opened);
+  if (address.opened) state.begin(await readLink(address.opened) ?? opening.answer.plan);
   else await page.paint(opening.answer, 0);
   painted();
   await engine.ready;

@@ -20,7 +20,7 @@ function element(key) {
   return number;
 }
 
-// `look` is {shown, value, label, lowest, highest, waiting, refused, plain}; an open field keeps what is being typed.
+// `look` is {shown, value, label, lowest, highest, waiting, refused, invalid, plain}; an open field keeps what is being typed.
 export function setNumber(number, look) {
   const text = look.refused ?? look.shown;
   if (!number.classList.contains('open')) setText(number, text);
@@ -35,8 +35,8 @@ export function setNumber(number, look) {
     'aria-valuetext': look.waiting ? `${text}, waiting for the engine` : text,
     'aria-valuemin': look.lowest,
     'aria-valuemax': look.highest,
-    'aria-invalid': look.refused === undefined ? null : 'true',
-    'aria-describedby': look.refused === undefined ? null : 'refused',
+    'aria-invalid': look.invalid ? 'true' : null,
+    'aria-describedby': look.invalid ? 'refused' : null,
   });
 }
 

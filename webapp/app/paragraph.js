@@ -1,52 +1,64 @@
 // The plan's paragraph on the page: clauses of text, numbers, a rail and quiet words that act. Repainted in place, so that
 // focus, selection and an open field outlive every answer. What it says comes from sentence.js.
 
+import { quietButton } from './fields.js';
 import { setText } from './number.js';
 
+const RAIL_ACTIONS = [{ do: 'add-pri', text: '+', label: 'Add a PRI' }, { do: 'sort-pris', text: 'Sort', label: 'Sort the PRIs' }];
+
 export function createParagraph({ node, numberFor, act }) {
-  const clauses = new Map();
+  const parts = new Map();
   const buttons = new Map();
 
   function nodeFor(piece) {
     if (piece.key) return numberFor(piece.key);
-    if (piece.action) return buttonFor(piece);
-    return piece.cells ? railFor(piece) : null;
+    if (piece.do) return buttonFor(piece);
+    return piece.rail ? railFor(piece.rail) : piece.text;
   }
 
-  function buttonFor({ action, text, label }) {
-    if (!buttons.has(action)) buttons.set(action, button(() => act(action)));
-    const found = buttons.get(action);
-    setText(found, text);
-    if (label) found.setAttribute('aria-label', label);
-    return found;
+  function buttonFor({ do: action, text, label }) {
+    if (!buttons.has(action)) buttons.set(action, quietButton(text, label, () => act(action)));
+    setText(buttons.get(action), text);
+    return buttons.get(action);
   }
 
-  function railFor({ cells, actions }) {
-    const rail = railOf(clauses);
-    lay(rail, [...cells.map((cell) => cellFor(rail, cell)), ...actions.map(buttonFor)]);
+  function railFor(cells) {
+    const rail = partFor('rail', 'rail');
+    lay(rail, [...cells.map(cellFor), ...RAIL_ACTIONS.map(buttonFor)]);
     return rail;
   }
 
-  function cellFor(rail, { key, notes }) {
-    const number = numberFor(key);
-    const cell = number.closest('.rail-cell') ?? element('span', 'rail-cell');
-    lay(cell, [number, ...notes.map((note, i) => noteFor(cell, note, i))]);
+  // The first line of a cell is the interval; the copy of a rail reads as a list.
+  function cellFor(lines, i, all) {
+    const cell = partFor(`cell ${i}`, 'rail-cell');
+    const end = partFor(`end ${i}`, 'rail-end');
+    setText(end, i === all.length - 1 ? '.' : '; ');
+    lay(cell, [...lines.map((line, row) => (line.key ? lineFor(`line ${i} ${row}`, numberFor(line.key)) : noteFor(`note ${i}`, line.text))), end]);
     return cell;
   }
 
-  function noteFor(cell, note, i) {
-    if (note.key) return numberFor(note.key);
-    const found = cell.querySelectorAll('.rail-other')[i] ?? element('span', 'rail-other');
-    setText(found, note.text);
-    return found;
+  function lineFor(id, number) {
+    const line = partFor(id, 'rail-line');
+    lay(line, [number]);
+    return line;
   }
 
-  function clauseFor({ id, short, pieces, className }) {
-    if (!clauses.has(id)) clauses.set(id, element('span', className ?? ''));
-    const clause = clauses.get(id);
+  function noteFor(id, text) {
+    const note = partFor(id, 'rail-other');
+    setText(note, text);
+    return note;
+  }
+
+  function partFor(id, className) {
+    if (!parts.has(id)) parts.set(id, element('span', className));
+    return parts.get(id);
+  }
+
+  function clauseFor({ id, short, pieces }) {
+    const clause = partFor(`clause ${id}`, id === 'also' ? 'also' : '');
     clause.dataset.clause = id;
     clause.dataset.short = short;
-    lay(clause, pieces.map((piece) => nodeFor(piece) ?? piece.text));
+    lay(clause, pieces.map(nodeFor));
     return clause;
   }
 
@@ -71,20 +83,8 @@ export function lay(node, wanted) {
   while (node.childNodes.length > wanted.length) node.lastChild.remove();
 }
 
-function railOf(clauses) {
-  if (!clauses.has('rail')) clauses.set('rail', element('span', 'rail'));
-  return clauses.get('rail');
-}
-
 function element(tag, className) {
   const node = document.createElement(tag);
   if (className) node.className = className;
-  return node;
-}
-
-function button(act) {
-  const node = element('button', 'quiet');
-  node.type = 'button';
-  node.addEventListener('click', act);
   return node;
 }

@@ -2,6 +2,7 @@
 // A figure that is not on the screen is neither embedded nor computed; `onSeen()` tells that one has come into view.
 
 import { mount, update } from './figures.js';
+import { createFigureTable } from './figure-table.js';
 import { setText } from './number.js';
 
 const NEAR = '240px'; // a figure this close to the screen counts as on it
@@ -53,14 +54,15 @@ async function draw(frame, name, picture, item, count) {
   frame.count = count;
   frame.mounted ??= mount(name, frame.plot, item);
   await frame.mounted;
-  if (picture.columns) await update(name, picture);
+  if (picture.columns) update(name, picture);
   frame.node.classList.remove('pending');
 }
 
-function caption(frame, { title, caption: text, summary }) {
+function caption(frame, { title, caption: text, summary, table }) {
   setText(frame.label, `Fig. ${frame.label.dataset.number} ${title}.`);
   setText(frame.caption, text);
   setText(frame.summary, summary ?? '');
+  frame.table.update(table);
 }
 
 function build(name) {
@@ -82,5 +84,7 @@ function build(name) {
   words.append(' ');
   const shows = part('span', 'figure-shows', words);
   const summary = part('p', 'out-of-sight');
-  return { node, plot, reading, label, caption: text, shows, summary, seen: false, mounted: null, count: -1 };
+  const table = createFigureTable();
+  node.append(table.node);
+  return { node, plot, reading, label, caption: text, shows, summary, table, seen: false, mounted: null, count: -1 };
 }

@@ -15,6 +15,7 @@ export function createState(plan) {
     undo: () => travel(state, state.past, state.future, changed),
     redo: () => travel(state, state.future, state.past, changed),
     takeBack: (run) => { if (state.past.at(-1)?.run === run) takeBack(state, changed); },
+    begin: (first) => { state.plan = first; changed('begin'); },
     open: (next, name) => { open(state, next, name); changed('open'); },
     settle: (request, answer) => settle(state, request, answer, changed),
     request: () => ({ plan: state.plan, edits: [...state.pending, ...state.refused], epoch: state.epoch, count: state.count }),
@@ -63,7 +64,7 @@ function takeBack(state, changed) {
 function settle(state, request, answer, changed) {
   if (request.epoch !== state.epoch) return false;
   const came = (edit) => edit.count > request.count;
-  const refusals = answer.refused.map((refusal) => ({ ...sentFor(request, refusal), ...refusal }));
+  const refusals = answer.refused.map(({ edit, key, message }) => ({ ...sentFor(request, edit), field: key, message }));
   const replaced = new Set(state.pending.filter(came).map((edit) => edit.key));
   state.plan = answer.plan;
   state.pending = state.pending.filter(came);
@@ -74,8 +75,8 @@ function settle(state, request, answer, changed) {
   return true;
 }
 
-function sentFor({ edits }, { key }) {
-  return edits.findLast((edit) => edit.key === key) ?? {};
+function sentFor({ edits }, { key, text, value }) {
+  return edits.findLast((edit) => edit.key === key && edit.text === text && edit.value === value) ?? {};
 }
 
 // What was refused has changed nothing, so there is nothing to undo.

@@ -57,7 +57,7 @@ export function createStrip(strip, plan) {
     if (act) acts[act]();
   });
   field.addEventListener('input', () => { typed = true; });
-  unit.addEventListener('change', () => { typed = true; commit(); });
+  unit.addEventListener('change', commit); // chosen before typing it is meant for what will be typed
   field.addEventListener('keydown', (event) => {
     if (event.key === 'Enter') close();
     if (event.key === 'Escape') { typed = false; close(); }

@@ -24,6 +24,7 @@ export function createTitle(heading, { label, longest, commit }) {
   });
 
   return {
+    stop: () => { heading.contentEditable = 'false'; },
     update(next) {
       text = next ?? '';
       if (document.activeElement !== heading) restore();

@@ -44,6 +44,8 @@ const openKeys = {
 };
 
 const closedKeys = {
+  ArrowLeft: (number, event, plan) => event.altKey && plan.move(number.dataset.key, -1),
+  ArrowRight: (number, event, plan) => event.altKey && plan.move(number.dataset.key, 1),
   Enter: (number) => openField(number),
   F2: (number) => openField(number),
   Escape: (number, event, plan) => plan.putBack(number.dataset.key),
