@@ -94,10 +94,28 @@ def test_one_comma_before_three_digits_is_refused_with_both_readings(text, readi
     assert refused.value.field == 'coverage.speed_mps'
 
 
-@pytest.mark.parametrize(
-    'text', ['', '   ', 'abc', 'nan', 'inf', '-inf', 'NaN µs', '1..2', '1 2', '--1', '1.2.3', '1e', '1e999999999', '9' * 5000, '0x10',
-             '1_000', '\u0661', '5 parsecs', '5 km', '1,234,567', '1,234.5', '<b>1</b>', '\x00', '1e-400', '-1', '0', '0.0099', '10000.1']
-)  # fmt: skip
+NO_NUMBERS = (
+    '',
+    '   ',
+    'abc',
+    'nan',
+    'inf',
+    '-inf',
+    'NaN µs',
+    '1..2',
+    '1 2',
+    '--1',
+    '1.2.3',
+    '1e',
+    '\u0661',
+    '<b>1</b>',
+    '\0',
+)
+TOO_ODD = ('1e999999999', '9' * 5000, '0x10', '1_000', '1,234,567', '1,234.5', '1e-400', '5 parsecs', '5 km')
+OUT_OF_LIMITS = ('-1', '0', '0.0099', '10000.1')
+
+
+@pytest.mark.parametrize('text', [*NO_NUMBERS, *TOO_ODD, *OUT_OF_LIMITS])
 def test_what_is_no_pulse_length_is_refused_in_one_sentence_with_the_limits(text):
     with pytest.raises(InputError) as refused:
         read(text, PULSE)
@@ -169,13 +187,12 @@ def test_every_decimal_in_every_unit_is_exactly_what_was_typed(value, unit):
     assert quantity.typed(f'{value:f}', PULSE, PULSE.path, name).value == Fraction(value) * Fraction(10) ** power
 
 
-@given(st.text(max_size=60))
-def test_any_text_is_read_or_refused_and_never_breaks(text):
-    for key in (PULSE, PRI, SPEED, PULSES, RECEIVED):
-        try:
-            value = read(text, key, current=key.lowest)
-        except InputError as refused:
-            assert refused.message.count('\n') == 0
-            assert len(refused.message) < 200
-        else:
-            assert key.lowest <= value <= key.highest
+@given(st.text(max_size=60), st.sampled_from([PULSE, PRI, SPEED, PULSES, RECEIVED]))
+def test_any_text_is_read_or_refused_in_one_line_and_never_breaks(text, key):
+    try:
+        value, message = read(text, key, current=key.lowest), ''
+    except InputError as refused:
+        value, message = key.lowest, refused.message
+    assert key.lowest <= value <= key.highest
+    assert message.count('\n') == 0
+    assert len(message) < 200
