@@ -139,10 +139,10 @@ def fold_speed(speed_m_s, blind_speed_m_s):
         In [-v_b/2, v_b/2) for every float. [m/s]
     """
     half = np.asarray(blind_speed_m_s) / 2.0
-    remainder = np.mod(speed_m_s, blind_speed_m_s)
-    apparent = np.where(remainder >= half, remainder - blind_speed_m_s, remainder)
-    # A remainder that rounded up to v_b itself would come out as +0: right; one of half v_b comes out as -v_b/2.
-    return np.clip(apparent, -half, None)[()]
+    # The remainder of a division is exact, and so is moving it by one interval where it is beyond half of it.
+    remainder = np.fmod(speed_m_s, blind_speed_m_s)
+    down = np.where(remainder >= half, remainder - blind_speed_m_s, remainder)
+    return np.where(remainder < -half, remainder + blind_speed_m_s, down)[()]
 
 
 def pulses_since(range_m, unambiguous_range_m):
@@ -208,3 +208,52 @@ def regime(unambiguous_range_m, blind_speed_m_s, range_max_m, speed_span_m_s):
     """
     far, fast = unambiguous_range_m >= range_max_m, blind_speed_m_s >= speed_span_m_s
     return {(True, False): 'low', (False, True): 'high', (True, True): 'clear', (False, False): 'medium'}[far, fast]
+
+
+def single_prf_interval(range_max_m, speed_span_m_s, wavelength_m):
+    """Return the PRFs at which a single one is unambiguous in range and in speed.
+
+    Parameters
+    ----------
+    range_max_m : float
+        Farthest range wanted, above 0. [m]
+    speed_span_m_s : float
+        Span of radial speeds wanted. [m/s]
+    wavelength_m : float
+        Wavelength. [m]
+
+    Returns
+    -------
+    prf_hz : (float, float) or None
+        From 2 S / λ (so that v_b ≥ S) to c / (2 R) (so that R_u ≥ R); ``None`` where the shortfall is above 1.
+        Derived here. [Hz]
+    """
+    lowest, highest = 2.0 * speed_span_m_s / wavelength_m, SPEED_OF_LIGHT_M_S / (2.0 * range_max_m)
+    return (lowest, highest) if lowest <= highest else None
+
+
+def single_clear_prf_interval(range_m, speed_m_s, wavelength_m, notch_m_s, lost_s):
+    """Return the PRFs at which a single one leaves nothing blind but the first opening and the notch around zero.
+
+    Parameters
+    ----------
+    range_m : float
+        Farthest range wanted. [m]
+    speed_m_s : pair of float
+        Limits of the radial speeds wanted. [m/s]
+    wavelength_m : float
+        Wavelength. [m]
+    notch_m_s : float
+        Half width of the notch. [m/s]
+    lost_s : float
+        What the end of an interval loses: received_min · τ + guard. [s]
+
+    Returns
+    -------
+    prf_hz : (float, float) or None
+        So that v_b is at least the span and at least the fastest speed plus the notch, and R_u at least
+        R + c (received_min τ + guard) / 2; ``None`` where there is none. Derived here. [Hz]
+    """
+    low, high = speed_m_s
+    widest = max(high - low, abs(low) + notch_m_s, abs(high) + notch_m_s)
+    return single_prf_interval(range_m + SPEED_OF_LIGHT_M_S * lost_s / 2.0, widest, wavelength_m)
