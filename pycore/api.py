@@ -35,7 +35,7 @@ def assess(plan):
     return assessment(Computed(read(plan)))
 
 
-def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None):
+def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, deep=False):
     """Return all that a page shows of a plan, after the edits that were made to it.
 
     Parameters
@@ -53,6 +53,9 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None):
     units : mapping or None
         Units that the reader prefers, by ``range``, ``speed``, ``pri``. [unitless]
 
+    deep : bool
+        Whether findings that take long are worked out where nothing is judged by them. [unitless]
+
     Returns
     -------
     note : dict
@@ -61,7 +64,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None):
     units = {**SHOWN_UNITS, **(units or {})}
     start = None if opened is None else link.read_link(opened)
     document, said, refused = _edited(plan if start is None else start.document, edits, units)
-    computed = Computed(read(document))
+    computed = Computed(read(document), with_echoes=deep)
     found = findings(computed, units)
     return {
         'plan': filled(document),

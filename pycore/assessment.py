@@ -41,6 +41,7 @@ def assessment(computed):
         'blind_speed': _blind_speed(computed),
         'decode': _decode(computed),
         'dwell': _dwell(computed),
+        'detection': _detection(computed),
         'findings': [as_dict(finding) for finding in findings(computed, SHOWN_UNITS)],
     }
 
@@ -94,6 +95,7 @@ def _prf_columns(computed):
         'notched_share': computed.notched_shares.tolist(),
         'cpi_ms': (plan.pulses * plan.pri_s * 1e3).tolist(),
         'fill_ms': (plan.fill_pulses * plan.pri_s * 1e3).tolist(),
+        'fill_needed': computed.echoes.fill_needed.tolist(),
         'filter_width_mps': dwell.filter_width(plan.pri_s, plan.pulses, plan.wavelength_m).tolist(),
         'gates': dwell.gates(plan.pri_s, plan.pulse_s, plan.recovery_s, plan.guard_s, plan.bandwidth_hz).tolist(),
         'range_walk_gates': computed.range_walk_gates.tolist(),
@@ -105,6 +107,7 @@ def _visible(computed):
         'share': computed.share,
         'floor_share': computed.floor_share,
         'excess_over_floor': computed.excess_over_floor,
+        'share_with_clutter': computed.echoes.share_with_clutter,
         'm': computed.m,
         'n': computed.looks,
         'share_by_count': computed.visible.by_count.tolist(),
@@ -169,3 +172,13 @@ def _decode(computed):
 def _dwell(computed):
     available = computed.plan.time_on_target_s
     return {'available_ms': None if available is None else available * 1e3, 'used_ms': computed.time_used_s * 1e3}
+
+
+def _detection(computed):
+    echoes = computed.echoes
+    return {
+        'false_alarm_per_cpi': echoes.false_alarm_per_cpi,
+        'cells': echoes.cells,
+        'false_per_scan': echoes.false_per_scan,
+        'range_km_at_pd': echoes.reached_km(),
+    }

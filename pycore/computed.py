@@ -13,6 +13,7 @@ import numpy as np
 from pycore import ambiguity, decoding, dwell, eclipsing, floor, holes, patterns, sight, stagger, unseen, visibility
 from pycore.crossings import clear_speeds
 from pycore.decode_blur import default_blur, gate_counts, motion_counts, range_half_widths
+from pycore.echoes import Echoes
 from pycore.spans import Spans
 
 
@@ -49,10 +50,18 @@ class Computed:
     ----------
     plan : Plan
         The plan, checked and in SI units. [unitless]
+    with_echoes : bool
+        Whether findings may ask for clutter and detection even where nothing is judged by them. [unitless]
     """
 
-    def __init__(self, plan):
+    def __init__(self, plan, with_echoes=True):
         self.plan = plan
+        self.with_echoes = with_echoes
+
+    @cached_property
+    def echoes(self):
+        """Clutter and detection of the same plan."""
+        return Echoes(self)
 
     @property
     def is_stagger(self):

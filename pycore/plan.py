@@ -10,6 +10,7 @@ from fractions import Fraction
 
 import numpy as np
 
+from pycore.clutter import Clutter
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.dwell import time_on_target
 from pycore.eclipsing import NearPulse
@@ -45,20 +46,6 @@ class Wanted:
     decode_speed: bool
     detect_m: float | None
     range_walk_gates: float | None
-
-
-@dataclass(frozen=True, slots=True)
-class Clutter:
-    """Ground, rain or another patch: one-pulse clutter-to-noise [dB] at a range [m], extent, speed, spread, law."""
-
-    name: str
-    cnr_db: float
-    at_m: float
-    range_m: tuple[float, float]
-    speed_m_s: float
-    spread_m_s: float
-    range_power: float
-    at_pulse_s: float | None
 
 
 @dataclass(frozen=True, slots=True)

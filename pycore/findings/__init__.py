@@ -1,5 +1,6 @@
 """What a plan reaches: one sentence for each thing that a review asks, in a fixed order."""
 
+from pycore.findings.detection import detection
 from pycore.findings.dwell import duty, dwell
 from pycore.findings.seen import largest_hole, must_see, unseen_crossing, unseen_inbound, visible
 from pycore.findings.speeds import blind_speed, decode_range, decode_speed, range_walk
@@ -18,6 +19,7 @@ _IN_ORDER = (
     decode_speed,
     dwell,
     duty,
+    detection,
     range_walk,
 )
 

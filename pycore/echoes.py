@@ -1,0 +1,254 @@
+"""What a plan hears: clutter in its gates and filters, and how far it detects its target.
+
+Lies beside :mod:`pycore.computed` and is asked only by what shows clutter or
+detection. Holds no mathematics of its own: it brings the plan to the functions
+of clutter and detection, part by part where a near pulse serves the near ranges.
+"""
+
+import math
+from dataclasses import dataclass
+from functools import cached_property
+
+import numpy as np
+
+from pycore import clutter, clutter_pieces, detection, target, visibility
+from pycore.constants import SPEED_OF_LIGHT_M_S
+from pycore.cpi import cpis
+from pycore.reach import reach, reach_over
+from pycore.response import binomial_weights
+
+_STAGGER_SPEEDS = 512
+"""Speeds at which a stagger's reach is looked at. [unitless]"""
+
+
+@dataclass(frozen=True, slots=True)
+class Part:
+    """A part of the range axis that one kind of pulse serves, with all that belongs to that pulse.
+
+    Parameters
+    ----------
+    range_m : pair of float
+        Its ends. [m]
+    cpis : tuple of Cpi, length N
+        The CPIs with that pulse. [unitless]
+    first_opening_m : float array, shape N
+        Range nearer than which the laws are held constant. [m]
+    factor : float array, shape N × P
+        Clutter-to-noise against that of the reference pulse. [unitless]
+    strength_m4 : float array, shape N
+        The target's strength, beam shape taken off. [m⁴]
+    """
+
+    range_m: tuple[float, float]
+    cpis: tuple
+    first_opening_m: np.ndarray
+    factor: np.ndarray
+    strength_m4: np.ndarray
+
+
+class Echoes:
+    """Clutter and detection of one plan.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    """
+
+    def __init__(self, computed):
+        self.computed = computed
+        self.plan = computed.plan
+
+    @cached_property
+    def patches(self):
+        """Surface first, then rain and other moving patches."""
+        surface = () if self.plan.surface is None else (self.plan.surface,)
+        return (*surface, *self.plan.patches)
+
+    @cached_property
+    def parts(self):
+        """The range axis by the pulse that serves it: one part, or two with a near pulse."""
+        plan, (low, high) = self.plan, self.plan.range_m
+        if plan.near is None:
+            return (self._part((low, high), plan.pulse_s, plan.bandwidth_hz),)
+        change = min(max(plan.near.to_range_m, low), high)
+        near = np.full(plan.n, plan.near.pulse_s), np.full(plan.n, plan.near_bandwidth_hz)
+        parts = ((low, change), *near), ((change, high), plan.pulse_s, plan.bandwidth_hz)
+        return tuple(self._part(*part) for part in parts if part[0][0] < part[0][1])
+
+    def _part(self, range_m, pulse_s, bandwidth_hz):
+        plan = self.plan
+        made = cpis(
+            plan.pri_s,
+            plan.wavelength_m,
+            pulse_s,
+            bandwidth_hz,
+            plan.notch_m_s,
+            plan.pulses,
+            plan.fill_pulses,
+            plan.window,
+            plan.sidelobe_db,
+        )
+        opening = SPEED_OF_LIGHT_M_S / 2.0 * (plan.recovery_s + plan.received_min * pulse_s)
+        reference = float(plan.pulse_s[0]), float(plan.bandwidth_hz[0])
+        factor = [clutter.pulse_factor(patch, pulse_s, bandwidth_hz, *reference) for patch in self.patches]
+        return Part(range_m, made, opening, np.reshape(factor, (len(self.patches), plan.n)).T, self._strength(pulse_s))
+
+    def _strength(self, pulse_s):
+        """The target's strength on each PRF with a pulse of this length, less what the beam's shape costs."""
+        plan, wanted = self.plan, self.plan.target
+        if wanted.radar_equation is not None:
+            given = wanted.radar_equation
+            strength = target.radar_equation_strength(
+                given.peak_w,
+                given.gain_dbi,
+                given.rcs_m2,
+                given.noise_figure_db,
+                given.losses_db,
+                pulse_s,
+                plan.wavelength_m,
+            )
+        else:
+            measured = wanted.at_pulse_s or float(plan.pulse_s[0])
+            strength = target.reference_strength(wanted.snr_db, wanted.at_m, pulse_s, plan.wavelength_m, measured)
+        return strength * 10.0 ** (-self.beam_loss_db / 10.0)
+
+    @cached_property
+    def beam_loss_db(self):
+        """What each CPI loses because the beam has moved on, shape N; none for a given dwell. [dB]"""
+        plan = self.plan
+        if plan.dwell_s is not None or plan.time_on_target_s is None or self.computed.is_stagger:
+            return np.zeros(plan.n)
+        offsets = target.beam_offsets(plan.pri_s, plan.pulses, plan.fill_pulses, plan.time_on_target_s)
+        return target.beam_loss_db(offsets)
+
+    # --- clutter -------------------------------------------------------------------------------------------------
+
+    @cached_property
+    def pieces(self):
+        """The coverage in pieces of range, each with the speeds that notch and clutter leave clear."""
+        plan, clear = self.plan, self.computed.prf_speeds
+        return tuple(
+            piece
+            for part in self.parts
+            for piece in clutter_pieces.clear_pieces(
+                part.cpis, self.patches, part.first_opening_m, part.factor, clear, part.range_m, plan.speed_m_s
+            )
+        )
+
+    @cached_property
+    def share_with_clutter(self):
+        """Visible share with clutter counted too; ``None`` for a stagger, whose canceller has no such pieces."""
+        computed = self.computed
+        if computed.is_stagger:
+            return None
+        if not self.patches:
+            return computed.share
+        shares = visibility.pattern_shares_of_pieces(
+            computed.range_sweep, self.pieces, self.plan.speed_m_s, computed.looks
+        )
+        return visibility.visible(shares, computed.looks, computed.m).share
+
+    @cached_property
+    def fill_needed(self):
+        """Fill pulses that clutter asks for on each PRF, shape N; those that its farthest range keeps busy."""
+        farthest = max((patch.range_m[1] for patch in self.patches), default=0.0)
+        return self._fill_for(farthest) if farthest else np.zeros(self.plan.n, dtype=int)
+
+    @cached_property
+    def fill_for_target(self):
+        """Fill pulses that a target at the far end of the coverage asks for on each PRF, shape N."""
+        return self._fill_for(self.plan.range_m[1])
+
+    def _fill_for(self, range_m):
+        return clutter.fill_needed(2.0 * range_m / SPEED_OF_LIGHT_M_S, self.plan.pri_s, self.plan.pulse_s)
+
+    # --- detection -----------------------------------------------------------------------------------------------
+
+    @cached_property
+    def outputs(self):
+        """Outputs of each CPI whose powers are added: one of a filter bank, pulses less delays of a canceller."""
+        if not self.computed.is_stagger:
+            return 1
+        return int(self.plan.pulses[0]) - len(self.weights) + 1
+
+    @cached_property
+    def weights(self):
+        """Weights of the canceller of a stagger."""
+        return binomial_weights(self.plan.delays) if self.plan.weights is None else self.plan.weights
+
+    @cached_property
+    def false_alarm_per_cpi(self):
+        """False-alarm probability of one CPI, worked back from the overall one."""
+        return detection.false_alarm_per_cpi(self.plan.target.false_alarm, self.computed.looks, self.computed.m)
+
+    @cached_property
+    def cells(self):
+        """Gates × filters of the coverage; a canceller has gates only."""
+        plan = self.plan
+        gate = SPEED_OF_LIGHT_M_S / 2.0 / plan.bandwidth_hz
+        width = np.inf if self.computed.is_stagger else plan.wavelength_m / (2.0 * plan.pulses * plan.pri_s)
+        return detection.coverage_cells(plan.range_m, plan.speed_m_s, gate, width)
+
+    @property
+    def false_per_set(self):
+        """Expected false reports of one set of CPIs."""
+        return self.cells * self.plan.target.false_alarm
+
+    @cached_property
+    def false_per_scan(self):
+        """Expected false reports of one turn of the antenna; ``None`` where it does not turn."""
+        plan = self.plan
+        if plan.scan_period_s is None or plan.time_on_target_s is None:
+            return None
+        sets = detection.sets_per_scan(plan.scan_period_s, plan.time_on_target_s, self.computed.time_used_s)
+        return self.false_per_set * sets
+
+    @cached_property
+    def reach(self):
+        """How far the target is detected with the wanted probability; ``None`` where a canceller gives no output."""
+        plan, computed = self.plan, self.computed
+        wanted, case, part = plan.target.pd_wanted, plan.target.fluctuation, self.parts[-1]
+        if self.outputs < 1:
+            return None
+        level = detection.set_threshold(plan.target.false_alarm, computed.looks, computed.m, self.outputs)
+        limits = float(np.sort(part.first_opening_m)[computed.m - 1]), 4.0 * plan.range_m[1]
+        if not computed.is_stagger:
+            return reach(
+                part.cpis,
+                part.strength_m4,
+                computed.m,
+                level,
+                case,
+                wanted,
+                part.first_opening_m,
+                plan.range_m[1],
+                plan.speed_m_s,
+            )
+        speed, length = self._stagger_speeds()
+        gain = self.computed.response.response.power(speed) * part.strength_m4[0] * self.outputs
+        return reach_over(speed, length, gain[:, None], 1, level, case, wanted, limits, self.outputs)
+
+    def _stagger_speeds(self):
+        """Middles of equal steps of the wanted speeds, those in the notch around zero left out."""
+        low, high = self.plan.speed_m_s
+        edges = np.linspace(low, high, _STAGGER_SPEEDS + 1)
+        speed = (edges[:-1] + edges[1:]) / 2.0
+        notch = self.computed.response.notch_m_s
+        outside = np.abs(speed) >= notch
+        return speed[outside], np.full(int(outside.sum()), (high - low) / _STAGGER_SPEEDS)
+
+    def reached_km(self):
+        """Return best, median and worst reach over the wanted speeds outside the floor.
+
+        Returns
+        -------
+        reached : dict of float or None
+            ``None`` where the wanted probability is not reached. [km]
+        """
+        found = self.reach
+        names = ('best', 'median', 'worst')
+        if found is None:
+            return dict.fromkeys(names)
+        values = {name: getattr(found, name) for name in names}
+        return {name: None if math.isnan(value) else value / 1e3 for name, value in values.items()}
