@@ -114,23 +114,36 @@ class Decoder:
 
     def _with_blur(self, held, kind, counts, wanted, blur):
         """Apply the range rule at one blur, by remembered sieves of M - 1 PRIs where there are few of these."""
-        if not self._remembers or len(held) < self.limits.m:
+        m = self.limits.m
+        if not self._remembers or len(held) < m or wanted is not self.wanted_counts:
             return self._sieved(held, kind, counts, wanted, blur)
-        m, may = self.limits.m, np.ones(len(counts), dtype=bool)
+        known = self._sieves.setdefault((kind, float(blur or 0), len(counts), int(counts[0]), int(counts[-1])), {})
+        held, may = sorted(held), np.ones(len(counts), dtype=bool)
         for group in combinations(held, m):
-            if not self._remembered(group[:-1], group[-1][0], group[-1][1:], wanted, blur)[0]:
+            if not self._group_decodes(known, group, kind, counts, blur):
                 return ~may
         for group in combinations(held, m - 1):
-            may &= self._remembered(group, kind, counts, wanted, blur)
+            may &= self._group_sieve(known, group, kind, counts, blur)
         return may
 
-    def _remembered(self, group, kind, counts, wanted, blur):
-        key = group, kind, len(counts), int(counts[0]), int(counts[-1]), wanted, blur
-        found = self._sieves.get(key)
+    def _group_sieve(self, known, group, kind, counts, blur):
+        """Return the sieve of M - 1 PRIs, worked out once."""
+        found = known.get(group)
         if found is None:
-            if len(self._sieves) > 4 * _MOST_REMEMBERED:
-                self._sieves.clear()
-            found = self._sieves[key] = self._sieved(group, kind, counts, wanted, blur)
+            found = known[group] = self._sieved(group, kind, counts, self.wanted_counts, blur)
+        return found
+
+    def _group_decodes(self, known, group, kind, counts, blur):
+        """Return whether M PRIs decode: from the sieve of all but the last where that is one of the candidates."""
+        found = known.get(group)
+        if found is None:
+            other, last = group[-1]
+            at = int(np.searchsorted(counts, last))
+            if other == kind and at < len(counts) and counts[at] == last:
+                found = self._group_sieve(known, group[:-1], kind, counts, blur)[at]
+            else:
+                found = self._sieved(group[:-1], other, np.array([last]), self.wanted_counts, blur)[0]
+            known[group] = found
         return found
 
     def _sieved(self, held, kind, counts, wanted, blur):

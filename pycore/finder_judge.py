@@ -127,7 +127,7 @@ class Judge:
         regions = [(limits.range_m, limits.speed_m_s), *((part.range_m, part.speed_m_s) for part in limits.must_see)]
         self._scorers = [Scorer(limits, *region) for region in regions]
         self._wanted = [limits.visible, *(part.visible for part in limits.must_see)]
-        self._whole = {}
+        self._whole, self._each_time = {}, {}
 
     @property
     def weighed(self):
@@ -236,6 +236,14 @@ class Judge:
         place, pri_s = self.limits.places[kind], counts / float(self.limits.clock_hz)
         return (pulses_of(place, pri_s) + place.fill_pulses) * pri_s
 
+    def _one_time(self, kind, pri):
+        """Return what one PRI takes with its pulses, remembered. [s]"""
+        if (kind, pri) not in self._each_time:
+            if len(self._each_time) > 100_000:
+                self._each_time.clear()
+            self._each_time[kind, pri] = float(self._time(kind, np.array([pri]))[0])
+        return self._each_time[kind, pri]
+
     def times(self):
         """Return the parts of the times that sets can use.
 
@@ -262,7 +270,7 @@ class Judge:
             With fill pulses. [s]
         """
         pairs = zip(self.kinds, pris, strict=True)
-        return float(sum(self._time(kind, np.array([pri]))[0] for kind, pri in pairs))
+        return sum(self._one_time(*pair) for pair in pairs)
 
     def legal(self, held, kind, counts):
         """Return which candidates are far enough from the PRIs that are held.
@@ -304,8 +312,7 @@ class Judge:
             For each candidate.
         """
         share = [scorer.shares(held, tables) for scorer, tables in zip(self._scorers, block.tables, strict=True)]
-        # Summed in the order of the PRIs, whichever place is the last, so that rounding has less to say.
-        time_s = block.time_s + float(sum(self._time(kind, np.array([pri]))[0] for kind, pri in held))
+        time_s = block.time_s + sum(self._one_time(*one) for one in held)
         limit_s = self.limits.time_s
         late = time_s * 0.0 if limit_s is None else short_of(-time_s, -limit_s)
         short = np.stack([late, *(short_of(got, wanted) for got, wanted in zip(share, self._wanted, strict=True))])
@@ -331,10 +338,12 @@ class Judge:
         pris : tuple of int, length N
             The same plan. [clock counts]
         """
+        if len(self.choices) == 1:
+            return tuple(sorted(pris))
         rising = {
             kind: iter(sorted(p for k, p in zip(self.kinds, pris, strict=True) if k == kind)) for kind in self.kinds
         }
-        return tuple(int(next(rising[kind])) for kind in self.kinds)
+        return tuple(next(rising[kind]) for kind in self.kinds)
 
     def settle(self, pris):
         """Return the shortfalls of one set that only a full look at it shows.

@@ -229,10 +229,18 @@ def check(limits):
     _refuse(limits.apart_counts < 0, 'apart', f'The least difference must not be negative; got {limits.apart_counts}.')
     for name, (a, b) in (('range', limits.range_m), ('speed', limits.speed_m_s)):
         _refuse(not a < b, name, f'The coverage in {name} is empty: from {a} to {b}.')
-    _refuse(limits.decode not in ('blur', 'exact', 'none'), 'decode', f'Decoding is judged by blur, exact or none; got {limits.decode}.')
+    _refuse(
+        limits.decode not in ('blur', 'exact', 'none'),
+        'decode',
+        f'Decoding is judged by blur, exact or none; got {limits.decode}.',
+    )
     places = [place for place, _ in limits.keep]
     _refuse(len(set(places)) < len(places), 'keep', 'Two PRIs to keep have the same place.')
-    _refuse(any(not 0 <= place < limits.n for place in places), 'keep', f'More PRIs to keep than the {limits.n} of the plan.')
+    _refuse(
+        any(not 0 <= place < limits.n for place in places),
+        'keep',
+        f'More PRIs to keep than the {limits.n} of the plan.',
+    )
     _refuse(
         limits.stagger is not None and (limits.m != 1 or len(set(limits.places)) > 1),
         'm',
