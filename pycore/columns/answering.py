@@ -4,7 +4,7 @@ import numpy as np
 
 from pycore.columns.blind_parts import gaps
 from pycore.columns.named import names_at
-from pycore.wording import percent, significant, trimmed, with_unit
+from pycore.wording import THIN_SPACE, percent, significant, trimmed, with_unit
 
 LOWEST_DB, HIGHEST_DB = -50.0, 10.0
 """Response at the bottom and the top of the figure, unless the least response asks for more. [dB]"""
@@ -88,7 +88,10 @@ def _marked(computed, axis, least, low, high):
     """Return the marked speeds inside the axis, with their names beside the line that leaves them room."""
     found = computed.response
     repeat = 'true first blind speed' if found.is_blind else 'response repeats'
-    marks = [(found.first_below_m_s, f'first below {trimmed(least)} dB'), (found.true_first_blind_m_s, repeat)]
+    marks = [
+        (found.first_below_m_s, f'first below {trimmed(least)}{THIN_SPACE}dB'),
+        (found.true_first_blind_m_s, repeat),
+    ]
     inside = [(speed, name) for speed, name in marks if speed is not None and axis.limits[0] < speed < axis.limits[1]]
     x = np.array([float(axis.shown(speed)) for speed, _ in inside])
     # Names stand at the top, one under the other, on the side of the line with more room.
@@ -99,7 +102,7 @@ def _marked(computed, axis, least, low, high):
         'names': names_at(
             np.append(x, axis.ends[1]),
             np.append(rows, least),
-            [*(f'{name}, {axis.text(speed)}' for speed, name in inside), f'blind below {trimmed(least)} dB'],
+            [*(f'{name}, {axis.text(speed)}' for speed, name in inside), f'blind below {trimmed(least)}{THIN_SPACE}dB'],
             ['top_right' if right else 'top_left' for right in [*right_half.tolist(), True]],
             np.append(np.where(right_half, -3.0, 3.0), 0.0),
             np.append(np.zeros(x.size), 2.0),
@@ -108,7 +111,7 @@ def _marked(computed, axis, least, low, high):
 
 
 def _words(computed, axis, least):
-    found, limit = computed.response, f'{trimmed(least)} dB'
+    found, limit = computed.response, f'{trimmed(least)}{THIN_SPACE}dB'
     sentences = [_first_fall(found, axis, limit), _repeat(found, axis), *_deepest(found, axis)]
     share = f'{percent(found.share_above)} of the speeds, {axis.span()}, stand at or above {limit}.'
     return {
@@ -124,11 +127,10 @@ def _first_fall(found, axis, limit):
     if not np.isfinite(found.notch_m_s):
         return f'The response never reaches {limit}.'
     if found.first_below_m_s is None:
-        return f'Outside the notch around zero the response never falls below {limit}.'
-    return (
-        f'The response first falls below {limit} at {axis.text(found.first_below_m_s)}, '
-        f'beyond the notch around zero, {axis.text(found.notch_m_s)} wide to either side.'
-    )
+        return f'Outside the notch around zero, the response never falls below {limit}.'
+    beyond = f', beyond the notch around zero, {axis.text(found.notch_m_s)} wide to either side'
+    fall = f'The response first falls below {limit} at {axis.text(found.first_below_m_s)}'
+    return f'{fall}{beyond if found.notch_m_s > 0 else ""}.'
 
 
 def _repeat(found, axis):

@@ -3,7 +3,7 @@
 import math
 from dataclasses import dataclass
 
-from pycore.wording import DISTANCE, SPEED, between, trimmed, with_unit
+from pycore.wording import DISTANCE, SPEED, THIN_SPACE, between, significant, trimmed, with_unit
 
 _SAME = 1e-9
 """Part of an axis within which a point counts as lying on its end."""
@@ -52,12 +52,21 @@ class Axis:
         """Return an interval in words; an end that is the axis' own is written as it was typed."""
         ends = self.shown(low), self.shown(high)
         if self._at_end(low) and self._at_end(high):
-            return f'{trimmed(ends[0])} to {trimmed(ends[1])} {self.unit}'
+            return f'{self._typed(low)} to {self._typed(high)}{THIN_SPACE}{self.unit}'
         return between(*ends, self.unit)
 
     def span(self):
         """Return the whole axis in words."""
         return self.interval(*self.limits)
+
+    def wanted(self, value):
+        """Return a value of the plan as it was typed, with its unit."""
+        return f'{self._typed(value)}{THIN_SPACE}{self.unit}'
+
+    def _typed(self, value):
+        """Return all digits in the plan's own unit, three figures in another."""
+        shown = self.shown(value)
+        return trimmed(shown) if self.unit in ('km', 'm/s') else significant(shown)
 
     def _at_end(self, value):
         slack = _SAME * (self.limits[1] - self.limits[0])
@@ -121,7 +130,7 @@ def interval_name(pri_s, units):
     """
     unit = units['pri']
     value = {'us': 1e6 * pri_s, 'ms': 1e3 * pri_s, 'Hz': 1.0 / pri_s, 'kHz': 1e-3 / pri_s}[unit]
-    return f'{trimmed(value)} {"µs" if unit == "us" else unit}'
+    return f'{trimmed(value)}{THIN_SPACE}{"µs" if unit == "us" else unit}'
 
 
 def decade_ticks(low, high):

@@ -73,6 +73,46 @@ def zones(swept, n, m):
     return runs(swept, np.bitwise_count(swept.pattern & (1 << n) - 1) < m)
 
 
+def outside(limits, floor):
+    """Return how much of an axis lies outside some zones.
+
+    Parameters
+    ----------
+    limits : tuple of two floats
+        Ends of the axis. [m or m/s]
+    floor : float array, shape (F, 2)
+        Zones. [m or m/s]
+
+    Returns
+    -------
+    length : float
+        What they leave. [m or m/s]
+    """
+    return float(limits[1] - limits[0] - np.diff(floor).sum())
+
+
+def within(gaps, floor, limits):
+    """Return whether all gaps of all PRFs lie within some zones.
+
+    Parameters
+    ----------
+    gaps : Spans
+        Blind intervals. [m or m/s]
+    floor : float array, shape (F, 2)
+        Zones, rising. [m or m/s]
+    limits : tuple of two floats
+        Ends of the axis. [m or m/s]
+
+    Returns
+    -------
+    within : bool
+        True also where there is no gap.
+    """
+    slack = EDGE_TOLERANCE * (limits[1] - limits[0])
+    inside = (gaps.start[:, None] >= floor[:, 0] - slack) & (gaps.stop[:, None] <= floor[:, 1] + slack)
+    return bool(inside.any(axis=1).all())
+
+
 def avoidable(sight, axis):
     """Return where fewer than M PRFs are clear although another plan could be, and where none could.
 

@@ -9,11 +9,11 @@ import numpy as np
 
 from pycore.columns import answering
 from pycore.columns.axes import interval_name, speed_axis
-from pycore.columns.blind_parts import avoidable, gaps, zones
+from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import looks
 from pycore.columns.zone_sentences import zones_sentence
-from pycore.wording import listed, percent, significant
+from pycore.wording import THIN_SPACE, listed, percent, significant
 
 NAME, TITLE = 'blind-speeds', 'Blind speeds'
 
@@ -75,20 +75,15 @@ def _lanes(plan, axis, notches, unseen):
 def _words(computed, axis, names, notches, unseen):
     said = looks(computed.looks, computed.m, 'blind')
     found, floor = avoidable(computed.sight, 1)
-    outside = 'outside the notch around zero' if len(floor) else ''
-    first = zones_sentence(found, axis, 'speed', said, _only_around_zero(computed, notches), outside)
+    where = 'outside the notch around zero' if len(floor) else ''
+    everywhere, whole = within(notches, floor, axis.limits), outside(axis.limits, floor)
+    first = zones_sentence(found, axis, 'speed', said, everywhere, whole, where)
     return {
         'caption': f'{first} {_first_blind_speeds(computed, axis)}',
         'short': first,
         'summary': _summary(computed, axis, names, unseen),
         'table': _table(computed, axis, names, notches),
     }
-
-
-def _only_around_zero(computed, notches):
-    """Return whether no PRF is blind but in its notch around zero."""
-    notch = computed.plan.notch_m_s[notches.prf]
-    return bool(((notches.start >= -notch - 1e-9) & (notches.stop <= notch + 1e-9)).all())
 
 
 def _first_blind_speeds(computed, axis):
@@ -107,7 +102,7 @@ def _first_blind_speeds(computed, axis):
             'The PRFs have their first blind speeds',
             f'from {significant(speeds[0])} to {significant(speeds[-1])}',
         )
-    return f'{lead} {shown} {axis.unit}.'
+    return f'{lead} {shown}{THIN_SPACE}{axis.unit}.'
 
 
 def _summary(computed, axis, names, unseen):

@@ -20,9 +20,10 @@ PITCH = 7
 
 @lru_cache
 def _class_of_count(n, m):
-    table = np.full(n + 1, MORE, dtype=np.uint8)
+    """Return the class of every number of clear PRFs, as a table that bytes are translated by."""
+    table = np.full(256, MORE, dtype=np.uint8)
     table[:m], table[m], table[n], table[0] = TOO_FEW, JUST_ENOUGH, ALL, NONE
-    return table
+    return table.tobytes()
 
 
 def classes(count, n, m):
@@ -42,7 +43,8 @@ def classes(count, n, m):
     code : uint8 array, shape (V, R)
         Index into ``NAMES``.
     """
-    code = _class_of_count(n, m)[count]
+    # Translating bytes is several times faster than looking each cell up in an array.
+    code = np.frombuffer(bytearray(count.tobytes()).translate(_class_of_count(n, m)), np.uint8).reshape(count.shape)
     blind = count < m
     inner = np.ones_like(blind)
     inner[1:] &= blind[:-1]

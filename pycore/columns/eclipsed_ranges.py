@@ -7,7 +7,7 @@ Sources: ``lanes`` (a bar along each lane), ``eclipsed`` (on each PRF), ``unseen
 import numpy as np
 
 from pycore.columns.axes import interval_name, range_axis
-from pycore.columns.blind_parts import avoidable, gaps, zones
+from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import cycle_looks, looks
 from pycore.columns.received import received_corners
@@ -89,18 +89,18 @@ def _down_to_the_base(corners):
 def _words(computed, axis, names, eclipsed, unseen):
     said = cycle_looks() if computed.is_stagger else looks(computed.looks, computed.m, 'eclipsed')
     found, floor = avoidable(computed.sight, 0)
-    found, where = _within_the_cycle(computed, axis, found, _beyond(floor, axis))
-    first = zones_sentence(found, axis, 'range', said, not eclipsed.start.size, where)
-    sentences = [first]
+    where, whole, everywhere = _beyond(floor, axis), outside(axis.limits, floor), within(eclipsed, floor, axis.limits)
+    found, where = _within_the_cycle(computed, axis, found, where)
+    sentences = [zones_sentence(found, axis, 'range', said, everywhere, whole, where)]
     if computed.is_stagger:
         sentences += _beyond_the_cycle(computed, axis)
-    elif computed.plan.n > 1:
+    elif computed.plan.n > 1 and not everywhere:
         sentences += _worst(computed, names)
     if computed.plan.n <= MOST_WITH_SHARE:
-        sentences.append('Under each lane: the received share of the echo.')
+        sentences.append(f'Under {"the" if computed.plan.n == 1 else "each"} lane: the received share of the echo.')
     return {
         'caption': ' '.join(sentences),
-        'short': first,
+        'short': sentences[0],
         'summary': _summary(computed, axis, names, eclipsed, unseen),
         'table': _table(computed, axis, names, eclipsed),
     }
@@ -114,9 +114,9 @@ def _beyond(floor, axis):
 
 
 def _worst(computed, names):
-    """Say which PRF loses most, where any loses something."""
+    """Say which PRF loses most, unless each loses everything."""
     shares = computed.eclipsed_shares
-    if shares.max() <= 1e-12:
+    if shares.min() >= 1 - 1e-12:
         return []
     if np.ptp(shares) <= 1e-9:
         return [f'Each PRF loses {percent(float(shares[0]))} of the ranges.']

@@ -4,7 +4,7 @@ import numpy as np
 
 from pycore import bands
 from pycore.constants import SPEED_OF_LIGHT_M_S
-from pycore.wording import capitalised, count_word, listed, significant, trimmed
+from pycore.wording import THIN_SPACE, capitalised, count_word, listed, significant, trimmed
 
 
 def words(computed, x, y, names):
@@ -37,7 +37,7 @@ def _carrier(plan):
     """Say the carrier, or the lowest of several, and its band."""
     lowest = float(plan.carrier_hz.min())
     name = bands.band(lowest)
-    shown = f'{trimmed(lowest / 1e9)} GHz'
+    shown = f'{trimmed(lowest / 1e9)}{THIN_SPACE}GHz'
     where = f'at {shown} ({name} band)' if name else f'at {shown}'
     return where if np.ptp(plan.carrier_hz) == 0 else f'even {where}'
 
@@ -46,19 +46,14 @@ def _shortfall(computed, x, y):
     """Say whether one PRF can be unambiguous over the coverage, and at which PRFs or how far it falls short."""
     plan, times = computed.plan, computed.shortfall
     span = plan.speed_m_s[1] - plan.speed_m_s[0]
-    asked = f'{_typed(plan.range_m[1], x)} and over {_typed(span, y)}'
+    asked = f'{x.wanted(plan.range_m[1])} and over {y.wanted(span)}'
     if times > 1:
         short = f'it falls short {significant(times)} times over'
         return capitalised(f'{_carrier(plan)} no single PRF is unambiguous out to {asked}: {short}.')
     low = 2 * span / float(plan.wavelength_m.max())
     high = SPEED_OF_LIGHT_M_S / 2 / plan.range_m[1]
-    prf = f'a single PRF from {significant(low)} to {significant(high)} Hz'
+    prf = f'a single PRF from {significant(low)} to {significant(high)}{THIN_SPACE}Hz'
     return capitalised(f'{_carrier(plan)} {prf} is unambiguous out to {asked}.')
-
-
-def _typed(value, axis):
-    """Return a wanted value as it was typed."""
-    return f'{trimmed(axis.shown(value))} {axis.unit}'
 
 
 def _given(computed, x, y):
@@ -73,10 +68,10 @@ def _given(computed, x, y):
     else:
         shown = [list(dict.fromkeys(map(significant, values[order].tolist()))) for values in (reach, speed, nyquist)]
         ends = [listed(shown[0]), listed(shown[1]), listed(f'± {text}' for text in shown[2])]
-    count = computed.plan.n
-    who = "The plan's " + ('one PRF gives' if count == 1 else f'{count_word(count)} PRFs give')
-    blind = f'{"a first blind speed" if count == 1 else "first blind speeds"} of {ends[1]} {y.unit}'
-    return f'{who} {ends[0]} {x.unit} and {blind} (Nyquist {ends[2]} {y.unit}).'
+    count, noun = computed.plan.n, 'interval' if computed.is_stagger else 'PRF'
+    who = f"The plan's {count_word(count)} {noun + ' gives' if count == 1 else noun + 's give'}"
+    blind = f'{"a first blind speed" if count == 1 else "first blind speeds"} of {ends[1]}{THIN_SPACE}{y.unit}'
+    return f'{who} {ends[0]}{THIN_SPACE}{x.unit} and {blind} (Nyquist {ends[2]}{THIN_SPACE}{y.unit}).'
 
 
 def _table(computed, x, y, names):

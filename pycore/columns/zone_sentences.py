@@ -3,7 +3,7 @@
 from pycore.wording import capitalised, count_word
 
 
-def zones_sentence(zones, axis, noun, looks, everywhere_clear, before=''):
+def zones_sentence(zones, axis, noun, looks, everywhere_clear, whole, before=''):
     """Say which zones are clear on too few PRFs.
 
     Parameters
@@ -18,6 +18,8 @@ def zones_sentence(zones, axis, noun, looks, everywhere_clear, before=''):
         What is said of the PRFs. [unitless]
     everywhere_clear : bool
         Whether no PRF is blind anywhere. [unitless]
+    whole : float
+        Length of the axis on which there could be zones. [m or m/s]
     before : str
         Where the sentence holds, such as ``'outside the notch around zero'``. [unitless]
 
@@ -28,11 +30,11 @@ def zones_sentence(zones, axis, noun, looks, everywhere_clear, before=''):
     """
     if not len(zones):
         clear = looks.all_clear if everywhere_clear else looks.enough
-        return capitalised(f'{before}{"," if before else ""} every {noun} is {clear}.'.strip(' ,'))
+        return capitalised(f'{before}, every {noun} is {clear}.'.removeprefix(', '))
     width = zones[:, 1] - zones[:, 0]
-    if width.sum() >= (1 - 1e-9) * (axis.limits[1] - axis.limits[0]):
-        return capitalised(f'every {noun} is {looks.too_few}.')
     where = f'{before}, ' if before else ''
+    if width.sum() >= whole - 1e-9 * (axis.limits[1] - axis.limits[0]):
+        return capitalised(f'{where}every {noun} is {looks.too_few}.')
     if len(zones) <= 2:
         listed = ' and '.join(axis.interval(*zone) for zone in zones)
         return capitalised(f'{where}{listed} {"is" if len(zones) == 1 else "are"} {looks.too_few}.')

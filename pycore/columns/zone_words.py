@@ -1,11 +1,31 @@
 """The words of the figure of blind zones: holes first, then what dark and pale stand for."""
 
-from dataclasses import replace
+from dataclasses import dataclass, replace
 
+from pycore.columns.axes import Axis
 from pycore.columns.blind_parts import avoidable
-from pycore.wording import capitalised, count_word, percent, plural
+from pycore.wording import capitalised, count_word, percent
 
 _MOST_IN_SUMMARY = 8
+_MOSTLY = 0.8
+"""Part of its box from which on a hole is said to be where its box is. [unitless]"""
+
+
+@dataclass(frozen=True, slots=True)
+class _Place:
+    """The coverage, as holes are placed in it.
+
+    Parameters
+    ----------
+    x, y : Axis
+        Of range and radial speed, cut to what any plan could see. [m, m/s]
+    area : float
+        Of the whole coverage. [m²/s]
+    """
+
+    x: Axis
+    y: Axis
+    area: float
 
 
 def words(computed, x, y):
@@ -23,22 +43,27 @@ def words(computed, x, y):
     words : dict
         caption, short, summary, table.
     """
-    x = _from_the_first_opening(computed, x)
-    first = _holes_sentence(computed.holes, x, y)
+    (near, far), (slow, fast) = x.limits, y.limits
+    seeable = _outside_the_floor(computed, x, 0), _outside_the_floor(computed, y, 1)
+    place = _Place(*seeable, (far - near) * (fast - slow))
+    first = _holes_sentence(computed.holes, place)
     return {
         'caption': f'{first} {key_sentence(computed.looks, computed.m)}',
         'short': first,
-        'summary': _summary(computed, x, y),
+        'summary': f'{_counts(computed, x, y)} {first}{_listed(computed.holes, place)}',
         'table': _table(computed.holes, x, y),
     }
 
 
-def _from_the_first_opening(computed, x):
-    """Return the axis without the ranges that no plan can see: a hole that fills the rest is at every range."""
-    _, floor = avoidable(computed.sight, 0)
-    if len(floor) and floor[0, 0] <= x.limits[0] and floor[0, 1] < x.limits[1]:
-        return replace(x, limits=(float(floor[0, 1]), x.limits[1]))
-    return x
+def _outside_the_floor(computed, axis, which):
+    """Return an axis cut to what any plan could see: a hole that fills that much is at every range or speed."""
+    _, floor = avoidable(computed.sight, which)
+    low, high = axis.limits
+    if len(floor) and floor[0, 0] <= low:
+        low = min(float(floor[0, 1]), high)
+    if len(floor) and floor[-1, 1] >= high:
+        high = max(float(floor[-1, 0]), low)
+    return replace(axis, limits=(low, high)) if low < high else axis
 
 
 def key_sentence(n, m):
@@ -76,29 +101,36 @@ def _from_to(low, high):
     return f'{count_word(low)} {"or" if high == low + 1 else "to"} {count_word(high)}'
 
 
-def _holes_sentence(holes, x, y):
+def _holes_sentence(holes, place):
     """Name the holes: none, one, two, or how many and the largest."""
     if not holes.count:
         return 'There is no hole: all that another plan could see is seen.'
-    where = [_where(hole, x, y) for hole in holes.listed[:2]]
+    where = [_where(hole, place) for hole in holes.listed[:2]]
     if holes.count == 1:
         return f'One hole, {where[0]}; {percent(holes.share)} of the coverage.'
     if holes.count == 2:
         return f'Two holes, {percent(holes.share)} of the coverage: 1, {where[0]}; 2, {where[1]}.'
-    return capitalised(
-        f'{count_word(holes.count)} holes, {percent(holes.share)} of the coverage; the largest is {where[0]}.'
-    )
+    lead = f'{count_word(holes.count)} holes, {percent(holes.share)} of the coverage'
+    return capitalised(f'{lead}; 1, the largest, is {where[0]}.')
 
 
-def _where(hole, x, y):
-    """Say where a hole lies, an axis that it fills as ``at every``."""
-    speed = y.interval(*hole.speed_m_s)
-    if _fills(hole.range_m, x) and _fills(hole.speed_m_s, y):
-        return 'at every range and speed'
-    if _fills(hole.range_m, x):
-        return f'{speed} at every range'
-    distance = x.interval(*hole.range_m)
-    return f'{distance} at every speed' if _fills(hole.speed_m_s, y) else f'{distance} and {speed}'
+def _where(hole, place):
+    """Say where a hole lies, or what it runs through where its own area is little of its box."""
+    (near, far), (slow, fast) = hole.range_m, hole.speed_m_s
+    full = hole.share * place.area > _MOSTLY * (far - near) * (fast - slow)
+    if _fills(hole.range_m, place.x) and _fills(hole.speed_m_s, place.y):
+        return 'at every range and speed' if full else 'spread over all ranges and speeds'
+    return _box(hole, place) if full else f'spread over {_box(hole, place)}'
+
+
+def _box(hole, place):
+    """Say the extent of a hole, an axis that it fills as ``at every``."""
+    if _fills(hole.range_m, place.x):
+        return f'{place.y.interval(*hole.speed_m_s)} at every range'
+    distance = place.x.interval(*hole.range_m)
+    if _fills(hole.speed_m_s, place.y):
+        return f'{distance} at every speed'
+    return f'{distance} and {place.y.interval(*hole.speed_m_s)}'
 
 
 def _fills(ends, axis):
@@ -106,24 +138,29 @@ def _fills(ends, axis):
     return ends[0] <= axis.limits[0] + slack and ends[1] >= axis.limits[1] - slack
 
 
-def _summary(computed, x, y):
-    """Describe the whole map for someone who does not see it."""
-    whole = replace(x, limits=tuple(computed.plan.range_m))
-    n, holes = computed.looks, computed.holes
+def _counts(computed, x, y):
+    """Say what the map shows and how much of it is seen by how many, for someone who does not see it."""
+    n = computed.looks
     shares = [percent(max(float(share), 0.0)) for share in computed.visible.by_count]
-    if n == 1:
-        counts = f'{shares[1]} of it is seen'
-    else:
-        counts = ', '.join(f'by {count_word(i) if i else "none"} {share}' for i, share in enumerate(shares))
-        counts = (
-            f'{percent(computed.share)} of it is seen by at least {count_word(computed.m)} of {count_word(n)}; {counts}'
-        )
-    listed = '; '.join(f'{i + 1}, {_where(hole, x, y)}' for i, hole in enumerate(holes.listed[:_MOST_IN_SUMMARY]))
-    more = f' The largest {plural(len(holes.listed[:_MOST_IN_SUMMARY]), "hole", "holes")}: {listed}.' if listed else ''
+    said = f'{shares[1]} of it is seen' if n == 1 else _shares(computed, n, shares)
     return (
-        f'Map of the number of PRFs that see a target, over range, {whole.span()}, and radial speed, {y.span()}. '
-        f'{counts}. {percent(computed.floor_share)} is what no plan can see. {_holes_sentence(holes, x, y)}{more}'
+        f'Map of the number of PRFs that see a target, over range, {x.span()}, and radial speed, {y.span()}. '
+        f'{said}. {percent(computed.floor_share)} is what no plan can see.'
     )
+
+
+def _shares(computed, n, shares):
+    counts = ', '.join(f'by {count_word(i) if i else "none"} {share}' for i, share in enumerate(shares))
+    enough = f'at least {count_word(computed.m)} of {count_word(n)}'
+    return f'{percent(computed.share)} of it is seen by {enough}: {counts}'
+
+
+def _listed(holes, place):
+    """List the largest holes, where the sentence before has not named them all."""
+    if holes.count <= 2:
+        return ''
+    some = holes.listed[:_MOST_IN_SUMMARY]
+    return f' The largest: {"; ".join(f"{i + 1}, {_where(hole, place)}" for i, hole in enumerate(some))}.'
 
 
 def _table(holes, x, y):

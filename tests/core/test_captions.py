@@ -1,0 +1,70 @@
+"""Captions as they stand under the figures, read aloud by a person: forms for none, one, two, many and everything.
+
+The sentences come from our own run; their numbers are those of the core, which other tests hold against
+published values and plain grids. Narrow spaces stand as plain ones in the table.
+"""
+
+import json
+from pathlib import Path
+
+import pytest
+
+from pycore import columns
+from pycore.columns.looks import looks
+from pycore.columns.zone_words import key_sentence
+from pycore.computed import Computed
+from pycore.plan import read
+from pycore.wording import SHOWN_UNITS, THIN_SPACE
+
+CASES = json.loads((Path(__file__).parent / 'captions.json').read_text(encoding='utf-8'))
+
+
+@pytest.mark.parametrize('case', CASES, ids=[case['name'] for case in CASES])
+def test_captions_say_what_they_should(case):
+    computed, units = Computed(read(case['plan'])), {**SHOWN_UNITS, **case.get('units', {})}
+    said = {
+        name: columns.picture(name, computed, units, {'width': 60, 'height': 40})['caption'].replace(THIN_SPACE, ' ')
+        for name in columns.order(computed.plan.kind)
+    }
+    assert said == case['captions']
+
+
+def test_the_table_of_captions_has_every_form():
+    said = ' '.join(caption for case in CASES for caption in case['captions'].values())
+    forms = (
+        'Every range is clear on both',
+        'is eclipsed on both',
+        'are eclipsed on both',
+        'the widest is',
+        'every range is',
+    )
+    assert len(CASES) == 19
+    assert all(form in said for form in forms)
+
+
+@pytest.mark.parametrize(
+    ('n', 'm', 'enough', 'too_few'),
+    [
+        (1, 1, 'clear', 'eclipsed'),
+        (2, 1, 'clear on at least one of the two PRFs', 'eclipsed on both PRFs'),
+        (2, 2, 'clear on both PRFs', 'eclipsed on at least one of the two PRFs'),
+        (8, 3, 'clear on at least three of the eight PRFs', 'clear on fewer than three of the eight PRFs'),
+        (16, 16, 'clear on all 16 PRFs', 'eclipsed on at least one of the 16 PRFs'),
+    ],
+)
+def test_enough_and_too_few_are_said_for_any_m_of_n(n, m, enough, too_few):
+    said = looks(n, m, 'eclipsed')
+    assert (said.enough, said.too_few) == (enough, too_few)
+
+
+@pytest.mark.parametrize(
+    ('n', 'm', 'text'),
+    [
+        (1, 1, 'Hatched: not seen; plain: seen.'),
+        (2, 1, 'Hatched: seen by no PRF; pale: by one; plain: by both.'),
+        (3, 3, 'Hatched: seen by no PRF; brown: by one or two, too few; plain: by all three.'),
+        (3, 1, 'Hatched: seen by no PRF; pale: by one; paler: by two; plain: by all three.'),
+    ],
+)
+def test_the_key_names_only_the_tones_that_the_map_can_have(n, m, text):
+    assert key_sentence(n, m) == text

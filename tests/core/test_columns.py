@@ -1,0 +1,309 @@
+"""Columns of the figures: they fit the built documents by name, and show what was computed."""
+
+import re
+
+import numpy as np
+import pytest
+from hypothesis import HealthCheck, given, settings
+from hypothesis import strategies as st
+
+from pycore import columns, zones
+from pycore.columns import blind_zones, classes
+from pycore.columns.axes import decade_ticks, interval_name, range_axis, speed_axis
+from pycore.columns.blind_parts import avoidable, gaps
+from pycore.columns.received import received_corners
+from pycore.computed import Computed
+from pycore.eclipsing import received_share
+from pycore.patterns import sweep
+from pycore.plan import read
+from pycore.spans import Spans
+from pycore.wording import SHOWN_UNITS, THIN_SPACE
+
+OPENING = {
+    'radar': {'carrier_ghz': 2.8, 'pulse_us': 1.0, 'recovery_us': 1.0},
+    'coverage': {'range_km': [2.0, 110.0], 'speed_mps': [0.0, 300.0]},
+    'must_see': [{'name': 'final approach', 'range_km': [4.0, 30.0], 'speed_mps': [40.0, 110.0], 'visible_pct': 100.0}],
+    'waveform': {'pri_us': [980.0, 860.0], 'pulses': 9, 'detect_m': 1},
+    'doppler': {'notch_mps': 6.0},
+}
+STAGGER = {
+    **OPENING,
+    'coverage': {'range_km': [1.0, 180.0], 'speed_mps': [0.0, 1200.0]},
+    'waveform': {'kind': 'stagger', 'pri_us': [950.0, 1140.0, 1026.0, 1178.0], 'pulses': 20},
+}
+FEW = settings(max_examples=30, deadline=None, suppress_health_check=[HealthCheck.too_slow])
+ONE_MILLIMETRE = 1e-3
+SIZE = {'width': 160, 'height': 90}
+BROKEN = re.compile(rf'nan|\binf\b|None|  | ,|\.\.|[{{}}]|-|(?<![\d.])0\.0+[ {THIN_SPACE}]%')
+"""What no sentence may hold: what was left out, set wrongly, a hyphen for a minus, nothing for something."""
+
+
+def pictures(document, units=SHOWN_UNITS, size=SIZE):
+    computed = Computed(read(document))
+    return {name: columns.picture(name, computed, units, size) for name in columns.FIGURES}
+
+
+def texts(value):
+    """All text in a picture."""
+    if isinstance(value, str):
+        yield value
+    for part in value.values() if isinstance(value, dict) else value if isinstance(value, list) else ():
+        yield from texts(part)
+
+
+@st.composite
+def documents(draw):
+    """Plans of both kinds, with everything from never to always blind."""
+    n = draw(st.integers(1, 16))
+    kind = draw(st.sampled_from(['dwells', 'dwells', 'stagger']))
+    pri = draw(st.lists(st.integers(30, 1500), min_size=n, max_size=n))
+    low, slow = draw(st.sampled_from([0.0, 0.3, 20.0])), draw(st.sampled_from([-300.0, 0.0, 25.0]))
+    near = {'pulse_us': 0.5, 'bandwidth_mhz': 2.0, 'sent_at_us': 12.0, 'to_km': 9.0}
+    return {
+        'radar': {
+            'carrier_ghz': draw(st.sampled_from([1.3, 2.8, 9.6])),
+            'pulse_us': draw(st.sampled_from([0.5, 4.0, 9.5])),
+            'recovery_us': draw(st.sampled_from([0.0, 1.0, 2000.0])),
+            'guard_us': draw(st.sampled_from([0.0, 2.5])),
+            'near_pulse': draw(st.sampled_from([None, None, near])),
+        },
+        'coverage': {'range_km': [low, low + draw(st.sampled_from([4.0, 150.0]))], 'speed_mps': [slow, slow + 500.0]},
+        'must_see': [{'name': '', 'range_km': [low + 1, low + 3], 'speed_mps': [slow, slow + 90.0]}],
+        'waveform': {
+            'kind': kind,
+            'pri_us': [float(value) for value in pri],
+            'pulses': 24,
+            'detect_m': draw(st.integers(1, n)) if kind == 'dwells' else 1,
+            'received_min': draw(st.sampled_from([0.0, 0.5, 1.0])),
+        },
+        'doppler': {'notch_mps': draw(st.sampled_from([0.0, 8.0, 900.0]))},
+    }
+
+
+@pytest.mark.parametrize('document', [OPENING, STAGGER], ids=['dwells', 'stagger'])
+@pytest.mark.parametrize('name', columns.FIGURES)
+def test_the_built_document_takes_every_column_that_the_core_gives_and_no_other(name, document):
+    from bokeh.models import ColumnDataSource
+
+    from webapp import figures
+
+    picture = pictures(document)[name]
+    drawn = figures.drawn(name, picture)
+    built = {source.name: set(source.data) for source in drawn.select({'type': ColumnDataSource}) if source.name}
+    assert built == {f'{name}/{source}': set(data) for source, data in picture['columns'].items()}
+
+
+@pytest.mark.parametrize('name', columns.FIGURES)
+def test_the_built_document_has_the_ranges_axes_and_heading_that_the_page_changes(name):
+    from webapp import figures
+
+    picture = pictures(OPENING)[name]
+    drawn = figures.drawn(name, picture)
+    assert (drawn.x_range.name, drawn.y_range.name) == (f'{name}/x', f'{name}/y')
+    assert [drawn.x_range.start, drawn.x_range.end] == picture['ranges']['x']
+    for part in ('x-axis', 'y-axis', 'y-label'):
+        assert drawn.select_one({'name': f'{name}/{part}'}) is not None
+
+
+def test_no_source_of_a_built_document_draws_without_a_name():
+    from bokeh.models import ColumnDataSource
+
+    from webapp import figures
+
+    for name, picture in pictures(OPENING).items():
+        used = {renderer.data_source for renderer in figures.drawn(name, picture).renderers}
+        assert all(isinstance(source, ColumnDataSource) and source.name for source in used)
+
+
+def test_a_stagger_has_its_blind_speeds_first_and_dwells_their_blind_zones():
+    assert columns.order('dwells')[0] == 'blind-zones'
+    assert columns.order('stagger')[0] == 'blind-speeds'
+    assert sorted(columns.order('stagger')) == sorted(columns.FIGURES)
+
+
+@FEW
+@given(documents())
+def test_every_figure_of_every_plan_has_columns_of_equal_length_and_no_number_that_is_none(document):
+    for name, picture in pictures(document).items():
+        for source, data in picture['columns'].items():
+            lengths = {key: len(column) for key, column in data.items() if np.ndim(column) < 2 or key in ('xs', 'ys')}
+            assert len(set(lengths.values())) <= 1, (name, source, lengths)
+            for key, column in data.items():
+                if isinstance(column, np.ndarray) and column.dtype.kind == 'f' and source != 'received':
+                    assert np.isfinite(column).all(), (name, source, key)
+        assert all(np.isfinite(picture['ranges'][side]).all() for side in 'xy')
+
+
+@FEW
+@given(documents())
+def test_no_word_of_any_figure_is_broken(document):
+    for name, picture in pictures(document).items():
+        for text in texts({key: picture[key] for key in ('title', 'caption', 'short', 'summary', 'table')}):
+            assert not BROKEN.search(text), (name, text)
+        assert not picture['caption'][:1].islower()
+        assert picture['caption'].endswith('.')
+        assert picture['short'] in picture['caption']
+        width = len(picture['table']['head'])
+        assert all(len(row) == width for row in picture['table']['rows'])
+
+
+@FEW
+@given(documents())
+def test_the_received_share_is_straight_between_its_corners(document):
+    plan = read(document)
+    for (corner, share), pri, pulse in zip(received_corners(plan), plan.pri_s, plan.pulse_s, strict=True):
+        middle = (corner[1:] + corner[:-1]) / 2
+        exact = received_share(middle, pri, pulse, plan.recovery_s, plan.guard_s, plan.near)
+        # Where the near pulse stops serving, the share jumps from one float to the next.
+        wide = np.diff(corner) > ONE_MILLIMETRE
+        np.testing.assert_allclose(((share[1:] + share[:-1]) / 2)[wide], exact[wide], atol=1e-6)
+
+
+def test_gaps_and_clear_spans_share_the_axis_between_them():
+    clear = Spans(np.array([1, 0, 1]), np.array([0.0, 2.0, 6.0]), np.array([3.0, 5.0, 10.0]))
+    blind = gaps(clear, 3, (0.0, 10.0))
+    assert blind.prf.tolist() == [0, 0, 1, 2]
+    assert list(zip(blind.start.tolist(), blind.stop.tolist(), strict=True)) == [(0, 2), (5, 10), (3, 6), (0, 10)]
+
+
+def test_what_no_plan_can_see_is_told_apart_from_what_another_plan_could():
+    computed = Computed(read(OPENING))
+    found, floor = avoidable(computed.sight, 1)
+    assert floor.tolist() == [[0.0, 6.0]]
+    # 2.8 GHz, 980 and 860 µs: 62.24 - 6 to 54.62 + 6 m/s is in both notches.
+    np.testing.assert_allclose(found, [[56.245, 60.625]], atol=0.01)
+
+
+@pytest.mark.parametrize(('n', 'm', 'expected'), [(2, 1, [0, 4, 6]), (2, 2, [0, 2, 6]), (1, 1, [0, 6])])
+def test_classes_tell_too_few_from_enough_and_all(n, m, expected):
+    # Each count fills a field of its own, too large to be all edge.
+    count = np.repeat(np.arange(n + 1, dtype=np.uint8), 21)[None].repeat(21, axis=0)
+    assert classes.classes(count, n, m)[10, 11::21].tolist() == expected
+
+
+def test_classes_of_more_than_enough_lie_between_just_enough_and_all():
+    count = np.array([[3, 4, 7, 8]], dtype=np.uint8)
+    assert classes.classes(count, 8, 3).tolist() == [[classes.JUST_ENOUGH, classes.MORE, classes.MORE, classes.ALL]]
+
+
+def test_hatching_runs_at_45_degrees_and_never_touches_the_edge_of_a_zone():
+    count = np.full((30, 40), 2, dtype=np.uint8)
+    count[5:25, 5:35] = 0
+    code = classes.classes(count, 2, 1)
+    rows, cols = np.nonzero(code == classes.NONE_HATCH)
+    assert rows.size > 0
+    assert set((rows - cols) % classes.PITCH) == {0}
+    assert (rows.min(), rows.max(), cols.min(), cols.max()) == (6, 23, 6, 33)
+
+
+def test_the_blind_side_of_the_m_of_n_edge_is_a_line():
+    count = np.full((20, 20), 3, dtype=np.uint8)
+    count[:, :9] = 1
+    code = classes.classes(count, 3, 2)
+    assert (code[:, 8] == classes.TOO_FEW_EDGE).all()
+    assert (code[:, :8] == classes.TOO_FEW).all()
+
+
+def test_the_map_has_the_size_that_was_asked_for_and_its_own_where_none_was():
+    asked = pictures(OPENING, size={'width': 311, 'height': 97})['blind-zones']['columns']['map']['image']
+    own = pictures(OPENING, size=None)['blind-zones']['columns']['map']['image']
+    assert asked.shape == (97, 311)
+    assert own.shape == (blind_zones.SIZE['height'], blind_zones.SIZE['width'])
+    assert asked.dtype == np.uint8
+
+
+@FEW
+@given(documents())
+def test_every_number_stands_at_a_cell_of_a_hole_or_moved_off_it(document):
+    computed = Computed(read(document))
+    names = columns.picture('blind-zones', computed, SHOWN_UNITS, {'width': 500, 'height': 300})['columns']['holes']
+    seen = computed.sight
+    for x, y, hole in zip(names['x'] * 1e3, names['y'], computed.holes.listed, strict=False):
+        slack = np.array([np.ptp(seen.range_m) / 500, np.ptp(seen.speed_m_s) / 300])
+        assert hole.range_m[0] - slack[0] <= x <= hole.range_m[1] + slack[0]
+        assert hole.speed_m_s[0] - slack[1] <= y <= hole.speed_m_s[1] + slack[1]
+
+
+def test_the_number_of_a_large_hole_stands_in_the_dark():
+    document = {**OPENING, 'radar': {'carrier_ghz': 2.8, 'pulse_us': 60.0, 'recovery_us': 4.0}}
+    computed = Computed(read({**document, 'coverage': {'range_km': [2.0, 300.0], 'speed_mps': [0.0, 300.0]}}))
+    names = columns.picture('blind-zones', computed, SHOWN_UNITS, {'width': 600, 'height': 300})['columns']['holes']
+    still = (names['dx'] == 0) & (names['dy'] == 0)
+    assert still.any()
+    seen = computed.sight
+    for x, y in zip(names['x'][still] * 1e3, names['y'][still], strict=True):
+        assert zones.count_map(seen.ranges, seen.speeds, np.array([x]), np.array([y])).item() < seen.m
+
+
+def test_every_mark_of_the_trade_line_lies_on_its_line():
+    picture = pictures(OPENING)['trade-line']['columns']
+    product = picture['lines']['x0'] * picture['lines']['y0']
+    np.testing.assert_allclose(picture['prfs']['x'] * picture['prfs']['y'], product[0])
+
+
+def test_strips_of_the_bands_lie_between_their_edges():
+    picture = pictures(OPENING)['trade-line']['columns']
+    (left, *_), (inner, _, _, outer) = picture['band']['xs'][0], picture['band']['ys'][0]
+    products = picture['edges']['x0'] * picture['edges']['y0']
+    assert np.isclose(products, left * inner).any()
+    assert np.isclose(products, left * outer).any()
+    assert 'S' in picture['band-names']['text']
+
+
+def test_figures_change_their_units_and_not_what_they_show():
+    metric = pictures(OPENING)
+    other = pictures(OPENING, {'range': 'nmi', 'speed': 'kt', 'pri': 'Hz'})
+    for name in ('blind-zones', 'blind-speeds'):
+        assert other[name]['units'] != metric[name]['units']
+    nmi, km = other['blind-zones']['columns']['regions'], metric['blind-zones']['columns']['regions']
+    np.testing.assert_allclose(nmi['left'] * 1.852, km['left'])
+    np.testing.assert_allclose(nmi['top'] * 1.852 / 3.6, km['top'])
+    assert other['eclipsed-ranges']['ticks']['y']['text'][:2] == [f'1162.79{THIN_SPACE}Hz', f'1020.41{THIN_SPACE}Hz']
+    assert 'kt' in other['blind-speeds']['caption']
+
+
+def test_lanes_stand_in_sending_order_from_the_top_and_the_one_that_counts_above_them():
+    ticks = pictures(OPENING)['blind-speeds']['ticks']['y']
+    assert ticks['text'] == [f'860{THIN_SPACE}µs', f'980{THIN_SPACE}µs', '1 of 2']
+    assert ticks['at'] == sorted(ticks['at'])
+
+
+def test_a_single_prf_has_no_lane_that_counts():
+    one = {**OPENING, 'waveform': {'pri_us': [980.0], 'pulses': 9, 'detect_m': 1}}
+    assert pictures(one)['eclipsed-ranges']['ticks']['y']['text'] == [f'980{THIN_SPACE}µs']
+
+
+def test_the_response_of_a_stagger_is_drawn_with_its_marked_speeds():
+    picture = pictures(STAGGER)['blind-speeds']
+    assert picture['columns']['lanes']['y'].size == 0
+    assert picture['columns']['response']['x'].size >= 480
+    # 38 µs is the greatest common part of the four intervals: c / (2 · 2.8 GHz · 38 µs) = 1408.8 m/s.
+    assert f'true first blind speed is 1410{THIN_SPACE}m/s' in picture['caption']
+
+
+@pytest.mark.parametrize(
+    ('low', 'high', 'expected'), [(0.9, 210, [1, 2, 5, 10, 20, 50, 100, 200]), (45, 160, [50, 70, 100])]
+)
+def test_logarithmic_axes_have_round_ticks(low, high, expected):
+    assert decade_ticks(low, high)[0] == pytest.approx(expected)
+
+
+@pytest.mark.parametrize(
+    ('unit', 'text'), [('us', '980 µs'), ('ms', '0.98 ms'), ('Hz', '1020.41 Hz'), ('kHz', '1.02041 kHz')]
+)
+def test_intervals_are_named_as_the_reader_prefers(unit, text):
+    assert interval_name(980e-6, {'pri': unit}) == text.replace(' ', THIN_SPACE)
+
+
+def test_an_axis_writes_its_own_ends_as_they_were_typed():
+    axis = range_axis((2e3, 110e3), SHOWN_UNITS)
+    assert axis.span() == f'2 to 110{THIN_SPACE}km'
+    assert axis.label == 'range (km)'
+    assert speed_axis((0.0, 300.0), {'speed': 'km/h'}).ends == pytest.approx([0, 1080])
+
+
+def test_zones_of_an_axis_join_neighbouring_segments():
+    from pycore.columns.blind_parts import runs
+
+    swept = sweep(Spans(np.array([0, 1]), np.array([2.0, 4.0]), np.array([4.0, 6.0])), (0.0, 10.0))
+    assert runs(swept, swept.pattern != 0).tolist() == [[2.0, 6.0]]
