@@ -7,10 +7,13 @@ below and rises again within one step can be missed.
 
 import numpy as np
 
+from pycore.combs import repeated
+from pycore.response import QUIETEST
 from pycore.spans import Spans
 
 _BISECTIONS = 48
-_STEPS_AT_ONCE = 4096
+_SAME_POWER = 1e-12  # powers closer than this are equal but for rounding
+_FIRST_STEPS, _MOST_STEPS = 256, 16384
 
 
 def _bisected(response, below, above, least):
@@ -23,7 +26,7 @@ def _bisected(response, below, above, least):
     return above
 
 
-def first_notch(response, least_db, to_m_s):
+def first_notch(response, least_db):
     """Return how far the notch around zero reaches.
 
     Parameters
@@ -32,8 +35,6 @@ def first_notch(response, least_db, to_m_s):
         A canceller's response. [unitless]
     least_db : float
         Least response that counts. [dB]
-    to_m_s : float
-        Where to stop looking. [m/s]
 
     Returns
     -------
@@ -41,7 +42,7 @@ def first_notch(response, least_db, to_m_s):
         Lowest speed at which the response reaches ``least_db``; 0 where it does so at rest, ``inf`` where nowhere.
         [m/s]
     """
-    return _first(response, least_db, 0.0, to_m_s, falling=False)
+    return _first(response, least_db, 0.0, half_period(response), falling=False)
 
 
 def first_fall(response, least_db, from_m_s, to_m_s):
@@ -54,33 +55,59 @@ def first_fall(response, least_db, from_m_s, to_m_s):
     least_db : float
         Least response that counts. [dB]
     from_m_s : float
-        Where the response has first reached it. [m/s]
+        Where the response has first reached it: the edge of the notch around zero. [m/s]
     to_m_s : float
-        Where to stop looking. [m/s]
+        Where to stop looking, if not at half of the speed that the response repeats with. [m/s]
 
     Returns
     -------
     speed_m_s : float
         ``inf`` where it nowhere falls. [m/s]
+
+    Notes
+    -----
+    The response is even and repeats, so it is a mirror image about half of what it repeats with: where it does not
+    fall up to there, it first falls where the image of the notch around zero begins.
     """
-    return _first(response, least_db, from_m_s, to_m_s, falling=True)
+    half = half_period(response)
+    found = _first(response, least_db, from_m_s, min(to_m_s, half), falling=True)
+    if np.isfinite(found) or to_m_s < half or from_m_s == 0.0:
+        return found
+    return 2.0 * half - from_m_s
+
+
+def half_period(response):
+    """Return the speed about which the response is a mirror image of itself.
+
+    Parameters
+    ----------
+    response : Response
+        A canceller's response. [unitless]
+
+    Returns
+    -------
+    speed_m_s : float
+        Half of what it repeats with. [m/s]
+    """
+    return response.repeats_m_s / 2.0
 
 
 def _first(response, least_db, from_m_s, to_m_s, falling):
     """Return the first crossing beyond a speed, downwards or upwards, block by block."""
     least, step = 10.0 ** (least_db / 10.0), response.step_m_s
-    index = int(np.floor(from_m_s / step)) + 1 if falling else 0
+    index, block = (int(np.floor(from_m_s / step)) + 1 if falling else 0), _FIRST_STEPS
     while index * step <= to_m_s + step:
-        speeds = np.arange(index, index + _STEPS_AT_ONCE) * step
+        speeds = np.arange(index, index + block) * step
         hit = np.flatnonzero((response.power(speeds) < least) == falling)
         if hit.size:
             at = speeds[hit[0]]
             return _refined(response, at, max(at - step, from_m_s if falling else 0.0), least, falling, to_m_s)
-        index += _STEPS_AT_ONCE
+        index, block = index + block, min(2 * block, _MOST_STEPS)
     return np.inf
 
 
 def _refined(response, at, before, least, falling, to_m_s):
+    """Return the crossing between two speeds one step apart, ``inf`` where it lies too far out."""
     if at == 0.0:
         return 0.0
     found = float(_bisected(response, at, before, least) if falling else _bisected(response, before, at, least))
@@ -104,12 +131,12 @@ def first_peak(response, from_m_s, to_m_s):
     """
     step, index = response.step_m_s, int(np.floor(from_m_s / response.step_m_s))
     while index * step <= to_m_s:
-        speeds = np.arange(index, index + _STEPS_AT_ONCE + 1) * step
+        speeds = np.arange(index, index + _FIRST_STEPS + 1) * step
         power = response.power(speeds)
         falls = np.flatnonzero((power[1:] < power[:-1]) & (speeds[:-1] >= from_m_s))
         if falls.size:
             return float(min(speeds[falls[0]], to_m_s))
-        index += _STEPS_AT_ONCE
+        index += _FIRST_STEPS
     return to_m_s
 
 
@@ -130,10 +157,23 @@ def clear_speeds(response, least_db, speed_m_s):
     speeds : Spans
         All of PRF 0: a stagger gives one verdict. [m/s]
     """
-    low, high = speed_m_s
+    half = half_period(response)
+    if max(abs(speed_m_s[0]), abs(speed_m_s[1])) <= half:
+        start, stop = _above(response, least_db, speed_m_s)
+        return Spans(np.zeros(start.size, dtype=np.intp), start, stop)
+    # One half period, its mirror image, and both repeated.
+    start, stop = _above(response, least_db, (0.0, half))
+    start, stop = np.concatenate((start, 2.0 * half - stop)), np.concatenate((stop, 2.0 * half - start))
+    found = repeated(start, stop, np.full(start.size, 2.0 * half), speed_m_s)
+    order = np.argsort(found.start, kind='stable')
+    return Spans(np.zeros(order.size, dtype=np.intp), found.start[order], found.stop[order])
+
+
+def _above(response, least_db, limits):
+    """Return where intervals on which the response is at least what counts start and stop."""
+    low, high = limits
     least, step = 10.0 ** (least_db / 10.0), response.step_m_s
-    inner = np.arange(int(np.floor(low / step)) + 1, int(np.ceil(high / step))) * step
-    grid = np.concatenate(([low], inner, [high]))
+    grid = _grid(low, high, step)
     under = response.power(grid) < least
     change = np.flatnonzero(under[1:] != under[:-1])
     below, above = np.where(under[change], (grid[change], grid[change + 1]), (grid[change + 1], grid[change]))
@@ -141,7 +181,13 @@ def clear_speeds(response, least_db, speed_m_s):
     first_clear = int(under[0])
     start, stop = edges[first_clear:-1:2], edges[first_clear + 1 :: 2]
     some = stop > start
-    return Spans(np.zeros(int(some.sum()), dtype=np.intp), start[some], stop[some])
+    return start[some], stop[some]
+
+
+def _grid(low, high, step):
+    """Return an interval's ends and the whole steps between them."""
+    inner = np.arange(int(np.floor(low / step)) + 1, int(np.ceil(high / step))) * step
+    return np.concatenate(([low], inner, [high]))
 
 
 def deepest_dip(response, from_m_s, to_m_s):
@@ -163,17 +209,16 @@ def deepest_dip(response, from_m_s, to_m_s):
     """
     if not from_m_s <= to_m_s:
         return np.nan, np.nan
-    step = response.step_m_s
-    inner = np.arange(int(np.floor(from_m_s / step)) + 1, int(np.ceil(to_m_s / step))) * step
-    grid = np.concatenate(([from_m_s], inner, [to_m_s]))
+    grid = _grid(from_m_s, to_m_s, response.step_m_s)
     power = response.power(grid)
-    # A true minimum lies at most a little lower than the grid's own; only valleys near the lowest are refined.
-    near = np.flatnonzero(power <= max(4.0 * power.min(), power.min() + 1e-3))
-    low, high = grid[np.maximum(near - 1, 0)], grid[np.minimum(near + 1, grid.size - 1)]
-    at = _valley(response, low, high)
+    before, after = np.append(np.inf, power[:-1]), np.append(power[1:], np.inf)
+    # Half a step from a minimum the response has risen by no more than its greatest curvature allows.
+    rise = response.curvature * response.step_m_s**2 / 8.0
+    near = np.flatnonzero((power <= before) & (power <= after) & (power <= power.min() + rise))
+    at = _valley(response, grid[np.maximum(near - 1, 0)], grid[np.minimum(near + 1, grid.size - 1)])
     depth = response.power(at)
-    best = np.flatnonzero(depth <= depth.min() * (1.0 + 1e-9))[0]
-    return float(10.0 * np.log10(max(depth[best], 1e-30))), float(at[best])
+    best = np.flatnonzero(depth <= depth.min() + _SAME_POWER)[0]
+    return float(10.0 * np.log10(max(depth[best], QUIETEST))), float(at[best])
 
 
 def _valley(response, low, high):

@@ -88,6 +88,17 @@ class Response:
         """Step at which crossings are looked for: 1/16 of the speed that folds the longest difference. [m/s]"""
         return self.wavelength_m * self.clock_hz / (2.0 * self.longest_counts) / 16.0
 
+    @property
+    def repeats_m_s(self):
+        """Speed that the response repeats with, from the exact greatest common divisor of its differences. [m/s]"""
+        return self.wavelength_m * self.clock_hz / (2.0 * int(np.gcd.reduce(self.counts)))
+
+    @property
+    def curvature(self):
+        """Upper bound of the second derivative of the power: Σ |a_d| (4π d/λ)². [s^2/m^2]"""
+        turn = 4.0 * np.pi * self.counts / (self.wavelength_m * self.clock_hz)
+        return float(np.abs(self.amplitude) @ turn**2)
+
 
 def binomial_weights(delays):
     """Return the weights of a binomial canceller.

@@ -7,6 +7,7 @@ cycle, is at least a given value.
 """
 
 from dataclasses import dataclass
+from fractions import Fraction
 
 import numpy as np
 
@@ -15,6 +16,8 @@ from pycore.crossings import clear_speeds, deepest_dip, first_fall, first_notch,
 from pycore.patterns import sweep
 from pycore.response import Response, binomial_weights, repeat_counts, staggered_response
 from pycore.spans import Spans
+
+_MOST_COSINES = 4_000_000
 
 
 @dataclass(frozen=True, slots=True)
@@ -41,6 +44,9 @@ class Stagger:
         Deepest dip beyond the rise out of the notch, and the lowest wanted speed where it occurs. [dB, m/s]
     share_above : float
         Part of the wanted speeds at which the response is at least the least. [unitless]
+    searched_to_m_s : float
+        How far the first fall was looked for: all speeds, up to where the response repeats, or as far as four
+        million cosines reach, but never less than the wanted speeds. [m/s]
     """
 
     response: Response
@@ -53,6 +59,7 @@ class Stagger:
     deepest_db: float | None
     deepest_at_m_s: float | None
     share_above: float
+    searched_to_m_s: float
 
 
 def notch_comb(blind_speed_m_s, notch_m_s):
@@ -175,8 +182,9 @@ def staggered(pri_counts, clock_hz, delays, weights, wavelength_m, least_db, spe
     response = staggered_response(pri_counts, clock_hz, used, wavelength_m)
     repeat = repeat_counts(pri_counts, weights)
     true_first = wavelength_m * float(clock_hz) / (2.0 * repeat)
-    notch = first_notch(response, least_db, true_first)
-    below = first_fall(response, least_db, notch, true_first) if np.isfinite(notch) else np.inf
+    notch = first_notch(response, least_db)
+    searched = max(wanted_magnitudes(speed_m_s)[1], _MOST_COSINES / response.counts.size * response.step_m_s)
+    below = first_fall(response, least_db, notch, searched) if np.isfinite(notch) else np.inf
     clear = clear_speeds(response, least_db, speed_m_s)
     depth, at = _dip(response, notch, true_first, speed_m_s)
     return Stagger(
@@ -186,10 +194,11 @@ def staggered(pri_counts, clock_hz, delays, weights, wavelength_m, least_db, spe
         float(below) if np.isfinite(below) else None,
         true_first,
         abs(sum(used)) < 1e-12,
-        sum(int(count) for count in pri_counts) / len(pri_counts) / repeat,
+        float(Fraction(sum(int(count) for count in pri_counts), len(pri_counts) * repeat)),
         depth,
         at,
         float((clear.stop - clear.start).sum() / (speed_m_s[1] - speed_m_s[0])),
+        float(min(searched, true_first)),
     )
 
 
