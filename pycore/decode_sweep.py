@@ -93,7 +93,22 @@ def _windows(combs, limit):
 
 
 def ordered_edges(combs, start, stop):
-    """Return the edges in (start, stop] in the sweep's order: whose, at which multiple, and whether it is entered."""
+    """Return the edges in (start, stop] in the sweep's order.
+
+    Parameters
+    ----------
+    combs : sequence of (Fraction, Fraction), length N
+        Each PRF's period and half-width, in exact fractions of one unit. [any, the same for all]
+    start, stop : Fraction
+        Where the sweep begins, not included, and ends. [same]
+
+    Returns
+    -------
+    owner, multiple : int array, shape E
+        Whose edge it is, and at which multiple of its period.
+    enters : bool array, shape E
+        Whether the zone is entered there; at one point leaving comes before entering.
+    """
     periods, widths, denominators = _on_grids(combs)
     bits = max((math.lcm(a, b) for a, b in combinations(set(denominators), 2)), default=max(denominators)).bit_length()
     kind = _integer_kind(stop, max(period for period, _ in combs), denominators, bits)

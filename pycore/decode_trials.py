@@ -89,7 +89,7 @@ def drawn_reports(axis, periods, cell, targets, trials, seed, error=0.0, seen=1.
     Returns
     -------
     reports : Reports
-        What there is to decode.
+        What there is to decode. [unitless]
     """
     periods, cell = np.asarray(periods, dtype=float), np.asarray(cell, dtype=float)
     rng = np.random.default_rng(seed)
@@ -109,7 +109,7 @@ def coincidence_score(reports, axis, periods, cell, m, neighbours=0):
     Parameters
     ----------
     reports : Reports
-        What there is to decode.
+        What there is to decode. [unitless]
     axis : tuple of float, length 2
         Lowest and highest value. [m or m/s]
     periods : sequence of float, length N
@@ -145,7 +145,7 @@ def congruence_score(reports, axis, moduli, cell, m):
     Parameters
     ----------
     reports : Reports
-        What there is to decode.
+        What there is to decode. [unitless]
     axis : tuple of float, length 2
         Lowest and highest value, not below 0. [m or m/s]
     moduli : sequence of int, length N

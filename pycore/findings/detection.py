@@ -5,7 +5,20 @@ from pycore.wording import as_typed, in_range_unit, significant, trimmed, with_u
 
 
 def detection(computed, units):
-    """Return the finding on the range at which the target is detected, over half of the wanted speeds."""
+    """Return the finding on the range at which the target is detected, over half of the wanted speeds.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     plan = computed.plan
     wanted_m = plan.wanted.detect_m
     label = f'range at which the target is detected with probability {trimmed(plan.target.pd_wanted)}'

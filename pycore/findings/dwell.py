@@ -5,7 +5,20 @@ from pycore.wording import as_typed_percent, percent, significant, with_unit
 
 
 def dwell(computed, units):
-    """Return the finding on the time that the set uses of the time on target."""
+    """Return the finding on the time that the set uses of the time on target.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     used, available = computed.time_used_s * 1e3, computed.plan.time_on_target_s
     label = 'time used by one set of CPIs with their fill pulses'
     if available is None:
@@ -30,7 +43,20 @@ def dwell(computed, units):
 
 
 def duty(computed, units):
-    """Return the finding on the largest duty of the set."""
+    """Return the finding on the largest duty of the set.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     limit, largest = computed.plan.duty_limit, computed.duty_largest
     mean = percent(computed.duty_mean)
     return Finding(

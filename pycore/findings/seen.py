@@ -43,7 +43,20 @@ def looks(computed):
 
 
 def visible(computed, units):
-    """Return the finding on the share of the coverage that is seen."""
+    """Return the finding on the share of the coverage that is seen.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     wanted = computed.plan.wanted.visible
     share, floor = computed.share, computed.floor_share
     within_reach = max(0.0, computed.excess_over_floor)
@@ -77,7 +90,20 @@ def _only(share, wanted):
 
 
 def must_see(computed, units):
-    """Return one finding for each must-see region, judged by the share of it that is seen."""
+    """Return one finding for each must-see region, judged by the share of it that is seen.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    findings : list of Finding
+        In the order of the plan.
+    """
     return [_must_see(index, region, computed, units) for index, region in enumerate(computed.must_see)]
 
 
@@ -168,7 +194,20 @@ def _fills(inner, outer):
 
 
 def largest_hole(computed, units):
-    """Return the finding on the largest hole outside what no plan can see."""
+    """Return the finding on the largest hole outside what no plan can see.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     plan = computed.plan
     limits = _hole_limits(plan.wanted, units)
     if not computed.holes.listed:
@@ -221,7 +260,20 @@ def _hole_wanted(wanted):
 
 
 def unseen_inbound(computed, units):
-    """Return the finding on the longest time that a steadily moving target stays unseen."""
+    """Return the finding on the longest time that a steadily moving target stays unseen.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     wanted, inbound = computed.plan.wanted.unseen_s, computed.inbound
     label = 'longest time out of sight for a target flying along the beam'
     if not inbound.time_s > 0:
@@ -255,7 +307,20 @@ def unseen_inbound(computed, units):
 
 
 def unseen_crossing(computed, units):
-    """Return the finding on how long a crossing track stays inside the notch."""
+    """Return the finding on how long a crossing track stays inside the notch.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     wanted, crossing = computed.plan.wanted.unseen_s, computed.plan.crossing
     if crossing is None:
         return Finding('unseen-crossing', 'crossing track in the notch', None, 'not asked', 's')

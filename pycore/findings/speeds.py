@@ -5,7 +5,20 @@ from pycore.wording import as_typed, between, in_range_unit, in_speed_unit, perc
 
 
 def blind_speed(computed, units):
-    """Return the finding on the first blind speed of the whole plan."""
+    """Return the finding on the first blind speed of the whole plan.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     return _stagger_blind_speed(computed, units) if computed.is_stagger else _dwells_blind_speed(computed, units)
 
 
@@ -96,7 +109,20 @@ def _stagger_blind_speed(computed, units):
 
 
 def decode_range(computed, units):
-    """Return the finding on how far range decodes without ambiguity."""
+    """Return the finding on how far range decodes without ambiguity.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     wanted_m = computed.plan.range_m[1] if computed.plan.wanted.decode_range else None
     span = computed.decode_range
     wanted, unit = (None, units['range']) if wanted_m is None else in_range_unit(wanted_m, units)
@@ -124,7 +150,20 @@ def decode_range(computed, units):
 
 
 def decode_speed(computed, units):
-    """Return the finding on the span of speeds that decodes without ambiguity."""
+    """Return the finding on the span of speeds that decodes without ambiguity.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     low, high = computed.plan.speed_m_s
     wanted_m_s = high - low if computed.plan.wanted.decode_speed else None
     span = computed.decode_speed
@@ -171,7 +210,20 @@ def _gates(blur):
 
 
 def range_walk(computed, units):
-    """Return the finding on how many gates the fastest target crosses within one CPI."""
+    """Return the finding on how many gates the fastest target crosses within one CPI.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     wanted = computed.plan.wanted.range_walk_gates
     worst = float(max(computed.range_walk_gates))
     return Finding(

@@ -13,7 +13,9 @@ import pytest
 import pycore
 
 ROOT = Path(pycore.__file__).parent
-MODULES = sorted(module.name for module in pkgutil.walk_packages([str(ROOT)], 'pycore.') if '__main__' not in module.name)
+MODULES = sorted(
+    module.name for module in pkgutil.walk_packages([str(ROOT)], 'pycore.') if '__main__' not in module.name
+)
 NOT_IN_THE_CORE = {'scipy', 'bokeh', 'os', 'time', 'datetime', 'random', 'socket', 'subprocess', 'js', 'pyodide'}
 ONLY_THE_COMMAND_LINE = {'sys', 'pathlib', 'argparse'}
 
@@ -26,7 +28,7 @@ def public_functions():
                 yield pytest.param(function, id=f'{name}.{label}')
 
 
-@pytest.mark.parametrize('function', public_functions())
+@pytest.mark.parametrize('function', list(public_functions()))
 def test_every_public_function_says_what_its_parameters_are_and_in_which_unit(function):
     text = inspect.getdoc(function) or ''
     assert text, 'no docstring'
@@ -45,7 +47,9 @@ def test_the_core_imports_nothing_that_touches_the_world(path):
 
 
 def test_no_two_modules_of_the_core_import_each_other_in_a_circle():
-    arrows = {_dotted(path): {name for name in _imports(path) if name.startswith('pycore')} for path in ROOT.rglob('*.py')}
+    arrows = {
+        _dotted(path): {name for name in _imports(path) if name.startswith('pycore')} for path in ROOT.rglob('*.py')
+    }
     done, walking = set(), []
 
     def walk(name):
@@ -69,14 +73,17 @@ def _dotted(path):
 
 
 def _imports(path):
-    """Return the dotted names that a file imports; ``from pycore import x`` counts as ``pycore.x``."""
+    """Return the dotted names that a file imports; ``from package import module`` counts as that module."""
     names = []
     for node in ast.walk(ast.parse(path.read_text('utf-8'))):
         if isinstance(node, ast.Import):
             names.extend(alias.name for alias in node.names)
         elif isinstance(node, ast.ImportFrom):
-            if node.module == 'pycore':
-                names.extend(f'pycore.{alias.name}' for alias in node.names)
-            else:
-                names.append(node.module)
+            names.extend(_module(node.module, alias.name) for alias in node.names)
     return names
+
+
+def _module(package, name):
+    """Return which module ``from package import name`` reads, by the files there are."""
+    inner = ROOT.parent.joinpath(*package.split('.'), name)
+    return f'{package}.{name}' if inner.with_suffix('.py').is_file() or inner.is_dir() else package
