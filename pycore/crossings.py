@@ -26,7 +26,7 @@ def _bisected(response, below, above, least):
     return above
 
 
-def first_notch(response, least_db):
+def first_notch(response, least_db, to_m_s):
     """Return how far the notch around zero reaches.
 
     Parameters
@@ -35,6 +35,8 @@ def first_notch(response, least_db):
         A canceller's response. [unitless]
     least_db : float
         Least response that counts. [dB]
+    to_m_s : float
+        Where to stop looking, if not at half of the speed that the response repeats with. [m/s]
 
     Returns
     -------
@@ -42,7 +44,9 @@ def first_notch(response, least_db):
         Lowest speed at which the response reaches ``least_db``; 0 where it does so at rest, ``inf`` where nowhere.
         [m/s]
     """
-    return _first(response, least_db, 0.0, half_period(response), falling=False)
+    if 10.0 ** (least_db / 10.0) > 1.0 + np.abs(response.amplitude).sum():
+        return np.inf
+    return _first(response, least_db, 0.0, min(to_m_s, half_period(response)), falling=False)
 
 
 def first_fall(response, least_db, from_m_s, to_m_s):

@@ -182,8 +182,8 @@ def staggered(pri_counts, clock_hz, delays, weights, wavelength_m, least_db, spe
     response = staggered_response(pri_counts, clock_hz, used, wavelength_m)
     repeat = repeat_counts(pri_counts, weights)
     true_first = wavelength_m * float(clock_hz) / (2.0 * repeat)
-    notch = first_notch(response, least_db)
     searched = max(wanted_magnitudes(speed_m_s)[1], _MOST_COSINES / response.counts.size * response.step_m_s)
+    notch = first_notch(response, least_db, searched)
     below = first_fall(response, least_db, notch, searched) if np.isfinite(notch) else np.inf
     clear = clear_speeds(response, least_db, speed_m_s)
     depth, at = _dip(response, notch, true_first, speed_m_s)
