@@ -20,20 +20,20 @@ def dwell(computed, units):
         Value, what was wanted, and the sentence.
     """
     used, available = computed.time_used_s * 1e3, computed.plan.time_on_target_s
-    label = 'time used by one set of CPIs with their fill pulses'
     if available is None:
+        label = 'time used by one set of CPIs with their fill pulses'
         return Finding('dwell', label, used, with_unit(used, 'ms'), 'ms', detail='no time on target is given')
     available *= 1e3
     spare = available - used
     sets = int(available / used + 1e-9)
     return Finding(
         'dwell',
-        label,
+        f'time used of the {with_unit(available, "ms")} that the beam rests on a target',
         used,
         with_unit(used, 'ms', available),
         'ms',
         available,
-        f'at most the {with_unit(available, "ms")} that the beam rests on a target',
+        f'at most {with_unit(available, "ms")}',
         at_most(used, available),
         f'{sets} whole sets fit' if sets > 1 else '',
         fault=f'the set takes {with_unit(used, "ms", available)} of the {with_unit(available, "ms")} on target',
