@@ -74,7 +74,7 @@ def share_in(windows, pri_s, start_s, length_s):
     start_s : float array, shape S
         When the echo starts. [s]
     length_s : float
-        How long it is, shorter than the interval. [s]
+        How long it is. [s]
 
     Returns
     -------
@@ -84,7 +84,7 @@ def share_in(windows, pri_s, start_s, length_s):
     start = np.mod(start_s, pri_s)
     received = np.zeros_like(start)
     for opens, closes in windows:
-        for later in (0.0, pri_s):
+        for later in pri_s * np.arange(length_s // pri_s + 2):
             # Counted from the echo's own start: what is received whole then counts as exactly 1.
             last = np.minimum(closes + later - start, length_s)
             received += np.maximum(last - np.maximum(opens + later - start, 0.0), 0.0)
