@@ -175,6 +175,24 @@ class Computed:
         floor_speeds = floor.floor_speeds(notch, speed_m_s)
         return sight.Sight(ranges, speeds, floor_ranges, floor_speeds, self.looks, self.m, range_m, speed_m_s)
 
+    def prf_spans(self, range_m, speed_m_s):
+        """Return the clear ranges and speeds of each PRI on its own, on any axes.
+
+        Parameters
+        ----------
+        range_m : pair of float
+            Ranges. [m]
+        speed_m_s : pair of float
+            Radial speeds. [m/s]
+
+        Returns
+        -------
+        ranges, speeds : Spans
+            By the received share, and by the notch.
+        """
+        speeds = stagger.notch_clear_speeds(self.blind_speed_m_s, self.plan.notch_m_s, speed_m_s)
+        return self._prf_ranges(range_m), speeds
+
     @property
     def _near_opening(self):
         """First opening of the near pulse and how far it serves; nothing without one."""

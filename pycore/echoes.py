@@ -136,6 +136,21 @@ class Echoes:
             )
         )
 
+    def piece_at(self, range_m):
+        """Return the piece of the range axis that a range lies in.
+
+        Parameters
+        ----------
+        range_m : float
+            A range. [m]
+
+        Returns
+        -------
+        piece : Piece or None
+            ``None`` outside the coverage.
+        """
+        return next((piece for piece in self.pieces if piece.range_m[0] <= range_m <= piece.range_m[1]), None)
+
     @cached_property
     def share_with_clutter(self):
         """Visible share with clutter counted too; ``None`` for a stagger, whose canceller has no such pieces."""

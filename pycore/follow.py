@@ -1,0 +1,205 @@
+"""One target, followed through: what each PRF makes of it, and what the set makes of that.
+
+Brings one range and one radial speed through folding, eclipsing, notch, clutter,
+filters and detection, in the words of the page's table.
+"""
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from pycore import ambiguity, detection, eclipsing, zones
+from pycore.clutter import folded_clutter_to_noise, late_share
+from pycore.detection_map import canceller_residue
+from pycore.ghosts import ghosts
+from pycore.scnr import filter_outputs
+from pycore.swerling import cpi_probability, set_probability
+from pycore.target import one_pulse_signal, received_power
+
+_HEARD = 1e-12
+"""A patch counts as being at the target's gate above this power ratio. [unitless]"""
+
+
+@dataclass(frozen=True, slots=True)
+class Followed:
+    """What one PRF makes of one target.
+
+    Parameters
+    ----------
+    apparent_range_m, apparent_speed_m_s : float
+        Where it appears. [m, m/s]
+    later_pulses : int
+        Pulses that have left before its echo returns. [unitless]
+    received : float
+        Received share of its echo. [unitless]
+    in_notch : bool
+        Whether its speed lies in the notch. [unitless]
+    clutter_db : dict of float
+        One-pulse clutter-to-noise at its gate, by the patch's name; patches that are not there are left out. [dB]
+    snr_db, scnr_db : float
+        Signal-to-noise, and to noise and clutter, in the best usable filter; -inf where there is none. [dB]
+    probability : float
+        Probability of detection in this CPI. [unitless]
+    reasons : tuple of str
+        ``eclipsed``, ``notch``, ``clutter``; empty where it is clear. [unitless]
+    """
+
+    apparent_range_m: float
+    apparent_speed_m_s: float
+    later_pulses: int
+    received: float
+    in_notch: bool
+    clutter_db: dict
+    snr_db: float
+    scnr_db: float
+    probability: float
+    reasons: tuple
+
+
+@dataclass(frozen=True, slots=True)
+class FollowedSet:
+    """What the whole set makes of one target.
+
+    Parameters
+    ----------
+    prfs : tuple of Followed
+        PRF by PRF. [unitless]
+    clear : int
+        On how many looks it is clear. [unitless]
+    seen : bool
+        Whether that is enough. [unitless]
+    probability : float
+        Probability of detection after M of N. [unitless]
+    ghosts : tuple of Ghost or None
+        Other places in the coverage that the PRFs which see it would take it for; ``None`` where it is not
+        seen or the waveform is a stagger. [m, m/s]
+    """
+
+    prfs: tuple
+    clear: int
+    seen: bool
+    probability: float
+    ghosts: tuple | None
+
+
+def follow(computed, range_m, speed_m_s):
+    """Return what a plan makes of one target.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    range_m : float
+        True range. [m]
+    speed_m_s : float
+        True radial speed, positive closing. [m/s]
+
+    Returns
+    -------
+    followed : FollowedSet
+        PRF by PRF, and over all.
+    """
+    prfs = tuple(_followed(computed, index, range_m, speed_m_s) for index in range(computed.plan.n))
+    if computed.is_stagger:
+        return _followed_stagger(computed, prfs, range_m, speed_m_s)
+    clear = sum(not prf.reasons for prf in prfs)
+    ratio = np.array([10.0 ** (prf.scnr_db / 10.0) for prf in prfs])
+    level = detection.set_threshold(computed.plan.target.false_alarm, computed.looks, computed.m)
+    probability = float(set_probability(ratio, computed.m, level, computed.plan.target.fluctuation))
+    seen = clear >= computed.m
+    return FollowedSet(prfs, clear, seen, probability, _ghosts(computed, prfs, range_m, speed_m_s) if seen else None)
+
+
+def _part(computed, range_m):
+    """Return the part of the range axis that serves a range; beyond the coverage the nearest one."""
+    parts = computed.echoes.parts
+    return next((part for part in parts if range_m <= part.range_m[1]), parts[-1])
+
+
+def _followed(computed, index, range_m, speed_m_s):
+    plan, part, patches = computed.plan, _part(computed, range_m), computed.echoes.patches
+    cpi, opening = part.cpis[index], float(part.first_opening_m[index])
+    reach, blind = float(computed.unambiguous_range_m[index]), float(computed.blind_speed_m_s[index])
+    pri, pulse = float(plan.pri_s[index]), float(plan.pulse_s[index])
+    share = float(eclipsing.received_share(range_m, pri, pulse, plan.recovery_s, plan.guard_s, plan.near))
+    power = float(received_power(share, plan.eclipsing_loss))
+    factor = part.factor[index]
+    ratio = np.array(
+        [
+            float(folded_clutter_to_noise(patch, range_m, reach, opening, scale))
+            for patch, scale in zip(patches, factor, strict=True)
+        ]
+    )
+    signal = float(one_pulse_signal(part.strength_m4[index], range_m, opening)) * float(late_share(cpi, range_m)) ** 2
+    outputs = filter_outputs(cpi, speed_m_s, signal, patches, ratio, power)
+    reasons = _reasons(computed, index, range_m, speed_m_s)
+    best = outputs.best if 'notch' not in reasons else -1
+    snr, scnr = (float(outputs.target[best]), float(outputs.scnr[best])) if best >= 0 else (0.0, 0.0)
+    level = detection.set_threshold(plan.target.false_alarm, computed.looks, computed.m)
+    names = [patch.name or f'patch {place + 1}' for place, patch in enumerate(patches)]
+    return Followed(
+        float(ambiguity.fold_range(range_m, reach)),
+        float(ambiguity.fold_speed(speed_m_s, blind)),
+        int(ambiguity.pulses_since(range_m, reach)),
+        share,
+        'notch' in reasons,
+        {name: float(10.0 * np.log10(one)) for name, one in zip(names, ratio.tolist(), strict=True) if one > _HEARD},
+        _decibels(snr),
+        _decibels(scnr),
+        float(cpi_probability(scnr, level, plan.target.fluctuation)) if scnr > 0 else 0.0,
+        reasons,
+    )
+
+
+def _decibels(ratio):
+    return 10.0 * float(np.log10(ratio)) if ratio > 0 else -np.inf
+
+
+def _reasons(computed, index, range_m, speed_m_s):
+    """Say why one PRF does not see the target: eclipsed, in the notch, or under clutter."""
+    plan = computed.plan
+    region = (min(range_m, plan.range_m[0]), max(range_m, plan.range_m[1]))
+    speeds = (min(speed_m_s, plan.speed_m_s[0]), max(speed_m_s, plan.speed_m_s[1]))
+    ranges, clear = computed.prf_spans(region, speeds)
+    piece = computed.echoes.piece_at(range_m) if computed.echoes.patches and not computed.is_stagger else None
+    covered = None if piece is None else piece.speeds
+    answer = zones.why(ranges, clear, plan.n, region, speeds, range_m, speed_m_s, covered)
+    return answer[index].reasons
+
+
+def _ghosts(computed, prfs, range_m, speed_m_s):
+    """Return what else the PRFs that see the target would take it for."""
+    plan = computed.plan
+    blur = float(computed.decode_blur)
+    gate = eclipsing.METRES_PER_SECOND_OF_DELAY / plan.bandwidth_hz
+    width = plan.wavelength_m / (2.0 * plan.pulses * plan.pri_s)
+    return ghosts(
+        (range_m, speed_m_s),
+        (plan.range_m, plan.speed_m_s),
+        (computed.unambiguous_range_m, computed.blind_speed_m_s),
+        (blur * gate, blur * width),
+        computed.m,
+        [not prf.reasons for prf in prfs],
+    )
+
+
+def _followed_stagger(computed, prfs, range_m, speed_m_s):
+    """Return one verdict for the whole cycle: the averaged response, and clear on every interval."""
+    plan, echoes, found = computed.plan, computed.echoes, computed.response
+    share = min(prf.received for prf in prfs)
+    inside = range_m < computed.unambiguous_range_m.min()
+    gain = float(found.response.power(speed_m_s))
+    seen = inside and share > 0 and share >= plan.received_min and 10.0 * np.log10(gain + 1e-30) >= plan.response_min_db
+    part = _part(computed, range_m)
+    noise = 1.0 + sum(
+        canceller_residue(plan.pri_s, echoes.weights, float(plan.wavelength_m[0]), patch)
+        * float(folded_clutter_to_noise(patch, range_m, 1e12, float(part.first_opening_m[0]), scale))
+        for patch, scale in zip(echoes.patches, part.factor[0], strict=True)
+    )
+    power = float(received_power(share, plan.eclipsing_loss)) * inside
+    signal = float(one_pulse_signal(part.strength_m4[0], range_m, float(part.first_opening_m[0])))
+    ratio = power * signal * gain * max(echoes.outputs, 0) / noise
+    level = detection.set_threshold(plan.target.false_alarm, 1, 1, max(echoes.outputs, 1))
+    case = plan.target.fluctuation
+    probability = float(cpi_probability(ratio, level, case, echoes.outputs)) if ratio > 0 else 0.0
+    return FollowedSet(prfs, int(seen), bool(seen), probability, None)
