@@ -9,6 +9,7 @@ import copy
 from dataclasses import dataclass, field
 from fractions import Fraction
 
+from pycore.clock import on_clock
 from pycore.errors import InputError
 from pycore.plan import filled, read
 from pycore.plan_document import checked_number, shown
@@ -180,26 +181,8 @@ def _typed_pri(plan, key, path, text, unit):
 
 
 def _on_clock(plan, pri_us, unit):
-    """Round a PRI to the nearest count of the clock, and say so where that changes it."""
-    clock = Fraction(str(plan['radar']['clock_mhz']))
-    count = max(1, round(pri_us * clock))
-    rounded = as_number(Fraction(count) / clock)
-    exact = Fraction(count) / clock == pri_us
-    if exact or (unit not in _FREQUENCIES and abs(pri_us * clock - count) < Fraction(1, 10**6)):
-        return rounded, []
-    return rounded, [_rounding(pri_us, unit, rounded, clock)]
-
-
-def _rounding(pri_us, unit, rounded, clock):
-    """Say what was typed, what it is in time, and what it became on the clock."""
-    asked, became = f'{float(pri_us):.6g} µs', f'{digits(rounded)} µs'
-    if unit in _FREQUENCIES:
-        scale = float(_FREQUENCIES[unit])
-        asked = f'{1e6 / float(pri_us) / scale:.10g} {unit} is {asked}'
-        became = f'{became}, {1e6 / rounded / scale:.6g} {unit}'
-    else:
-        asked = f'{asked} is off the clock'
-    return f'{asked}; on the {digits(as_number(clock))} MHz clock {became}.'
+    """Round a PRI to the nearest count of the plan's clock."""
+    return on_clock(pri_us, plan['radar']['clock_mhz'], unit)
 
 
 def _enough_prfs(plan):

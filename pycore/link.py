@@ -11,9 +11,11 @@ list carry its number (``must1-range``).
 """
 
 import base64
+import re
 import zlib
 from dataclasses import dataclass, field
 
+from pycore.clock import on_clock
 from pycore.errors import InputError
 from pycore.link_items import read_value, value_text
 from pycore.plan import read
@@ -31,7 +33,7 @@ _IGNORED = ('secret',)
 _LONGEST = 500_000
 _STAND_IN_PRI_US = 1000
 _REMARK = 'remark-'
-_RECORDS = {
+RECORDS = {
     'surface': 'surface',
     'near': 'radar.near_pulse',
     'platform': 'platform',
@@ -40,9 +42,13 @@ _RECORDS = {
     'holds': 'holds_over',
     'weather': 'weather',
 }
-_LISTS = {'must': ('must_see', MOST_REGIONS), 'rain': ('rain', MOST_PATCHES)}
+"""Items that announce a record, and its path."""
+LISTS = {'must': ('must_see', MOST_REGIONS), 'rain': ('rain', MOST_PATCHES)}
+"""Items that announce a list of records: its path and the most it may hold."""
 _LEFT_OUT = ('notes',)
 _SEE = ('coverage.range_km', 'coverage.speed_mps')
+_AFTER_THE_END = re.compile(r'(&end=[0-9a-f]{4})[\s.,;:!?)>\]}"\'&]+$')
+"""What a sentence or a mail may put behind a link."""
 
 
 @dataclass(slots=True)
@@ -123,10 +129,10 @@ def _items(plan, remarks):
         if '[]' in key.path or key.path in _SEE[1:] or (key.path in _LEFT_OUT and not remarks):
             continue
         items.extend(_see(plan, bare) if key.path == _SEE[0] else _item(key, plan, bare))
-    for short, path in _RECORDS.items():
+    for short, path in RECORDS.items():
         if value_at(plan, path) is not None:
             items.append((short, 'yes'))
-    for short, (path, _) in _LISTS.items():
+    for short, (path, _) in LISTS.items():
         items.extend(_list_items(short, path, plan))
     if remarks:
         items.extend((f'{_REMARK}{name}', value_text(None, text)) for name, text in sorted(plan['remarks'].items()))
@@ -195,12 +201,12 @@ def fragment_of(text):
     fragment : str
         What follows ``#``, or ``?`` where there is no ``#``.
     """
-    text = text.strip()
+    text = text.strip().replace('&amp;', '&')
     for mark in ('#', '?'):
         before, found, after = text.partition(mark)
         if found and '=' in after and 'v=' not in before:
             text = after
-    return text.lstrip('#?')
+    return _AFTER_THE_END.sub(r'\1', text.lstrip('#?'))
 
 
 def read_link(text):
@@ -259,7 +265,7 @@ def _check_version(value, opened):
 
 def _short_names():
     """Yield each item that a plan can have: its name in a link, the path it stands for, and the key."""
-    lists = {f'{path}[]': (short, path, most) for short, (path, most) in _LISTS.items()}
+    lists = {f'{path}[]': (short, path, most) for short, (path, most) in LISTS.items()}
     for key in KEYS:
         if key.record in lists:
             short, path, most = lists[key.record]
@@ -276,14 +282,31 @@ _TEXTS = {short for short, (_, key) in _BY_SHORT.items() if key.kind in ('text',
 
 def _document(items, opened):
     """Build a document of all items that can be read; the others are refused one by one."""
-    document = {}
-    order = sorted(items, key=lambda item: item[0] not in _RECORDS and item[0] not in _LISTS)
+    document, taken = {}, set()
+    order = sorted(items, key=lambda item: item[0] not in RECORDS and item[0] not in LISTS)
     for name, text in order:
         try:
+            if name in taken:
+                raise InputError(name[:80], f'{shown(name)} must stand once in a link; the first is taken.')
+            taken.add(name)
             _take(document, name, text)
         except InputError as error:
             _refuse(opened, error.field, text, error.message)
+    pris = next((text for name, text in items if name == 'pri'), '')
+    _put_on_clock(document, 'Hz' if pris.endswith('Hz') else 'µs', opened)
     return document
+
+
+def _put_on_clock(document, unit, opened):
+    """Round PRIs that were written by hand to the clock, and say so, as the page does where they are typed."""
+    waveform, key = document.get('waveform', {}), _BY_SHORT['clock'][1]
+    clock = document.get('radar', {}).get('clock_mhz', key.default)
+    if not isinstance(clock, int | float) or not key.lowest <= clock <= key.highest:
+        clock = key.default
+    rounded = [on_clock(pri, clock, unit) for pri in waveform.get('pri_us') or []]
+    if rounded:
+        waveform['pri_us'] = [pri for pri, _ in rounded]
+        opened.said.extend(sentence for _, said in rounded for sentence in said)
 
 
 def _refuse(opened, field_name, text, message):
@@ -292,10 +315,10 @@ def _refuse(opened, field_name, text, message):
 
 def _take(document, name, text):
     """Put one item into the document."""
-    if name in _RECORDS:
-        _put(document, _RECORDS[name], {} if text == 'yes' else None)
-    elif name in _LISTS:
-        _put(document, _LISTS[name][0], _records(name, text))
+    if name in RECORDS:
+        _put(document, RECORDS[name], {} if text == 'yes' else None)
+    elif name in LISTS:
+        _put(document, LISTS[name][0], _records(name, text))
     elif name == 'see':
         parts = text.split(',')
         for key, part in zip((key for key in KEYS if key.path in _SEE), [*parts, ''], strict=False):
@@ -313,11 +336,11 @@ def _take(document, name, text):
 
 def _records(name, text):
     """Return so many empty records, or one for rain that stands alone."""
-    most = _LISTS[name][1]
+    most = LISTS[name][1]
     if name == 'rain' and text == 'yes':
         return {}
     if not text.isdigit() or not 1 <= int(text[:3]) <= most:
-        raise InputError(_LISTS[name][0], f'{name} must be how many there are, 1 to {most}; got {shown(text)}.')
+        raise InputError(LISTS[name][0], f'{name} must be how many there are, 1 to {most}; got {shown(text)}.')
     return [{} for _ in range(int(text))]
 
 

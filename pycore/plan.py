@@ -10,6 +10,7 @@ from fractions import Fraction
 
 import numpy as np
 
+from pycore.clock import MOST_COUNTS_OFF
 from pycore.clutter import Clutter
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.dwell import time_on_target
@@ -18,9 +19,6 @@ from pycore.errors import InputError
 from pycore.plan_document import filled, shown
 
 __all__ = ['Clutter', 'Crossing', 'MustSee', 'Plan', 'Platform', 'Target', 'Wanted', 'filled', 'read']
-
-MOST_COUNTS_OFF = Fraction(1, 10**6)
-"""A PRI may stand so far off a whole count of the clock. [clock counts]"""
 
 
 @dataclass(frozen=True, slots=True)

@@ -116,7 +116,17 @@ def filled(document):
         raise InputError('pulsewright', f'The plan’s format must be {FORMAT}; got {shown(version)}.')
     body = {name: value for name, value in document.items() if name not in _IN_THE_HEAD}
     checked = _record(TREE, body, '')
+    _unlisted(checked)
     return {'pulsewright': FORMAT, **checked, 'remarks': _remarks(document.get('remarks', {}))}
+
+
+def _unlisted(plan):
+    """Turn lists for each PRI into the one number they hold where there is a single PRI."""
+    if len(plan['waveform']['pri_us']) == 1:
+        for key in KEYS:
+            record, _, name = key.path.partition('.')
+            if key.per_prf and isinstance(plan[record][name], list) and len(plan[record][name]) == 1:
+                plan[record][name] = plan[record][name][0]
 
 
 def _record(branch, given, path):
