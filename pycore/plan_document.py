@@ -117,6 +117,8 @@ def filled(document):
     body = {name: value for name, value in document.items() if name not in _IN_THE_HEAD}
     checked = _record(TREE, body, '')
     _unlisted(checked)
+    if checked['purpose'] == 'weather' and checked['weather'] is None:
+        checked['weather'] = _record(TREE['weather'], {}, 'weather')
     return {'pulsewright': FORMAT, **checked, 'remarks': _remarks(document.get('remarks', {}))}
 
 

@@ -5,10 +5,11 @@ from pycore.findings.dwell import duty, dwell
 from pycore.findings.seen import largest_hole, must_see, unseen_crossing, unseen_inbound, visible
 from pycore.findings.speeds import blind_speed, decode_range, decode_speed, range_walk
 from pycore.findings.verdict import verdict
+from pycore.findings.weather import extended_nyquist, nyquist, second_trip, unfolding, velocity_error
 
 __all__ = ['findings', 'verdict']
 
-_IN_ORDER = (
+_OF_TARGETS = (
     visible,
     must_see,
     largest_hole,
@@ -22,6 +23,7 @@ _IN_ORDER = (
     detection,
     range_walk,
 )
+_OF_WEATHER = (nyquist, extended_nyquist, unfolding, velocity_error, second_trip, dwell, duty)
 
 
 def findings(computed, units):
@@ -40,7 +42,7 @@ def findings(computed, units):
         Each with the engineer's remark on it, where there is one.
     """
     found = []
-    for find in _IN_ORDER:
+    for find in _OF_WEATHER if computed.plan.purpose == 'weather' else _OF_TARGETS:
         answer = find(computed, units)
         found.extend(answer if isinstance(answer, list) else [answer])
     return [finding.with_remark(computed.plan.remarks) for finding in found]
