@@ -87,7 +87,7 @@ def test_a_damaged_part_is_named(note):
     note.open()
 
     expect(note.root).to_have_attribute('data-engine', 'failed')
-    expect(note.page.get_by_text('is damaged or incomplete')).to_be_visible()
+    expect(note.page.get_by_text('is damaged')).to_be_visible()
 
 
 def test_with_scripts_switched_off_a_sentence_says_so(chrome, site, watched, note):

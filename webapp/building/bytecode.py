@@ -11,6 +11,7 @@ from pathlib import Path
 from webapp.building import memory
 from webapp.building.cached import made
 from webapp.building.places import ROOT
+from webapp.building.reach import engine_sources
 from webapp.building.runtime import FILES, NUMPY_WHEEL
 from webapp.building.session import requests
 from webapp.building.stop import Stop
@@ -40,7 +41,7 @@ def engine_parts(node, runtime, with_snapshot=True):
         wasm, stdlib, numpy, core and, if wanted, snapshot.
     """
     kept = json.loads(
-        made('kept.json', lambda place: record(node, runtime, place), *_engine_sources(), *_tools()).read_text()
+        made('kept.json', lambda place: record(node, runtime, place), *engine_sources(), *_tools()).read_text()
     )
     stdlib = made(
         'stdlib.zip', lambda place: compile_library(node, runtime, kept, place), json.dumps(kept['library']), *_tools()
@@ -48,7 +49,7 @@ def engine_parts(node, runtime, with_snapshot=True):
     numpy = made(
         'numpy.pack', lambda place: compile_numpy(node, runtime, kept, place), json.dumps(kept['numpy']), *_tools()
     )
-    core = made('core.pack', lambda place: compile_core(node, runtime, place), *_engine_sources(), *_tools())
+    core = made('core.pack', lambda place: compile_core(node, runtime, place), *engine_sources(), *_tools())
     wasm = Path(runtime) / 'pyodide.asm.wasm'
     parts = {'wasm': wasm, 'stdlib': stdlib, 'numpy': numpy, 'core': core}
     if with_snapshot:
@@ -73,7 +74,7 @@ def record(node, runtime, place):
         Gets kept.json. [unitless]
     """
     print('Recording which modules the engine uses')
-    (place / 'session.json').write_text(json.dumps(requests()))
+    (place / 'session.json').write_text(json.dumps({'sources': source_names(), 'requests': requests()}))
     run(node, runtime, runtime / 'python_stdlib.zip', 'record.py', place)
 
 
@@ -108,17 +109,16 @@ def compile_numpy(node, runtime, kept, place):
 
 
 def compile_core(node, runtime, place):
-    """Compile our own modules that run in the browser; they keep their line numbers and docstrings.
+    """Compile our own modules that run in the browser; they keep their line numbers.
 
     Parameters
     ----------
     node, runtime, place : Path
         As in `record`. [unitless]
     """
-    names = [path.relative_to(ROOT).as_posix() for path in _engine_sources()]
-    print(f'Compiling {len(names)} modules of the engine')
-    files = {name: f'/project/{name}' for name in names}
-    compile_archive(node, runtime, place, archive='pack', out='core.pack', optimize=0, bare=False, files=files)
+    files = {name: f'/project/{name}' for name in source_names()}
+    print(f'Compiling {len(files)} modules of the engine')
+    compile_archive(node, runtime, place, archive='pack', out='core.pack', optimize=2, bare=False, files=files)
 
 
 def compile_archive(node, runtime, place, **job):
@@ -198,9 +198,15 @@ def run(node, runtime, stdlib, script, place, **more):
         raise Stop(f'Pyodide could not run {script} while building ({last[:300]}): the sources have an error there.')
 
 
-def _engine_sources():
-    """Return our modules that run in the browser."""
-    return [*sorted((ROOT / 'pycore').rglob('*.py')), ROOT / 'webapp' / 'engine' / 'bridge.py']
+def source_names():
+    """Return our modules that run in the browser, as paths in the project.
+
+    Returns
+    -------
+    names : list of str
+        With slashes.
+    """
+    return [path.relative_to(ROOT).as_posix() for path in engine_sources()]
 
 
 def _tools():

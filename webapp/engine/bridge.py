@@ -82,7 +82,7 @@ def _wired(value, buffer):
 def _stored(array, buffer):
     """Append an array to the buffer and return where it lies: dtype, shape, offset."""
     name = NARROWED.get(array.dtype.name, array.dtype.name)
-    if name.startswith(('int', 'uint')) and array.size and not np.can_cast(_reach(array), name):
+    if np.issubdtype(name, np.integer) and not _fits(array, np.iinfo(name)):
         name = 'float64'
     buffer.extend(b'\0' * (-len(buffer) % ALIGNMENT))
     offset = len(buffer)
@@ -91,6 +91,6 @@ def _stored(array, buffer):
     return [name, list(array.shape), offset]
 
 
-def _reach(array):
-    """Return the smallest type that holds every count of the array."""
-    return np.promote_types(np.min_scalar_type(array.min()), np.min_scalar_type(array.max()))
+def _fits(array, limits):
+    """Return whether every count of the array lies within the limits of a type."""
+    return not array.size or (limits.min <= int(array.min()) and int(array.max()) <= limits.max)

@@ -1,6 +1,6 @@
 """Run inside Pyodide: use the engine as a page would, and write down which modules of the library and of numpy it took.
 
-Reads /project (our sources), /runtime (numpy's wheel) and /job/session.json; writes /job/kept.json.
+Reads /project (our sources, by the names in the session), /runtime (numpy's wheel) and /job/session.json;
 """
 
 import ast
@@ -21,12 +21,6 @@ def text_of(path):
     """Return what is written in a file."""
     with open(path, encoding='utf-8') as file:
         return file.read()
-
-
-def sources():
-    """Return the text of each of our modules that go to the browser."""
-    paths = [*glob.glob('/project/pycore/**/*.py', recursive=True), '/project/webapp/engine/bridge.py']
-    return [text_of(path) for path in sorted(paths)]
 
 
 def named_imports(text):
@@ -65,15 +59,16 @@ def kept():
 
 zipfile.ZipFile(glob.glob('/runtime/numpy-*.whl')[0]).extractall(PACKAGES)
 sys.path.insert(0, '/project')
-for text in sources():
-    for name in sorted(set(named_imports(text))):
+session = json.loads(text_of('/job/session.json'))
+for path in session['sources']:
+    for name in sorted(set(named_imports(text_of(f'/project/{path}')))):
         take(name)
 for name in SELDOM:
     importlib.import_module(name)
 
 bridge = importlib.import_module('webapp.engine.bridge')
 columns = importlib.import_module('pycore.columns')
-for request in json.loads(text_of('/job/session.json')):
+for request in session['requests']:
     if request['args'].get('figures') == 'all':
         request['args']['figures'] = columns.FIGURES
     reply = json.loads(bridge.answer(json.dumps(request))[0])
