@@ -48,6 +48,24 @@ class Choices:
         run = np.searchsorted(before, index, 'right') - 1
         return np.array(self.first, dtype=np.int64)[run] + (index - before[run]) * self.step
 
+    def hold(self, counts):
+        """Return which lengths are among the PRIs.
+
+        Parameters
+        ----------
+        counts : int array, shape S
+            Any lengths. [clock counts]
+
+        Returns
+        -------
+        held : bool array, shape S
+            True where a PRI may be so long.
+        """
+        first, count = (np.array(part, dtype=np.int64) for part in (self.first, self.count))
+        run = np.searchsorted(first, counts, 'right') - 1
+        since = np.asarray(counts) - first[run]
+        return (run >= 0) & (since % self.step == 0) & (since // self.step < count[run])
+
     def below(self, counts):
         """Return how many of the PRIs are below a length.
 
