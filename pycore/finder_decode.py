@@ -8,7 +8,7 @@ asked of all candidates at once is a sieve that never drops a set that decodes;
 
 from fractions import Fraction
 from itertools import combinations
-from math import comb
+from math import ceil, comb
 
 import numpy as np
 
@@ -152,6 +152,9 @@ class Decoder:
             return last_place_exactly(pris, counts, self.limits.m, wanted)
         widths = range_half_widths(blur, [self.gates[place] for place, _ in held])
         (width,) = range_half_widths(blur, [self.gates[kind]])
+        if not held:
+            # One PRF alone confuses from its first interval on.
+            return np.asarray(counts) >= ceil(max(wanted + width, 2 * width))
         return last_place(pris, widths, counts, width, self.limits.m, wanted)
 
     def _in_speed(self, held, kind, counts):
