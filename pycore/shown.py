@@ -116,7 +116,10 @@ def shown_value(key, value, units):
         unit = shown_unit(key, units)
         joint = ' to ' if key.kind == 'interval' else ', '
         listed = joint.join(shown_digits(key, one, units) for one in value)
-        return f'{listed}{THIN_SPACE}{unit}' if unit else listed
-    unit = shown_unit(key, units)
-    text = shown_digits(key, value, units)
-    return f'{text}{THIN_SPACE}{unit}' if unit else text
+        return _with_unit(listed, unit)
+    return _with_unit(shown_digits(key, value, units), shown_unit(key, units))
+
+
+def _with_unit(text, unit):
+    """Put the unit behind digits: kept on one line, degrees close up."""
+    return f'{text}{"" if unit in ("", "°") else THIN_SPACE}{unit}'

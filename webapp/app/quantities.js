@@ -18,7 +18,7 @@ export function createQuantities({ other_units: others, family_choice: choice },
     const number = 'over' in how ? how.over / value : value / how.divide;
     return digits(Number(number.toPrecision(CONVERTED_DIGITS)));
   };
-  const withUnit = (text, key) => (unitOf(key) ? `${text}${NARROW}${unitOf(key)}` : text);
+  const withUnit = (text, key) => `${text}${['', '°'].includes(unitOf(key)) ? '' : NARROW}${unitOf(key)}`; // degrees close up
   const shown = (key, value) => {
     if (value === null || value === undefined) return 'none';
     if (typeof value === 'boolean') return value ? 'yes' : 'no';
