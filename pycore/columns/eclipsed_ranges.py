@@ -1,7 +1,7 @@
 """Figure: which ranges each PRF receives, how much of the echo, and which of them enough PRFs receive.
 
 Sources: ``lanes`` (a bar along each lane), ``eclipsed`` (on each PRF), ``unseen``
-(on fewer than M), ``received`` (the received share as one line with gaps).
+(on fewer than M), ``received`` (the received share, its area and its edge).
 """
 
 import numpy as np
@@ -19,7 +19,7 @@ NAME, TITLE = 'eclipsed-ranges', 'Eclipsed ranges'
 MOST_WITH_SHARE = 6
 """PRFs up to which the received share is drawn as well: with more, its lanes would be too low to read. [unitless]"""
 
-_SHARE_FROM, _SHARE_HIGH = -0.44, 0.2
+_SHARE_FROM, _SHARE_HIGH = -0.47, 0.2
 
 
 def picture(computed, units, size=None):
@@ -69,21 +69,15 @@ def _columns(computed, axis, eclipsed, unseen, with_top):
 
 
 def _received(plan, axis, middle):
-    """Return the received share of all PRFs as one line under their bars, parted by nan."""
+    """Return the received share of all PRFs under their bars, parted by nan: areas down to a base, and their edges."""
     if plan.n > MOST_WITH_SHARE:
-        return {'x': np.zeros(0), 'y': np.zeros(0)}
-    parts = received_corners(plan)
-    x = [axis.shown(range_m)[_down_to_the_base(range_m)] for range_m, _ in parts]
-    y = [
-        at + _SHARE_FROM + _SHARE_HIGH * np.concatenate(([0.0], share, [0.0, np.nan]))
-        for at, (_, share) in zip(middle, parts, strict=True)
-    ]
-    return {'x': np.concatenate(x), 'y': np.concatenate(y)}
-
-
-def _down_to_the_base(corners):
-    """Return indices that repeat the first and the last corner, and the last once more for the gap after it."""
-    return np.concatenate(([0], np.arange(corners.size), [-1, -1]))
+        return {'x': np.zeros(0), 'area': np.zeros(0), 'edge': np.zeros(0)}
+    x, area, edge = [], [], []
+    for at, (range_m, share) in zip(middle + _SHARE_FROM, received_corners(plan), strict=True):
+        x += [axis.shown(range_m[[0]]), axis.shown(range_m), axis.shown(range_m[[-1, -1]])]
+        area += [[at], at + _SHARE_HIGH * share, [at, np.nan]]
+        edge += [[np.nan], at + _SHARE_HIGH * share, [np.nan, np.nan]]
+    return {'x': np.concatenate(x), 'area': np.concatenate(area), 'edge': np.concatenate(edge)}
 
 
 def _words(computed, axis, names, eclipsed, unseen):

@@ -25,6 +25,6 @@ def build(picture):
     made = plot(NAME, picture)
     lanes(made, NAME, picture, 'eclipsed', height=0.5)
     received = source(NAME, picture, 'received')
-    draw(made, received, Patch(x='x', y='y', line_alpha=0), fill_color='asked')
-    draw(made, received, Line(x='x', y='y', line_width=1.25), line_color='line')
+    draw(made, received, Patch(x='x', y='area', line_alpha=0), fill_color='asked')
+    draw(made, received, Line(x='x', y='edge', line_width=1.25), line_color='line')
     return made
