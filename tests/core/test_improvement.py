@@ -17,8 +17,8 @@ CLOCK_HZ, LAMBDA = 1e6, 0.1
 
 
 def in_many_digits(pri_counts, weights, decay):
-    """Residue by the plain double sum over pulses and phases, with 120 digits."""
-    with mpmath.workdps(120):
+    """Residue by the plain double sum over pulses and phases, with 200 digits."""
+    with mpmath.workdps(200):
         w, total = [mpmath.mpf(str(weight)) for weight in weights], mpmath.mpf(0)
         for phase in range(len(pri_counts)):
             times = [sum((pri_counts[(phase + k) % len(pri_counts)] for k in range(j)), 0) for j in range(len(w))]
@@ -35,7 +35,15 @@ def spread_of(phase_spread, pri_s):
 
 
 CYCLES = [(1000,), (25, 30, 27, 31), (13333, 10000), (7, 7, 7)]
-WEIGHTS = [(1.0, -1.0), (1.0, -2.0, 1.0), (1.0, -3.0, 3.0, -1.0), (0.1, 0.2, -0.3), (1.0, 0.5, 0.2), (2.5, 0.0, -2.5)]
+WEIGHTS = [
+    (1.0, -1.0),
+    (1.0, -2.0, 1.0),
+    (1.0, -3.0, 3.0, -1.0),
+    (0.1, 0.2, -0.3),
+    (1.0, 0.5, 0.2),
+    (2.5, 0.0, -2.5),
+    binomial_weights(7),
+]
 
 
 @pytest.mark.parametrize('pri_counts', CYCLES)
