@@ -5,8 +5,11 @@ on standard error and exit status 2. Everything it says comes from :mod:`pycore.
 """
 
 import argparse
+import contextlib
+import csv
 import json
 import sys
+from fractions import Fraction
 from pathlib import Path
 
 from pycore import api, document
@@ -52,6 +55,13 @@ def _parser():
     assess = _command(commands, 'assess', _assess, 'print the findings of a plan')
     assess.add_argument('--json', action='store_true', help='print every number as JSON')
     _command(commands, 'link', _link, 'print the link of a plan, without the address it is appended to')
+    vary = _command(commands, 'vary', _vary, 'print the findings against one input, or two, as CSV')
+    vary.add_argument('inputs', nargs='+', metavar='KEY A..B', help='a key of the plan and the interval it runs over')
+    vary.add_argument('--by', action='append', required=True, metavar='STEP', help='step of each input, in its unit')
+    vary.add_argument('-o', dest='output', metavar='FILE', help='write there instead of standard output')
+    compare = _command(commands, 'compare', _compare, 'print how a plan differs from others')
+    compare.add_argument('others', nargs='+', metavar='OTHER', help='plans to compare it with')
+    compare.add_argument('--json', action='store_true', help='print the comparison as JSON')
     return parser
 
 
@@ -116,6 +126,61 @@ def _assess(options):
 
 def _link(options):
     print(api.note(plan_of(options.plan))['link'])
+
+
+def _vary(options):
+    """Print a table of findings; a pair of a key and an interval for each input."""
+    keys, ranges = options.inputs[::2], options.inputs[1::2]
+    if len(keys) != len(ranges) or len(keys) != len(options.by):
+        raise InputError('', 'vary takes a key and an interval A..B for each input, and --by for each.')
+    inputs = [_axis(*one) for one in zip(keys, ranges, options.by, strict=True)]
+    table = api.vary(plan_of(options.plan), inputs)
+    with _opened(options.output) as file:
+        writer = csv.writer(file, lineterminator='\n')
+        writer.writerow(table['head'])
+        writer.writerows(table['rows'])
+
+
+def _axis(key, interval, step):
+    low, found, high = interval.partition('..')
+    try:
+        ends = [Fraction(text) for text in (low, high, step)]
+    except (ValueError, ZeroDivisionError):
+        ends = None
+    if not found or ends is None:
+        raise InputError(key[:80], f'{key[:80]} must run over an interval such as 0.5..3; got {interval[:40]}.')
+    return {'key': key, 'from': ends[0], 'to': ends[1], 'by': ends[2]}
+
+
+def _opened(path):
+    if path is None:
+        return contextlib.nullcontext(sys.stdout)
+    try:
+        return Path(path).open('w', encoding='utf-8', newline='')
+    except OSError as error:
+        raise InputError('', f'The table cannot be written to {path}: {error.strerror}.') from None
+
+
+def _compare(options):
+    """Print inputs that differ, then findings; exit with 1 where a verdict differs."""
+    plan = plan_of(options.plan)
+    answers = [api.compare(plan_of(words), plan) for words in options.others]
+    if options.json:
+        print(json.dumps(answers, ensure_ascii=False, allow_nan=False))
+    else:
+        for words, answer in zip(options.others, answers, strict=True):
+            _print_comparison(words, answer)
+    return int(any(answer['differ'] for answer in answers))
+
+
+def _print_comparison(words, answer):
+    print(f'{words} against the first plan:')
+    for one in answer['inputs']:
+        print(f'  {one["label"]}: {one["plan"]} (was {one["other"]})')
+    if not answer['inputs']:
+        print('  no input differs')
+    for one in answer['findings']:
+        print(f'  {one["change"]:<7} {one["label"]}: {one["value_text"]} (was {one["other_text"]})')
 
 
 if __name__ == '__main__':

@@ -4,13 +4,18 @@ The command line, the worker in the browser and notebooks all go through these.
 No mathematics lives here.
 """
 
+import math
+
 from pycore import edit, link
 from pycore.assessment import assessment
 from pycore.columns import picture
 from pycore.computed import Computed
+from pycore.differences import differing_inputs, judged_changes, verdicts_differ
 from pycore.errors import InputError
 from pycore.findings import findings, verdict
+from pycore.follow import follow
 from pycore.plan import filled, read
+from pycore.variation import steps, varied
 from pycore.wording import SHOWN_UNITS
 
 
@@ -105,5 +110,119 @@ def _shown(finding):
     return {key: getattr(finding, key) for key in keys}
 
 
-ACTIONS = {'assess': assess, 'note': note}
+def compare(plan, other, units=None):
+    """Return how a plan differs from another one: inputs first, then findings.
+
+    Parameters
+    ----------
+    plan, other : dict
+        Two plans; words such as better are said of the first. [plan's units]
+    units : mapping or None
+        Units that the reader prefers. [unitless]
+
+    Returns
+    -------
+    comparison : dict
+        ``inputs``, ``findings`` and ``differ`` (whether any verdict does).
+    """
+    units = {**SHOWN_UNITS, **(units or {})}
+    ours, theirs = (Computed(read(one)) for one in (plan, other))
+    changes = judged_changes(findings(ours, units), findings(theirs, units))
+    return {
+        'inputs': differing_inputs(ours.plan.document, theirs.plan.document, units),
+        'findings': changes,
+        'differ': verdicts_differ(changes),
+    }
+
+
+def vary(plan, inputs):
+    """Return the findings of a plan while one input or two take other values.
+
+    Parameters
+    ----------
+    plan : dict
+        The plan they start from. [plan's units]
+    inputs : sequence of dict
+        One or two of ``key``, ``from``, ``to``, ``by``. [unit of each key]
+
+    Returns
+    -------
+    table : dict
+        ``head`` and ``rows``: the inputs, then value and verdict of each finding; where a plan is refused, only
+        the reason.
+    """
+    axes = [(one['key'], steps(one['key'], one['from'], one['to'], one['by'])) for one in inputs]
+    if not 1 <= len(axes) <= 2:
+        raise InputError('', f'One input or two can be varied; got {len(axes)}.')
+    head, rows = [path for path, _ in axes], []
+    for values, result in varied(plan, axes):
+        if isinstance(result, InputError):
+            rows.append({**dict(zip(head, values, strict=True)), 'refused': result.message})
+            continue
+        found = {}
+        for finding in findings(Computed(read(result)), SHOWN_UNITS):
+            found[finding.name], found[f'{finding.name} met'] = finding.value, finding.met
+        rows.append({**dict(zip(head, values, strict=True)), **found})
+    columns = list(dict.fromkeys(column for row in rows for column in row))
+    return {'head': columns, 'rows': [[row.get(column) for column in columns] for row in rows]}
+
+
+def follow_target(plan, range_km, speed_mps):
+    """Return what a plan makes of one target.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+    range_km : float
+        True range, not negative. [km]
+    speed_mps : float
+        True radial speed, positive closing. [m/s]
+
+    Returns
+    -------
+    followed : dict
+        ``prfs`` (one for each PRI), ``clear``, ``seen``, ``probability``, ``ghosts``.
+    """
+    found = follow(Computed(read(plan)), float(range_km) * 1e3, float(speed_mps))
+    return {
+        'range_km': range_km,
+        'speed_mps': speed_mps,
+        'prfs': [_followed(one) for one in found.prfs],
+        'clear': found.clear,
+        'seen': found.seen,
+        'probability': found.probability,
+        'ghosts': None
+        if found.ghosts is None
+        else [
+            {
+                'range_km': [end / 1e3 for end in ghost.range_m],
+                'speed_mps': list(ghost.speed_m_s),
+                'prfs': list(ghost.prfs),
+            }
+            for ghost in found.ghosts
+        ],
+    }
+
+
+def _followed(one):
+    return {
+        'apparent_range_km': one.apparent_range_m / 1e3,
+        'apparent_speed_mps': one.apparent_speed_m_s,
+        'later_pulses': one.later_pulses,
+        'received_share': one.received,
+        'in_notch': one.in_notch,
+        'clutter_db': one.clutter_db,
+        'snr_db': _finite(one.snr_db),
+        'scnr_db': _finite(one.scnr_db),
+        'probability': one.probability,
+        'reasons': list(one.reasons),
+    }
+
+
+def _finite(value):
+    return value if math.isfinite(value) else None
+
+
+ACTIONS = {'assess': assess, 'note': note, 'compare': compare, 'vary': vary, 'follow': follow_target}
 """What the worker in the browser may be asked for, by name."""
