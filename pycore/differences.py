@@ -1,5 +1,6 @@
 """Two plans side by side: inputs that differ first, then each finding as better, worse or the same."""
 
+from pycore.findings.finding import NOT_ASKED
 from pycore.plan_document import TREE
 from pycore.sentence import key_of
 from pycore.shown import shown_value
@@ -84,7 +85,7 @@ def judged_changes(findings, others):
         ``name``, ``label``, both values and verdicts, ``change``; a finding that only one plan has is ``new`` or
         ``gone``.
     """
-    ours, theirs = ({one.name: one for one in group} for group in (findings, others))
+    ours, theirs = ({one.name: one for one in group if one.value_text != NOT_ASKED} for group in (findings, others))
     names = list(dict.fromkeys([*ours, *theirs]))
     return [_change(name, ours.get(name), theirs.get(name)) for name in names]
 

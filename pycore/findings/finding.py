@@ -4,6 +4,8 @@ from dataclasses import dataclass, replace
 
 from pycore.wording import capitalised
 
+NOT_ASKED = 'not asked'
+"""What stands for the number of a finding that the plan does not ask for."""
 SIGNS = {'met': '✓', 'not met': '✗', 'accepted': '✗', 'for information': '○'}
 """The sign beside each verdict's words, so that nothing is told by colour alone."""
 

@@ -2,7 +2,7 @@
 
 import math
 
-from pycore.findings.finding import Finding, at_least, at_most
+from pycore.findings.finding import NOT_ASKED, Finding, at_least, at_most
 from pycore.wording import (
     as_typed,
     as_typed_percent,
@@ -323,7 +323,7 @@ def unseen_crossing(computed, units):
     """
     wanted, crossing = computed.plan.wanted.unseen_s, computed.plan.crossing
     if crossing is None:
-        return Finding('unseen-crossing', 'crossing track in the notch', None, 'not asked', 's')
+        return Finding('unseen-crossing', 'crossing track in the notch', None, NOT_ASKED, 's')
     speed, speed_unit = in_speed_unit(crossing.speed_m_s, units)
     distance, unit = in_range_unit(crossing.range_m, units)
     label = f'a crossing track, {trimmed(speed)} {speed_unit} at {trimmed(distance)} {unit}, stays in the notch'
