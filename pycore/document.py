@@ -9,6 +9,7 @@ from pycore.errors import InputError
 from pycore.plan_document import shown
 
 _DEEPEST = 40
+_MOST_DIGITS = 400
 
 
 def understood(text):
@@ -36,7 +37,7 @@ def understood(text):
         return _json(stripped)
     if 'v=' in stripped and '=' in stripped:
         return _linked(stripped)
-    if re.match(r'[+\-]?[.,]?\d', stripped):
+    if any(re.match(r'\s*[+\-]?[.,]?[0-9]', line) for line in stripped.split('\n', 2)[:2]):
         bare = {'waveform': {'pri_us': [1000]}}
         return apply(bare, {'do': 'paste-pris', 'text': stripped}).document
     raise InputError('', f'A plan must be a JSON file, a link or a list of PRIs; got {shown(stripped)}.')
@@ -47,7 +48,7 @@ def _json(text):
     if re.search(rf'[\[{{]{{{_DEEPEST}}}', re.sub(r'[^\[\]{}]', '', text)):
         raise InputError('', f'A plan must not nest deeper than {_DEEPEST}.')
     try:
-        return json.loads(text, object_pairs_hook=_once)
+        return json.loads(text, object_pairs_hook=_once, parse_int=_integer)
     except json.JSONDecodeError as error:
         raise InputError(
             '', f'The plan must be JSON; at line {error.lineno}, column {error.colno}: {error.msg}.'
@@ -57,18 +58,26 @@ def _json(text):
 
 
 def _once(pairs):
-    names = [name for name, _ in pairs]
-    twice = next((name for name in names if names.count(name) > 1), None)
-    if twice is not None:
-        raise InputError(twice[:80], f'The key {shown(twice)} must be given once; it is given twice.')
-    return dict(pairs)
+    taken = {}
+    for name, value in pairs:
+        if name in taken:
+            raise InputError(name[:80], f'The key {shown(name)} must be given once; it is given twice.')
+        taken[name] = value
+    return taken
+
+
+def _integer(digits):
+    """Read a whole number; one so long that no key can want it is refused before it is worked out."""
+    if len(digits) > _MOST_DIGITS:
+        raise InputError('', f'A plan must not hold a number of {len(digits)} digits.')
+    return int(digits)
 
 
 def _linked(text):
     """Open a link on the command line, where nothing may pass in silence."""
     opened = link.read_link(text)
-    if opened.refused:
-        raise InputError(opened.refused[0]['key'], opened.refused[0]['message'])
     if opened.cut:
         raise InputError('', 'The link must end in its checksum, end=; it was cut.')
+    if opened.refused:
+        raise InputError(opened.refused[0]['key'], opened.refused[0]['message'])
     return opened.document

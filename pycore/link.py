@@ -260,7 +260,10 @@ def _split(text, opened):
 
 def _check_version(value, opened):
     if value != VERSION:
-        opened.said.append(f'The link was made for version {shown(value)} of the plan; this is version {VERSION}.')
+        message = (
+            f'The link must be of version {VERSION}; it is of version {shown(value)}, read as if it were {VERSION}.'
+        )
+        _refuse(opened, 'pulsewright', value, message)
 
 
 def _short_names():
@@ -363,7 +366,8 @@ def _usable(document, opened):
     waveform = document.setdefault('waveform', {})
     if not waveform.get('pri_us'):
         waveform['pri_us'] = [_STAND_IN_PRI_US]
-        opened.said.append(f'No PRI could be read from the link; {_STAND_IN_PRI_US} µs stands in.')
+        message = f'PRI must be given; none could be read from the link, and {_STAND_IN_PRI_US} µs stands in.'
+        _refuse(opened, 'waveform.pri_us', '', message)
     for _ in range(len(KEYS) + 1):
         try:
             return read(document).document

@@ -296,12 +296,12 @@ def test_ampersands_that_a_mail_has_escaped_are_understood():
 
 
 def test_a_link_of_a_later_version_says_so():
-    assert 'version' in link.read_link('v=2&pri=980us&end=0000').said[0]
+    assert 'version' in link.read_link('v=2&pri=980us&end=0000').refused[0]['message']
 
 
 def test_a_link_without_intervals_never_passes_for_a_plan():
     opened = link.read_link('v=1&carrier=2.9GHz&end=0000')
-    assert 'PRI' in opened.said[0]
+    assert [refused['key'] for refused in opened.refused] == ['waveform.pri_us']
 
 
 def test_a_frequency_written_by_hand_is_put_on_the_clock_and_said():
