@@ -1,97 +1,97 @@
-"""How wide a notch should be, in its parts: surface, scanning, platform and filter."""
+"""How wide the notch should be: what spreads the clutter, and what the Doppler filters need beyond it.
+
+The spread that scanning adds is ``improvement.scanning_spread``.
+"""
 
 import math
 from dataclasses import dataclass
 
-from pycore.improvement import scanning_spread
-
-_GAUSSIAN_BEAM_TWICE = 4.0 * math.sqrt(math.log(2.0))
+import numpy as np
 
 
 @dataclass(frozen=True, slots=True)
 class SuggestedNotch:
-    """A notch that leaves no clutter above the noise, and what it is made of.
+    """A suggested half-width of the notch, in its parts; each is a number or one for each PRF.
 
     Parameters
     ----------
-    surface_m_s, scanning_m_s, platform_m_s : float
-        Standard deviations of speed: of the surface itself, by the turning beam, by the radar's own motion. [m/s]
-    spread_m_s : float
-        Root of the sum of their squares. [m/s]
-    reach : float
-        Standard deviations out to which the clutter stands above the noise, √(2 ln CNR). [unitless]
-    filter_m_s : float
-        From a filter's centre to where it is down to its own sidelobe level. [m/s]
-    half_width_m_s : float
-        reach × spread + filter. [m/s]
+    surface_m_s : float or array, shape N
+        Spread of the surface's own motion. [m/s]
+    platform_m_s : float or array, shape N
+        Spread that the platform's motion adds over the beam. [m/s]
+    scanning_m_s : float or array, shape N
+        Spread that the beam's scanning adds. [m/s]
+    spread_m_s : float or array, shape N
+        The three together, as a root of the sum of squares. [m/s]
+    clutter_m_s : float or array, shape N
+        How far from its middle the clutter stands above the noise. [m/s]
+    filter_m_s : float or array, shape N
+        From a filter's middle to where it is first down to its sidelobes. [m/s]
+    notch_m_s : float or array, shape N
+        Clutter part and filter part added: the suggestion. [m/s]
     """
 
-    surface_m_s: float
-    scanning_m_s: float
-    platform_m_s: float
-    spread_m_s: float
-    reach: float
-    filter_m_s: float
-    half_width_m_s: float
+    surface_m_s: np.ndarray
+    platform_m_s: np.ndarray
+    scanning_m_s: np.ndarray
+    spread_m_s: np.ndarray
+    clutter_m_s: np.ndarray
+    filter_m_s: np.ndarray
+    notch_m_s: np.ndarray
 
 
 def platform_spread(speed_m_s, look_deg, beamwidth_deg):
-    """Return the spread of speed that a radar's own motion gives to surface clutter.
+    """Return the spread that a moving platform gives to clutter across the beam.
 
     Parameters
     ----------
     speed_m_s : float
-        Speed over ground. [m/s]
+        Speed of the platform. [m/s]
     look_deg : float
-        Angle of the beam off the track. [deg]
+        Angle of the beam from the track. [deg]
     beamwidth_deg : float
-        One-way 3 dB beamwidth in azimuth. [deg]
+        One-way 3 dB beamwidth. [deg]
 
     Returns
     -------
     spread_m_s : float
-        V |sin(look)| beamwidth/(4 √ln 2). [m/s]
+        V sin(look) · beamwidth/(4 √ln2). [m/s]
 
     Notes
     -----
-    Derived here: across a narrow beam the closing speed changes by V sin(look) for each radian, and a Gaussian beam
-    seen both ways, 2^(-8u²) in one-way beamwidths u, has the standard deviation 1/(4 √ln 2).
+    Derived here: across a narrow beam the radial speed changes by V sin(look) for each radian, and a Gaussian beam of
+    one-way 3 dB width θ has, two ways, the standard deviation θ/(4 √ln2). Looking along the track leaves nothing in
+    this approximation.
     """
-    across = abs(math.sin(math.radians(look_deg)))
-    return speed_m_s * across * math.radians(beamwidth_deg) / _GAUSSIAN_BEAM_TWICE
+    sideways = abs(speed_m_s * math.sin(math.radians(look_deg)))
+    return sideways * math.radians(beamwidth_deg) / (4.0 * math.sqrt(math.log(2.0)))
 
 
-def suggested_notch(cpi, lobe_edge_filters, clutter_to_noise, surface_m_s, time_on_target_s=None, platform_m_s=0.0):
-    """Return the notch that one PRF's surface clutter asks for.
+def suggested_notch(clutter_to_noise, surface_m_s, platform_m_s, scanning_m_s, lobe_filters, filter_width_m_s):
+    """Return a suggested half-width of the notch with its parts.
 
     Parameters
     ----------
-    cpi : Cpi
-        The PRF: interval, wavelength, pulses that count. [unitless]
-    lobe_edge_filters : float
-        From a filter's centre to where it is down to its sidelobe level (``filters.lobe_edge``). [filters]
-    clutter_to_noise : float
-        One-pulse power ratio of the strongest clutter; up to 1 the clutter asks for nothing. [unitless]
-    surface_m_s : float
-        Standard deviation of the surface's own speed. [m/s]
-    time_on_target_s : float or None
-        Time between the one-way half-power points of a turning beam; ``None`` for one that does not turn. [s]
-    platform_m_s : float
-        Of :func:`platform_spread`. [m/s]
+    clutter_to_noise : float or array, shape N
+        Power ratio; up to 1 the clutter needs no room of its own. [unitless]
+    surface_m_s, platform_m_s, scanning_m_s : float or array, shape N
+        Spreads of the surface itself, by the platform, by scanning. [m/s]
+    lobe_filters : float or array, shape N
+        Filters from a filter's middle to where its window is first down to its sidelobes. [unitless]
+    filter_width_m_s : float or array, shape N
+        Width of a filter. [m/s]
 
     Returns
     -------
     notch : SuggestedNotch
-        In its parts.
+        σ √(2 ln CNR) + x λ/(2 n T).
 
     Notes
     -----
-    Derived here: a Gaussian line of power C above the noise is down to the noise at √(2 ln C) standard deviations.
+    Derived here: a Gaussian spectrum that is CNR above the noise at its middle has fallen to the noise at
+    σ √(2 ln CNR).
     """
-    scanning = 0.0 if time_on_target_s is None else scanning_spread(cpi.wavelength_m, time_on_target_s)
-    spread = math.hypot(surface_m_s, scanning, platform_m_s)
-    reach = math.sqrt(2.0 * math.log(max(clutter_to_noise, 1.0)))
-    edge = lobe_edge_filters * cpi.blind_speed_m_s / cpi.pulses
-    return SuggestedNotch(
-        surface_m_s, float(scanning), platform_m_s, spread, reach, float(edge), reach * spread + float(edge)
-    )
+    spread = np.sqrt(np.square(surface_m_s) + np.square(platform_m_s) + np.square(scanning_m_s))
+    clutter = spread * np.sqrt(2.0 * np.log(np.maximum(clutter_to_noise, 1.0)))
+    filters = np.multiply(lobe_filters, filter_width_m_s)
+    return SuggestedNotch(surface_m_s, platform_m_s, scanning_m_s, spread, clutter, filters, clutter + filters)

@@ -18,28 +18,28 @@ def a_cpi(window='chebyshev', pulses=9):
 
 
 def test_the_parts_of_a_notch_add_up():
-    cpi = a_cpi()
-    notch = suggested_notch(cpi, 1.77, 10**4.5, 0.3, 0.0195, 0.4)
-    scanning = 0.265 * LAMBDA / (2 * 0.0195)
-    assert notch.scanning_m_s == pytest.approx(scanning, rel=1e-3)
-    assert notch.spread_m_s == pytest.approx(math.hypot(0.3, scanning, 0.4), rel=1e-3)
-    assert notch.filter_m_s == pytest.approx(1.77 * LAMBDA / (2 * 9 * 980e-6))
-    assert notch.half_width_m_s == pytest.approx(notch.reach * notch.spread_m_s + notch.filter_m_s)
+    notch = suggested_notch(10**4.5, 0.3, 0.4, 0.5, 1.77, 6.0)
+    assert notch.spread_m_s == pytest.approx(math.sqrt(0.3**2 + 0.4**2 + 0.5**2))
+    assert notch.filter_m_s == pytest.approx(1.77 * 6.0)
+    assert notch.notch_m_s == pytest.approx(notch.clutter_m_s + notch.filter_m_s)
 
 
-def test_at_its_reach_a_gaussian_line_is_down_to_the_noise():
-    notch = suggested_notch(a_cpi(), 0.0, 1e4, 0.5)
-    assert 1e4 * math.exp(-0.5 * (notch.half_width_m_s / 0.5) ** 2) == pytest.approx(1.0)
+def test_where_the_clutter_part_ends_a_gaussian_line_is_down_to_the_noise():
+    notch = suggested_notch(1e4, 0.5, 0.0, 0.0, 0.0, 6.0)
+    assert 1e4 * math.exp(-0.5 * (notch.notch_m_s / 0.5) ** 2) == pytest.approx(1.0)
 
 
 @pytest.mark.parametrize('ratio', [0.0, 0.3, 1.0])
 def test_clutter_below_the_noise_asks_for_the_filter_alone(ratio):
-    notch = suggested_notch(a_cpi(), 1.77, ratio, 0.5)
-    assert notch.half_width_m_s == notch.filter_m_s
+    notch = suggested_notch(ratio, 0.3, 0.4, 0.5, 1.77, 6.0)
+    assert notch.notch_m_s == notch.filter_m_s
 
 
-def test_a_beam_that_does_not_turn_spreads_nothing():
-    assert suggested_notch(a_cpi(), 1.77, 1e4, 0.5).scanning_m_s == 0.0
+def test_notches_of_several_prfs_are_those_of_each_alone():
+    ratios, widths = np.array([0.5, 1e3, 1e5]), np.array([6.0, 7.0, 8.0])
+    together = suggested_notch(ratios, 0.3, 0.4, 0.5, 1.77, widths).notch_m_s
+    alone = [suggested_notch(a, 0.3, 0.4, 0.5, 1.77, b).notch_m_s for a, b in zip(ratios, widths, strict=True)]
+    assert together.tolist() == alone
 
 
 def test_a_chebyshev_filter_of_40_db_and_9_pulses_is_down_after_1_77_filters_and_a_uniform_one_after_1():
