@@ -49,7 +49,8 @@ def test_wavelengths_of_the_edges_are_the_printed_ones(name):
 def test_an_edge_belongs_to_the_upper_band_and_nothing_lies_outside_all():
     assert [band(value) for value in (8e9, 7.999e9, 12e9)] == ['X', 'C', 'Ku']
     assert band(2.999e6) is None
-    assert band(300e9) is None
+    assert band(300e9) == 'mm'
+    assert band(300.001e9) is None
 
 
 def test_bands_follow_each_other_without_gaps():
