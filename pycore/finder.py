@@ -13,6 +13,7 @@ patience calls ``step`` again.
 """
 
 from functools import lru_cache
+from math import inf
 
 from pycore.finder_exhaustion import Exhaustion, combinations, groups, sets
 from pycore.finder_found import Found, merged
@@ -23,7 +24,7 @@ from pycore.finder_search import Descent
 from pycore.finder_stagger import StaggerDescent, StaggerJudge, stagger_better
 
 SLICE_STEPS = 300
-"""Steps of one slice. [unitless]"""
+"""Steps of one slice; of one that goes through all sets, held PRIs whose sets it goes through. [unitless]"""
 
 MOST_SETS = 1_000_000
 """So many sets are gone through one by one; of more, a seeded search looks for the best. [unitless]"""
@@ -109,7 +110,7 @@ def begun(limits, seed, number):
     return Descent(judge, seed, number)
 
 
-def run_slice(limits, seed, number, steps=SLICE_STEPS):
+def run_slice(limits, seed, number, steps=None):
     """Take one slice from its beginning: what an executor maps over the numbers of slices.
 
     Parameters
@@ -120,8 +121,8 @@ def run_slice(limits, seed, number, steps=SLICE_STEPS):
         Of the whole search. [unitless]
     number : int
         Of the slice, from 0. [unitless]
-    steps : int
-        Fewer than a whole slice for the last one of a search of so many steps. [unitless]
+    steps : int or None
+        Fewer than a whole slice for the last one of a search of so many steps; ``None`` for all. [unitless]
 
     Returns
     -------
@@ -129,9 +130,15 @@ def run_slice(limits, seed, number, steps=SLICE_STEPS):
         To be merged with those of the others.
     """
     one = begun(limits, seed, number)
-    while one.ledger.steps < steps and one.step():
+    most = _longest(one) if steps is None else steps
+    while one.ledger.steps < most and one.step():
         pass
     return one.ledger.found()
+
+
+def _longest(one):
+    """Return how many steps a slice may take; all sets of a block are gone through whatever that takes."""
+    return inf if isinstance(one, Exhaustion) else SLICE_STEPS
 
 
 class Search:
@@ -149,7 +156,7 @@ class Search:
         self.limits, self.seed = check(limits), int(seed)
         self.judge, self.proves = judge_of(limits), proves(limits)
         self._slices = 0 if self._hopeless() else slices(limits)
-        self._done, self._number, self._slice = Found((), {}, {}, None, 0, 0), 0, None
+        self._done, self._number, self._slice = Found(), 0, None
 
     def _hopeless(self):
         """Whether some place has no PRI to choose from."""
@@ -177,7 +184,7 @@ class Search:
             return False
         if self._slice is None:
             self._slice = begun(self.limits, self.seed, self._number)
-        if not self._slice.step() or self._slice.ledger.steps >= SLICE_STEPS:
+        if not self._slice.step() or self._slice.ledger.steps >= _longest(self._slice):
             self.add(self._slice.ledger.found())
             self._slice = None
         return not self.ended
@@ -220,21 +227,21 @@ class Search:
         most : int
             How many. [unitless]
         unlike_counts : int
-            A set is left out when none of its PRIs differs by more than this from those of a better one; 0 lists
-            all. [clock counts]
+            A set is left out when none of its PRIs differs by more than this from those of a better one; 0 leaves
+            none out. [clock counts]
 
         Returns
         -------
         ranked : list of Better
             Best first.
         """
-        chosen = []
-        for _, pris in self.found.best:
+        found, chosen = self.found, []
+        for _, pris in sorted({*found.best, *found.ends}):
             if len(chosen) == most:
                 break
             if all(_apart(pris, other) > unlike_counts for other in chosen):
                 chosen.append(pris)
-        return marked([self.better(pris) for pris in chosen])
+        return marked([self.better(pris) for pris in dict.fromkeys(chosen)])
 
     def trade_off(self, most=40):
         """Return the sets to choose between: the best ones, and the best for each time used.
@@ -250,7 +257,7 @@ class Search:
             Those that no other beats have ``on_front``; by time used, then by score.
         """
         found = self.found
-        pris = {pris for _, pris in (*found.best[:most], *found.by_time.values())}
+        pris = {pris for _, pris in (*found.best[:most], *found.ends[:most], *found.by_time.values())}
         some = marked([self.better(each) for each in sorted(pris)])
         return sorted(some, key=lambda one: (round(one.time_s, 12), round(one.excess_over_floor, 12), one.pri_counts))
 

@@ -39,11 +39,13 @@ class Exhaustion:
         more : bool
             Whether there is another step to take.
         """
-        if self._next < self._end:
-            self.ledger.steps += 1
+        self.ledger.steps += 1
+        if self._record.waiting:
+            self._record.settle_waiting()
+        elif self._next < self._end:
             self._score(self._next)
             self._next += 1
-        return self._next < self._end
+        return self._next < self._end or bool(self._record.waiting)
 
     def _score(self, number):
         """Score all sets of one combination of held PRIs."""

@@ -4,7 +4,7 @@ Found records of different slices are merged in any order to the same record, so
 that it does not matter who searched which slice.
 """
 
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from heapq import nsmallest
 
 import numpy as np
@@ -43,6 +43,8 @@ class Found:
     ----------
     best : tuple of (float, tuple of int)
         Sets that meet every limit, with their scores: at most ``KEPT``, best first. [unitless, clock counts]
+    ends : tuple of (float, tuple of int)
+        Where descents ended, likewise: good sets that are not all neighbours of the best. [unitless, clock counts]
     by_time : dict of int to (float, tuple of int)
         Best of each part of the times that sets can use. [unitless, clock counts]
     misses : dict of str to Miss
@@ -56,8 +58,9 @@ class Found:
     """
 
     best: tuple = ()
-    by_time: dict | None = None
-    misses: dict | None = None
+    ends: tuple = ()
+    by_time: dict = field(default_factory=dict)
+    misses: dict = field(default_factory=dict)
     nearest: Miss | None = None
     tried: int = 0
     steps: int = 0
@@ -67,7 +70,7 @@ class Ledger:
     """Where one slice enters what it finds."""
 
     def __init__(self):
-        self._sets, self._worst = {}, np.inf
+        self._sets, self._worst, self._ends = {}, np.inf, {}
         self._at_time, self._time_sets = np.full(TIME_STEPS, np.inf), {}
         self._misses, self._nearest = {}, None
         self.tried, self.steps = 0, 0
@@ -116,6 +119,20 @@ class Ledger:
         if len(self._sets) >= 2 * KEPT:
             self._sets = {pris: score for score, pris in _best(self._sets)}
             self._worst = max(self._sets.values())
+
+    def end(self, score, pris):
+        """Enter a set that meets every limit and that no change of one place makes better.
+
+        Parameters
+        ----------
+        score : float
+            Its score, rounded. [unitless]
+        pris : tuple of int, length N
+            As in ``keep``. [clock counts]
+        """
+        self._ends[pris] = min(float(score), self._ends.get(pris, np.inf))
+        if len(self._ends) >= 2 * KEPT:
+            self._ends = {pris: score for score, pris in _best(self._ends)}
 
     def beats_at_time(self, step):
         """Return the score to beat for each part of the times, shape S.
@@ -187,7 +204,8 @@ class Ledger:
             So far. [unitless]
         """
         misses, nearest = ({}, None) if self._sets else (dict(self._misses), self._nearest)
-        return Found(tuple(_best(self._sets)), dict(self._time_sets), misses, nearest, self.tried, self.steps)
+        best, ends = tuple(_best(self._sets)), tuple(_best(self._ends))
+        return Found(best, ends, dict(self._time_sets), misses, nearest, self.tried, self.steps)
 
 
 def merged(some):
@@ -207,6 +225,8 @@ def merged(some):
     for part in parts:
         for score, pris in part.best:
             ledger.keep(score, pris)
+        for score, pris in part.ends:
+            ledger.end(score, pris)
         for step, (score, pris) in part.by_time.items():
             ledger.keep_at_time(step, score, pris)
         for name, missed in part.misses.items():

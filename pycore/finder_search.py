@@ -6,10 +6,12 @@ the descent goes on from there; after some such kicks in vain it starts afresh.
 Sets grow from nothing one PRI at a time, so that they decode from the start.
 """
 
+from dataclasses import dataclass
+
 import numpy as np
 
 from pycore.finder_found import Ledger
-from pycore.finder_judge import DIGITS
+from pycore.finder_judge import DIGITS, Block, Weighed
 
 _STARTS = 12
 """Starts in vain after which a slice gives up on decoding and finds out how near to it sets come. [unitless]"""
@@ -17,7 +19,7 @@ _STARTS = 12
 _KICKS = 8
 """Kicks in vain after which a descent starts afresh. [unitless]"""
 
-_SETTLED_AT_ONCE = 6
+_SETTLED_AT_ONCE = 4
 """Sets that are looked at in full in one step of a descent, where that is called for. [unitless]"""
 
 
@@ -33,10 +35,10 @@ class Recorder:
     """
 
     def __init__(self, judge, ledger):
-        self.judge, self.ledger = judge, ledger
+        self.judge, self.ledger, self.waiting = judge, ledger, []
         self._times = judge.times()
 
-    def options(self, held, place, block, weighed, most=None):
+    def options(self, held, place, block, weighed):
         """Enter all sets of a step and return the best of those that decode.
 
         Parameters
@@ -49,110 +51,124 @@ class Recorder:
             Candidates for it. [mixed]
         weighed : Weighed
             What they are worth. [unitless]
-        most : int or None
-            Sets that are looked at in full; ``None`` for all that may be kept. [unitless]
 
         Returns
         -------
         options : list of (float, float, int)
-            Sum of shortfalls, score and PRI, best first: only the best where nothing had to be settled. [unitless,
+            Sum of shortfalls, score and PRI, best first: only the best where nothing had to be settled. Where sets
+            must be looked at in full, only a few are; the others that may be kept are ``waiting``. [unitless,
             unitless, clock counts]
         """
+        step = _Step(held, place, block, weighed, weighed.total)
         self.ledger.tried += int(np.count_nonzero(weighed.legal))
-        total = weighed.total
         if not self.ledger.has_any:
-            self._misses(held, place, block, weighed, total)
+            self._misses(step)
         some = np.flatnonzero(weighed.legal & weighed.decodes)
         if not some.size:
             return []
         if self.judge.settles:
-            return self._settled(held, place, block, weighed, some, most)
-        met = some[total[some] == 0.0]
-        for i in met[weighed.score[met] <= self.ledger.worst_kept].tolist():
-            self.ledger.keep(weighed.score[i], self._pris(held, place, block.counts[i]))
-        self._by_time(held, place, block, weighed, met)
-        best = _first(total, weighed.score, some)
-        return [(float(total[best]), float(weighed.score[best]), int(block.counts[best]))]
+            order = some[np.lexsort((some, weighed.score[some], step.total[some]))]
+            later = order[_SETTLED_AT_ONCE:]
+            self.waiting = [(step, i) for i in later[step.total[later] == 0.0].tolist()]
+            return sorted(self._settled(step, i) for i in order[:_SETTLED_AT_ONCE].tolist())
+        self._keep(step, some[step.total[some] == 0.0])
+        best = _first(step.total, weighed.score, some)
+        return [(float(step.total[best]), float(weighed.score[best]), int(block.counts[best]))]
 
-    def _settled(self, held, place, block, weighed, some, most):
-        """Look at the most promising sets in full."""
-        total = weighed.total
-        order = some[np.lexsort((some, weighed.score[some], total[some]))]
-        if most is None:
-            order = order[(total[order] == 0.0) & (weighed.score[order] <= self.ledger.worst_kept)]
-        options = []
-        for i in order[:most].tolist():
-            pris = self._pris(held, place, block.counts[i])
-            short = self.judge.settle(pris)
-            whole = round(float(total[i]) + sum(short.values()), DIGITS)
-            options.append((whole, float(weighed.score[i]), int(block.counts[i])))
-            self._enter(i, pris, weighed, short, whole)
-        return sorted(options)
+    def settle_waiting(self):
+        """Look at a few more sets in full, of those that may still be kept."""
+        taken = 0
+        while self.waiting and taken < _SETTLED_AT_ONCE:
+            step, i = self.waiting.pop(0)
+            if step.weighed.score[i] <= self.ledger.worst_kept:
+                self._settled(step, i)
+                taken += 1
 
-    def _enter(self, i, pris, weighed, short, whole):
-        score = float(weighed.score[i])
+    def _settled(self, step, i):
+        """Look at one set in full and enter it."""
+        pris, score = self._pris(step, i), float(step.weighed.score[i])
+        short = {name: value for name, value in self.judge.settle(pris).items() if value > 0.0}
+        whole = round(float(step.total[i]) + sum(short.values()), DIGITS)
         if whole == 0.0:
             self.ledger.keep(score, pris)
-            self._keep_at_time(i, pris, weighed)
-            return
-        missed = {name: value for name, value in short.items() if value > 0.0}
-        cheap = zip(self.judge.weighed, weighed.short[:, i].tolist(), strict=True)
-        missed.update((name, value) for name, value in cheap if value > 0.0)
-        if len(missed) == 1 and not self.ledger.has_any:
-            self.ledger.miss(next(iter(missed)), whole, score, pris)
-        self.ledger.near(whole, score, pris)
+            part = int(self._times.step(step.weighed.time_s[i : i + 1])[0])
+            self.ledger.keep_at_time(part, score, pris)
+        elif not self.ledger.has_any:
+            if step.total[i] == 0.0 and len(short) == 1:
+                self.ledger.miss(next(iter(short)), whole, score, pris)
+            self.ledger.near(whole, score, pris)
+        return whole, score, int(step.block.counts[i])
 
-    def _by_time(self, held, place, block, weighed, met):
-        """Keep the best set of each part of the times."""
-        step = self._times.step(weighed.time_s[met])
-        better = np.flatnonzero(weighed.score[met] <= self.ledger.beats_at_time(step))
-        for at in np.unique(step[better]).tolist():
-            mine = met[better][step[better] == at]
-            for i in mine[weighed.score[mine] == weighed.score[mine].min()].tolist():
-                self.ledger.keep_at_time(at, weighed.score[i], self._pris(held, place, block.counts[i]))
+    def _keep(self, step, met):
+        """Enter the sets that meet every limit, and the best of each part of the times."""
+        score = step.weighed.score
+        for i in met[score[met] <= self.ledger.worst_kept].tolist():
+            self.ledger.keep(score[i], self._pris(step, i))
+        part = self._times.step(step.weighed.time_s[met])
+        better = np.flatnonzero(score[met] <= self.ledger.beats_at_time(part))
+        for at in np.unique(part[better]).tolist():
+            mine = met[better][part[better] == at]
+            for i in mine[score[mine] == score[mine].min()].tolist():
+                self.ledger.keep_at_time(at, score[i], self._pris(step, i))
 
-    def _keep_at_time(self, i, pris, weighed):
-        step = int(self._times.step(weighed.time_s[i : i + 1])[0])
-        self.ledger.keep_at_time(step, weighed.score[i], pris)
-
-    def _misses(self, held, place, block, weighed, total):
+    def _misses(self, step):
         """Enter the nearest sets that miss only one limit, and the nearest that miss any."""
-        legal, worth = weighed.legal & weighed.decodes, weighed.score
-        some = np.flatnonzero(legal)
-        if some.size and not self.judge.settles:
-            best = _first(total, worth, some)
-            if 0.0 < total[best] <= self.ledger.nearest_so_far:
-                self.ledger.near(total[best], worth[best], self._pris(held, place, block.counts[best]))
-            missed = np.count_nonzero(weighed.short, axis=0)
-            for name, short in zip(self.judge.weighed, weighed.short.round(DIGITS), strict=True):
-                only = np.flatnonzero(legal & (missed == 1) & (short > 0.0) & (short <= self.ledger.missed_by(name)))
-                if only.size:
-                    best = _first(short, worth, only)
-                    self.ledger.miss(name, short[best], worth[best], self._pris(held, place, block.counts[best]))
-        only = np.flatnonzero(weighed.legal & ~weighed.decodes & (total == 0.0))
-        if only.size:
-            self._decode_misses(held, place, block, worth, only)
+        weighed, score = step.weighed, step.weighed.score
+        if not weighed.legal.any():
+            return
+        # What does not decode misses the whole of a limit, as long as nobody has looked how far it does.
+        total = np.where(weighed.decodes, step.total, step.total + 1.0)
+        best = _first(total, score, np.flatnonzero(weighed.legal))
+        if 0.0 < total[best] <= self.ledger.nearest_so_far and step.total[best] > 0.0:
+            short = sum(self.judge.settle(self._pris(step, best)).values()) if self.judge.settles else 0.0
+            self.ledger.near(round(float(total[best]) + short, DIGITS), score[best], self._pris(step, best))
+        missed = np.count_nonzero(weighed.short, axis=0)
+        for name, short in zip(self.judge.weighed, weighed.short.round(DIGITS), strict=True):
+            only = (missed == 1) & (short > 0.0) & (short <= self.ledger.missed_by(name))
+            self._one_missed(step, name, short, np.flatnonzero(weighed.legal & weighed.decodes & only))
+        self._decode_misses(step, np.flatnonzero(weighed.legal & ~weighed.decodes & (step.total == 0.0)))
 
-    def _decode_misses(self, held, place, block, worth, only):
+    def _one_missed(self, step, name, short, only):
+        """Enter the nearest of the sets that miss one limit by what blocks are held against."""
+        order = only[np.lexsort((only, step.weighed.score[only], short[only]))]
+        for i in order[:_SETTLED_AT_ONCE].tolist():
+            pris = self._pris(step, i)
+            if not self.judge.settles or not any(self.judge.settle(pris).values()):
+                self.ledger.miss(name, short[i], step.weighed.score[i], pris)
+                return
+
+    def _decode_misses(self, step, only):
         """Enter the sets that come nearest to decoding, of those that meet everything else."""
-        decoder, nearest = self.judge.decoder, self.ledger.missed_by('decode')
-        if decoder.wanted_counts is None:
-            farther = np.ones(only.size, dtype=bool)
-        else:
+        decoder, score = self.judge.decoder, step.weighed.score
+        if not only.size:
+            return
+        if decoder.wanted_m_s is None:
             # Only what decodes farther than any before is looked at in full.
-            reached = decoder.wanted_counts * max(1.0 - min(nearest, 1.0), 0.0)
-            farther = decoder.sieve(held, block.kind, block.counts[only], decoder.wanted_counts_from(reached))
-        for i in only[farther][np.argsort(worth[only[farther]], kind='stable')][: 4 * _SETTLED_AT_ONCE].tolist():
-            pris = self._pris(held, place, block.counts[i])
+            reached = decoder.wanted_counts * (1.0 - min(self.ledger.missed_by('decode'), 1.0))
+            farther = decoder.wanted_counts_from(reached)
+            only = only[decoder.sieve(step.held, step.block.kind, step.block.counts[only], farther)]
+        for i in only[np.argsort(score[only], kind='stable')][: 4 * _SETTLED_AT_ONCE].tolist():
+            pris = self._pris(step, i)
             short = round(decoder.short(pris), DIGITS)
-            if 0.0 < short <= self.ledger.missed_by('decode'):
-                self.ledger.miss('decode', short, worth[i], pris)
-                self.ledger.near(short, worth[i], pris)
+            others = {name: value for name, value in self.judge.settle(pris).items() if name != 'decode'}
+            if 0.0 < short <= self.ledger.missed_by('decode') and not any(others.values()):
+                self.ledger.miss('decode', short, score[i], pris)
 
-    def _pris(self, held, place, count):
+    def _pris(self, step, i):
         """Return the set that the held PRIs and one candidate make."""
-        pris = [pri for _, pri in held]
-        return self.judge.in_order([*pris[:place], int(count), *pris[place:]])
+        pris = [pri for _, pri in step.held]
+        return self.judge.in_order([*pris[: step.place], int(step.block.counts[i]), *pris[step.place :]])
+
+
+@dataclass(frozen=True, slots=True)
+class _Step:
+    """All sets of one step: the held PRIs, the last place, its candidates, what they are worth."""
+
+    held: list
+    place: int
+    block: Block
+    weighed: Weighed
+    total: np.ndarray
 
 
 def _first(total, score, some):
@@ -162,7 +178,7 @@ def _first(total, score, some):
 
 
 class Descent:
-    """A slice of a seeded search.
+    """A slice of a seeded search; it does not end by itself.
 
     Parameters
     ----------
@@ -241,14 +257,16 @@ class Descent:
         if place in self._kept:
             block = self.judge.block(kind, np.array([around]))
         weighed = self.judge.weigh(held, block)
-        options = self._record.options(held, place, block, weighed, _SETTLED_AT_ONCE)
+        options = self._record.options(held, place, block, weighed)
         if options and options[0][:2] < self._key:
             self._key, self._pris[place] = options[0][:2], options[0][2]
             if options[0][2] != around:
                 self._queue = self._shuffled([other for other in self._free if other != place])
 
     def _turn(self):
-        """At the end of a descent: kick the better of this set and the last, or start afresh."""
+        """At the end of a descent: enter it, then kick the better of this set and the last, or start afresh."""
+        if self._key[0] == 0.0:
+            self.ledger.end(self._key[1], self.judge.in_order(self._pris))
         if self._base is None or self._key < self._base[0]:
             self._base, self._kicks = (self._key, list(self._pris)), 0
         else:

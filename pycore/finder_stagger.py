@@ -72,7 +72,9 @@ class StaggerDescent:
         mean = self._rng.uniform(max(least, low), max(min(most, high), max(least, low)))
         side = np.sqrt(self.judge.cycle.spread)
         ends = some.below(int(max(low, mean / side))), some.below(int(min(high, mean * side))) + 1
-        pris = some.counts(self._rng.integers(ends[0], max(min(ends[1], len(some)), ends[0] + 1), limits.n).clip(0, len(some) - 1))
+        pris = some.counts(
+            self._rng.integers(ends[0], max(min(ends[1], len(some)), ends[0] + 1), limits.n).clip(0, len(some) - 1)
+        )
         pris[list(self._kept)] = list(self._kept.values())
         self._start(self._levelled(pris))
         self._base, self._kicks = None, 0
@@ -172,6 +174,7 @@ class StaggerDescent:
         score, whole = round(-dip_db, 9), round(sum(short.values()), DIGITS)
         if not short:
             self.ledger.keep(score, pris)
+            self.ledger.end(score, pris)
             return
         if len(short) == 1:
             self.ledger.miss(next(iter(short)), whole, score, pris)
