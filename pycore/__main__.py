@@ -55,6 +55,8 @@ def _parser():
     assess = _command(commands, 'assess', _assess, 'print the findings of a plan')
     assess.add_argument('--json', action='store_true', help='print every number as JSON')
     _command(commands, 'link', _link, 'print the link of a plan, without the address it is appended to')
+    timing = _command(commands, 'timing', _timing, 'print the timing table in counts of the clock')
+    timing.add_argument('--csv', action='store_true', help='print it as CSV')
     vary = _command(commands, 'vary', _vary, 'print the findings against one input, or two, as CSV')
     vary.add_argument('inputs', nargs='+', metavar='KEY A..B', help='a key of the plan and the interval it runs over')
     vary.add_argument('--by', action='append', required=True, metavar='STEP', help='step of each input, in its unit')
@@ -126,6 +128,27 @@ def _assess(options):
 
 def _link(options):
     print(api.note(plan_of(options.plan))['link'])
+
+
+def _timing(options):
+    """Print the timing table, as CSV or laid out for reading."""
+    table = api.timing(plan_of(options.plan))
+    if options.csv:
+        writer = csv.writer(sys.stdout, lineterminator='\n')
+        writer.writerow(table['head'])
+        writer.writerows(table['rows'])
+        return
+    cells = [table['head'], *([_cell(one) for one in row] for row in table['rows'])]
+    widths = [max(len(row[column]) for row in cells) for column in range(len(table['head']))]
+    for row in cells:
+        print('  '.join(cell.rjust(width) for cell, width in zip(row, widths, strict=True)))
+    rest = '' if table['rest_counts'] is None else f', rest {table["rest_counts"]} counts'
+    clock, checksum = f'{table["clock_mhz"]:g} MHz', table['checksum']
+    print(f'one set {table["sum_counts"]} counts{rest}; clock {clock}; plan {checksum.upper()}')
+
+
+def _cell(value):
+    return '' if value is None else str(value) if isinstance(value, int) else f'{value:.6g}'
 
 
 def _vary(options):

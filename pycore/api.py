@@ -15,6 +15,7 @@ from pycore.errors import InputError
 from pycore.findings import findings, verdict
 from pycore.follow import follow
 from pycore.plan import filled, read
+from pycore.timing import columns, timing_table
 from pycore.variation import steps, varied
 from pycore.wording import SHOWN_UNITS
 
@@ -205,6 +206,32 @@ def follow_target(plan, range_km, speed_mps):
     }
 
 
+def timing(plan):
+    """Return the timing table of a plan, for those who program it.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+
+    Returns
+    -------
+    timing : dict
+        ``head`` and ``rows`` in sending order, ``sum_counts``, ``rest_counts``, ``clock_mhz``, ``checksum``.
+    """
+    checked = read(plan)
+    table = timing_table(checked, link.write(plan).rpartition('=')[2])
+    head, rows = columns(table)
+    return {
+        'head': head,
+        'rows': rows,
+        'sum_counts': table.sum_counts,
+        'rest_counts': table.rest_counts,
+        'clock_mhz': table.clock_hz / 1e6,
+        'checksum': table.checksum,
+    }
+
+
 def _followed(one):
     return {
         'apparent_range_km': one.apparent_range_m / 1e3,
@@ -224,5 +251,5 @@ def _finite(value):
     return value if math.isfinite(value) else None
 
 
-ACTIONS = {'assess': assess, 'note': note, 'compare': compare, 'vary': vary, 'follow': follow_target}
+ACTIONS = {'assess': assess, 'note': note, 'compare': compare, 'vary': vary, 'follow': follow_target, 'timing': timing}
 """What the worker in the browser may be asked for, by name."""

@@ -97,9 +97,16 @@ def _prf_columns(computed):
         'fill_ms': (plan.fill_pulses * plan.pri_s * 1e3).tolist(),
         'fill_needed': computed.echoes.fill_needed.tolist(),
         'filter_width_mps': dwell.filter_width(plan.pri_s, plan.pulses, plan.wavelength_m).tolist(),
+        'notch_suggested_mps': _suggested(computed),
         'gates': dwell.gates(plan.pri_s, plan.pulse_s, plan.recovery_s, plan.guard_s, plan.bandwidth_hz).tolist(),
         'range_walk_gates': computed.range_walk_gates.tolist(),
+        'improvement_db': computed.echoes.improvement_db,
     }
+
+
+def _suggested(computed):
+    suggested = computed.echoes.suggested_notch
+    return [None] * computed.plan.n if suggested is None else suggested.notch_m_s.tolist()
 
 
 def _visible(computed):

@@ -11,7 +11,7 @@ from functools import cached_property
 
 import numpy as np
 
-from pycore import clutter, clutter_pieces, detection, target, visibility
+from pycore import clutter, clutter_pieces, detection, filters, improvement, notch, target, visibility
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.cpi import cpis
 from pycore.reach import reach, reach_over
@@ -177,6 +177,48 @@ class Echoes:
 
     def _fill_for(self, range_m):
         return clutter.fill_needed(2.0 * range_m / SPEED_OF_LIGHT_M_S, self.plan.pri_s, self.plan.pulse_s)
+
+    @cached_property
+    def suggested_notch(self):
+        """A notch for the ground clutter, in its parts, each of shape N; ``None`` without ground clutter."""
+        plan, part = self.plan, self.parts[-1]
+        if plan.surface is None:
+            return None
+        nearest = np.maximum(part.first_opening_m, plan.range_m[0])
+        ratio = clutter.clutter_to_noise(plan.surface, nearest, part.first_opening_m, part.factor[:, 0])
+        lobes = np.array([filters.lobe_edge(cpi.weights) for cpi in part.cpis])
+        width = plan.wavelength_m / (2.0 * plan.pulses * plan.pri_s)
+        spreads = plan.surface.spread_m_s, self._platform_spread_m_s, self._scanning_spread_m_s
+        return notch.suggested_notch(ratio, *spreads, lobes, width)
+
+    @property
+    def _platform_spread_m_s(self):
+        plan = self.plan
+        if plan.platform is None:
+            return 0.0
+        return notch.platform_spread(plan.platform.speed_m_s, plan.platform.look_deg, plan.beamwidth_deg)
+
+    @property
+    def _scanning_spread_m_s(self):
+        """Spread that scanning adds on each PRF; none for a given dwell or a beam that stands still."""
+        plan = self.plan
+        if plan.dwell_s is not None or plan.time_on_target_s is None:
+            return 0.0
+        return improvement.scanning_spread(plan.wavelength_m, plan.time_on_target_s)
+
+    @cached_property
+    def improvement_db(self):
+        """Improvement factor of the plan's canceller at each PRI alone; ``None`` without ground clutter. [dB]"""
+        plan, suggested = self.plan, self.suggested_notch
+        if suggested is None:
+            return [None] * plan.n
+        spread = np.broadcast_to(suggested.spread_m_s, plan.n)
+        rows = zip(plan.pri_counts, plan.wavelength_m.tolist(), spread.tolist(), strict=True)
+        factors = [
+            improvement.improvement_factor((count,), plan.clock_hz, self.weights, length, one)
+            for count, length, one in rows
+        ]
+        return [10.0 * math.log10(factor) if math.isfinite(factor) else None for factor in factors]
 
     # --- detection -----------------------------------------------------------------------------------------------
 
