@@ -18,6 +18,7 @@ import numpy as np
 QUIETEST = 1e-30
 """Power below which a response is shown as -300 dB. [unitless]"""
 
+_ROUNDING = 1e-13  # what rounding can leave of a sum of cosines that cancel: nothing, on every machine alike
 _AT_ONCE = 2_000_000
 
 
@@ -66,7 +67,7 @@ class Response:
             np.cos(np.multiply.outer(flat[i : i + rows], per_speed)) @ self.amplitude for i in range(0, flat.size, rows)
         ]
         total = 1.0 + (np.concatenate(parts) if parts else flat)
-        return np.maximum(total, 0.0).reshape(speed.shape)[()]
+        return np.where(total > _ROUNDING, total, 0.0).reshape(speed.shape)[()]
 
     def decibels(self, speed_m_s):
         """Return the response in decibels.

@@ -4,6 +4,7 @@ Times come from the decimals that were typed, by way of fractions; what is a who
 number of counts is an integer here, and only what is not stays a fraction.
 """
 
+import math
 from dataclasses import dataclass
 from fractions import Fraction
 
@@ -125,7 +126,7 @@ def timing_table(plan, checksum=''):
         _row(plan, index, sent[index], starts[index], lengths[index], widths[index]) for index in range(plan.n)
     )
     total, available = sum(lengths), plan.time_on_target_s
-    rest = None if available is None else int(Fraction(available) * Fraction(str(plan.clock_hz)) // 1) - total
+    rest = None if available is None else math.floor(in_counts(available, plan.clock_hz)) - total
     return Timing(plan.clock_hz, rows, total, rest, checksum)
 
 
