@@ -11,6 +11,9 @@ LOWEST_DB, HIGHEST_DB = -50.0, 10.0
 
 _FEWEST, _MOST, _PER_STEP = 480, 1920, 1.0
 _BAR_DB = 2.2
+_ROOM_DB = 7.0
+"""Room above the curve for the names of marked speeds. [dB]"""
+_MOST_REPEATS = 200
 
 
 def nothing():
@@ -48,6 +51,7 @@ def picture(computed, axis):
     """
     least = float(computed.plan.response_min_db)
     low, high = min(LOWEST_DB, least - 20.0), max(HIGHEST_DB, least + 6.0)
+    high += _ROOM_DB if _inside(computed, axis, least) else 0.0
     step = 10 if high - low <= 80 else 20
     at = list(range(int(np.ceil(low / step)) * step, int(high) + 1, step))
     return {
@@ -60,7 +64,7 @@ def picture(computed, axis):
 
 
 def _columns(computed, axis, least, low, high):
-    speeds = _sampled(computed.response.response, axis.limits)
+    speeds = _sampled(computed.response, axis.limits)
     level = computed.response.response.decibels(speeds)
     blind = gaps(computed.response.clear_speeds, 1, axis.limits)
     left, right = axis.ends
@@ -78,21 +82,28 @@ def _columns(computed, axis, least, low, high):
     }
 
 
-def _sampled(response, limits):
-    """Return speeds close enough together for the curve, and among them those where it is zero or repeats."""
-    steps = (limits[1] - limits[0]) / response.step_m_s
-    return np.linspace(*limits, int(np.clip(_PER_STEP * steps, _FEWEST, _MOST)) + 1)
+def _sampled(found, limits):
+    """Return speeds close enough together for the curve, and among them those at which it repeats its zero."""
+    steps = (limits[1] - limits[0]) / found.response.step_m_s
+    even = np.linspace(*limits, int(np.clip(_PER_STEP * steps, _FEWEST, _MOST)) + 1)
+    first, last = np.ceil(limits[0] / found.true_first_blind_m_s), np.floor(limits[1] / found.true_first_blind_m_s)
+    if last - first > _MOST_REPEATS:
+        return even
+    return np.sort(np.concatenate((even, np.arange(first, last + 1) * found.true_first_blind_m_s)))
+
+
+def _inside(computed, axis, least):
+    """Return the marked speeds that lie inside the axis, each with its name."""
+    found, (low, high) = computed.response, axis.limits
+    fall = f'first below {trimmed(least)}{THIN_SPACE}dB'
+    repeat = 'true first blind speed' if found.is_blind else 'response repeats'
+    marks = [(found.first_below_m_s, fall), (found.true_first_blind_m_s, repeat)]
+    return [(speed, name) for speed, name in marks if speed is not None and low < speed < high]
 
 
 def _marked(computed, axis, least, low, high):
     """Return the marked speeds inside the axis, with their names beside the line that leaves them room."""
-    found = computed.response
-    repeat = 'true first blind speed' if found.is_blind else 'response repeats'
-    marks = [
-        (found.first_below_m_s, f'first below {trimmed(least)}{THIN_SPACE}dB'),
-        (found.true_first_blind_m_s, repeat),
-    ]
-    inside = [(speed, name) for speed, name in marks if speed is not None and axis.limits[0] < speed < axis.limits[1]]
+    inside = _inside(computed, axis, least)
     x = np.array([float(axis.shown(speed)) for speed, _ in inside])
     # Names stand at the top, one under the other, on the side of the line with more room.
     rows = high - 0.02 * (high - low) - 0.075 * (high - low) * np.arange(len(inside))

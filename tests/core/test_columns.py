@@ -281,6 +281,15 @@ def test_the_response_of_a_stagger_is_drawn_with_its_marked_speeds():
     assert f'true first blind speed is 1410{THIN_SPACE}m/s' in picture['caption']
 
 
+def test_the_curve_of_a_stagger_reaches_down_to_its_blind_speeds():
+    even = {**STAGGER, 'waveform': {**STAGGER['waveform'], 'pri_us': [950.0, 950.0]}}
+    picture = pictures(even)['blind-speeds']
+    curve = picture['columns']['response']
+    # c / (2 · 2.8 GHz · 950 µs) = 56.35 m/s, between the points of an even grid.
+    at = np.abs(curve['x'] - 56.353).argmin()
+    assert curve['y'][at] < picture['ranges']['y'][0]
+
+
 @pytest.mark.parametrize(
     ('low', 'high', 'expected'), [(0.9, 210, [1, 2, 5, 10, 20, 50, 100, 200]), (45, 160, [50, 70, 100])]
 )
