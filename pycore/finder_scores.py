@@ -114,7 +114,9 @@ def _summed(rows, first):
     """Add up runs of rows that begin at ``first``."""
     columns = rows.shape[1]
     total = np.empty((first.size, columns))
-    if columns < _WIDE and first.size:
+    if not first.size:
+        return total
+    if columns < _WIDE:
         run = np.zeros(rows.shape[0], dtype=np.intp)
         run[first[1:]] = columns
         at = run.cumsum()[:, None] + np.arange(columns)
