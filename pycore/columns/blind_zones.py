@@ -21,7 +21,7 @@ SIZE = {'width': 560, 'height': 320}
 MOST_NUMBERED = 9
 """Holes that carry their number in the figure. [unitless]"""
 
-_LARGEST = 1400
+_FEWEST, _MOST = 16, 400_000
 _AT_THE_END = 0.94
 _DISC = 17
 _WAYS = ((12.0, -12.0), (-12.0, -12.0), (12.0, 12.0), (-12.0, 12.0))
@@ -71,7 +71,7 @@ def _frame(x, y):
 
 def _counted(computed, size):
     """Return the number of clear PRFs in every cell, and which cells another plan could see and this one does not."""
-    width, height = (int(np.clip(size[side], 16, _LARGEST)) for side in ('width', 'height'))
+    width, height = _cells_for(size)
     seen = computed.sight
     at_range, at_speed = zones.centres(seen.range_m, width), zones.centres(seen.speed_m_s, height)
     count = zones.count_map(seen.ranges, seen.speeds, at_range, at_speed)
@@ -79,6 +79,14 @@ def _counted(computed, size):
         zones.clear_marks(spans, at) for spans, at in ((seen.floor_ranges, at_range), (seen.floor_speeds, at_speed))
     ]
     return count, _Blind(count < seen.m, *could, seen.m)
+
+
+def _cells_for(size):
+    """Return the sides of the map: the plot's own, halved until the map can follow a drag."""
+    width, height = (max(int(size[side]), _FEWEST) for side in ('width', 'height'))
+    while width * height > _MOST:
+        width, height = max(width // 2, _FEWEST), max(height // 2, _FEWEST)
+    return width, height
 
 
 class _Blind:

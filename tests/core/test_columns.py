@@ -212,6 +212,15 @@ def test_the_map_has_the_size_that_was_asked_for_and_its_own_where_none_was():
     assert asked.dtype == np.uint8
 
 
+@pytest.mark.parametrize(
+    ('width', 'height', 'shape'),
+    [(620, 300, (300, 620)), (1300, 700, (350, 650)), (9000, 5000, (312, 562)), (3, 0, (16, 16))],
+)
+def test_a_large_plot_is_mapped_in_cells_of_two_pixels_or_more(width, height, shape):
+    picture = pictures(OPENING, size={'width': width, 'height': height})['blind-zones']
+    assert picture['columns']['map']['image'].shape == shape
+
+
 @FEW
 @given(documents())
 def test_every_number_stands_at_a_cell_of_a_hole_or_moved_off_it(document):
