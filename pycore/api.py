@@ -14,7 +14,7 @@ from pycore.differences import differing_inputs, judged_changes, verdicts_differ
 from pycore.errors import InputError
 from pycore.findings import findings, verdict
 from pycore.follow import follow
-from pycore.plan import filled, read
+from pycore.plan import read
 from pycore.timing import columns, timing_table
 from pycore.variation import steps, varied
 from pycore.wording import SHOWN_UNITS
@@ -58,7 +58,6 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         Width and height of the figures' maps, by figure. [cells]
     units : mapping or None
         Units that the reader prefers, by ``range``, ``speed``, ``pri``. [unitless]
-
     deep : bool
         Whether findings that take long are worked out where nothing is judged by them. [unitless]
 
@@ -73,8 +72,8 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     computed = Computed(read(document), with_echoes=deep)
     found = findings(computed, units)
     return {
-        'plan': filled(document),
-        'link': link.write(document),
+        'plan': computed.plan.document,
+        'link': link.written(computed.plan.document),
         'opened': None if start is None else _as_opened(start),
         'said': said,
         'refused': refused,

@@ -8,7 +8,6 @@ import math
 
 from pycore import dwell
 from pycore.findings import findings
-from pycore.plan import filled
 from pycore.wording import SHOWN_UNITS
 
 FORMAT = 1
@@ -30,7 +29,7 @@ def assessment(computed):
     """
     return {
         'pulsewright': FORMAT,
-        'plan': filled(computed.plan.document),
+        'plan': computed.plan.document,
         'shortfall': computed.shortfall,
         'prfs': prfs(computed),
         'visible': _visible(computed),

@@ -21,7 +21,7 @@ from pycore.link_items import read_value, value_text
 from pycore.plan import read
 from pycore.plan_document import filled, shown
 from pycore.plan_keys import KEYS, MOST_PATCHES, MOST_REGIONS
-from pycore.sentence import value_at
+from pycore.plan_paths import value_at
 
 VERSION = '1'
 """Number of the link's format; the defaults belong to it and never change under it."""
@@ -112,7 +112,26 @@ def write(document, remarks=False, view=None):
     fragment : str
         The same text whenever it is made of the same plan.
     """
-    plan = filled(document)
+    return written(filled(document), remarks, view)
+
+
+def written(plan, remarks=False, view=None):
+    """Return the link of a plan that is filled already; otherwise as :func:`write`.
+
+    Parameters
+    ----------
+    plan : dict
+        A filled plan. [plan's units]
+    remarks : bool
+        Whether remarks and notes travel with it. [unitless]
+    view : mapping of str or None
+        View items to carry, already encoded. [unitless]
+
+    Returns
+    -------
+    fragment : str
+        The link.
+    """
     body = '&'.join(f'{name}={text}' for name, text in _items(plan, remarks))
     if remarks or len(body) > LONGEST_READABLE:
         body = f'z={_deflated(body)}'
@@ -123,12 +142,11 @@ def write(document, remarks=False, view=None):
 
 def _items(plan, remarks):
     """Return the items of a plan that differ from the defaults, in canonical order."""
-    bare = filled({'waveform': {'pri_us': plan['waveform']['pri_us']}})
     items = []
     for key in KEYS:
         if '[]' in key.path or key.path in _SEE[1:] or (key.path in _LEFT_OUT and not remarks):
             continue
-        items.extend(_see(plan, bare) if key.path == _SEE[0] else _item(key, plan, bare))
+        items.extend(_see(plan) if key.path == _SEE[0] else _item(key, plan))
     for short, path in RECORDS.items():
         if value_at(plan, path) is not None:
             items.append((short, 'yes'))
@@ -139,15 +157,15 @@ def _items(plan, remarks):
     return items
 
 
-def _see(plan, bare):
+def _see(plan):
     """Write both intervals of the coverage as one item."""
-    if plan['coverage'] == bare['coverage']:
-        return []
     keys = [key for key in KEYS if key.path in _SEE]
+    if all(value_at(plan, key.path) == key.default for key in keys):
+        return []
     return [('see', ','.join(value_text(key, value_at(plan, key.path)) for key in keys))]
 
 
-def _item(key, plan, bare):
+def _item(key, plan):
     """Write one key where it differs: from its default, and inside a record from the record's own."""
     value = value_at(plan, key.path)
     record = value_at(plan, key.record) if key.record else plan
