@@ -1,0 +1,281 @@
+"""How far each input can move, alone, before the verdict of a finding flips.
+
+Each input is stepped outward from its value: first by small parts of a step,
+then by whole ones, each 1/64 of the key's legal range. Keys that cannot be
+negative are stepped by factors (over six decades where they begin at 0), signed
+ones evenly, counts and PRIs by single ones at first. The first change of the
+verdict is bisected. A walk ends where the plan is refused, or where the key's
+limits are. A flip that is narrower than the step can be missed.
+"""
+
+import math
+from dataclasses import dataclass
+from itertools import count, takewhile
+
+from pycore.computed import Computed
+from pycore.errors import InputError
+from pycore.findings import named
+from pycore.margin_inputs import Input, inputs_of
+from pycore.plan import read
+from pycore.plan_document import filled
+from pycore.wording import SHOWN_UNITS
+
+STEPS = 64
+"""A step is so many parts of a key's legal range. [unitless]"""
+_DECADES = 6
+"""A key that begins at 0 is stepped by factors over so many decades below its highest value. [unitless]"""
+_FIRST_PARTS = (1 / 64, 1 / 32, 1 / 16, 1 / 8, 1 / 4, 1 / 2)
+_SINGLE = 64
+"""So many single counts are tried before the steps grow. [unitless]"""
+_AS_CLOSE_AS = 1e-9
+"""The bisection ends when it knows the flip to this part of the input. [unitless]"""
+NOTE = (
+    'Each input is moved alone, in steps of 1/64 of its legal range (single counts for PRIs and pulses near their '
+    'value), and the first change of the verdict is bisected; a flip narrower than a step can be missed.'
+)
+"""What stands under margins wherever they are shown."""
+
+
+@dataclass(frozen=True, slots=True)
+class Margin:
+    """How far one input can move before a verdict flips.
+
+    Parameters
+    ----------
+    key : str
+        Path of the input in the plan. [unitless]
+    label : str
+        What it is called. [unitless]
+    unit : str
+        Unit of the plan. [unitless]
+    value : int or float
+        Where it stands. [unit]
+    low, high : int, float or None
+        Last values on either side at which the verdict still is as it was; ``None`` where no flip was found up to the
+        key's limits or to where the plan is refused. [unit]
+    tightness : float
+        The nearer of the two as a part of the value. [unitless]
+    """
+
+    key: str
+    label: str
+    unit: str
+    value: float
+    low: float | None
+    high: float | None
+    tightness: float
+
+
+class Tried:
+    """Plans with one input moved, each worked out once for all findings that ask for it.
+
+    Parameters
+    ----------
+    document : dict
+        The plan they start from, filled. [plan's units]
+    """
+
+    def __init__(self, document):
+        self._document = document
+        self._known = {}
+
+    def verdict(self, name, path, value):
+        """Return the verdict of a finding with one input moved.
+
+        Parameters
+        ----------
+        name : str
+            Name of the finding. [unitless]
+        path : str
+            Path of the input. [unitless]
+        value : int or float
+            Its value. [unit of the key]
+
+        Returns
+        -------
+        met : bool or str
+            ``'refused'`` where there is no such plan.
+        """
+        if (path, value) not in self._known:
+            self._known[path, value] = self._computed(path, value)
+        computed = self._known[path, value]
+        return 'refused' if computed is None else named(computed, name, SHOWN_UNITS).met
+
+    def _computed(self, path, value):
+        try:
+            return Computed(read(moved(self._document, path, value)), with_echoes=False)
+        except InputError:
+            return None
+
+
+def moved(document, path, value):
+    """Return a plan with one number changed.
+
+    Parameters
+    ----------
+    document : dict
+        A filled plan. [plan's units]
+    path : str
+        Dotted path, places in lists included. [unitless]
+    value : object
+        New value. [unit of the key]
+
+    Returns
+    -------
+    document : dict
+        A new document that shares all else with the old one.
+    """
+    first, _, rest = path.partition('.')
+    inner = value if not rest else moved(document[int(first) if isinstance(document, list) else first], rest, value)
+    if isinstance(document, list):
+        return [inner if place == int(first) else one for place, one in enumerate(document)]
+    return {**document, first: inner}
+
+
+def margins(plan, name, tried=None):
+    """Return how far each input that matters to a finding can move before its verdict flips, tightest first.
+
+    Parameters
+    ----------
+    plan : Plan
+        The plan. [unitless]
+    name : str
+        Name of the finding. [unitless]
+    tried : Tried or None
+        Plans that were worked out before, to share between findings. [unitless]
+
+    Returns
+    -------
+    margins : list of Margin
+        Only inputs for which a flip was found; none for a finding that is not judged.
+    """
+    document = filled(plan.document)
+    tried = tried or Tried(document)
+    found = named(Computed(plan, with_echoes=False), name, SHOWN_UNITS)
+    if found is None or found.met is None:
+        return []
+    each = [_margin(tried, name, one, found.met) for one in inputs_of(document, name)]
+    return sorted((one for one in each if one is not None), key=lambda one: one.tightness)
+
+
+def _margin(tried, name, entry, met):
+    """Walk one input down and up."""
+    low, high = (_last_alike(tried, name, entry, met, way) for way in (-1, 1))
+    gaps = [abs(end - entry.value) for end in (low, high) if end is not None]
+    if not gaps:
+        return None
+    return Margin(entry.path, entry.label, entry.unit, entry.value, low, high, min(gaps) / _scale(entry))
+
+
+def _scale(entry):
+    """Return what a margin is measured against: the value, or one step where that is 0."""
+    return abs(entry.value) or (entry.highest - entry.lowest) / STEPS
+
+
+def _last_alike(tried, name, entry, met, way):
+    """Return the last value on one side at which the verdict is as it was; ``None`` if it never flips there."""
+    alike = entry.value
+    for value in outward(entry, way):
+        verdict = tried.verdict(name, entry.path, value)
+        if verdict == 'refused':
+            return None
+        if verdict != met:
+            return _bisected(tried, name, entry, met, alike, value)
+        alike = value
+    return None
+
+
+def _bisected(tried, name, entry, met, alike, flipped):
+    """Close in on the flip between two values; a plan that is refused counts as flipped."""
+    while True:
+        middle = _between(entry, alike, flipped)
+        if middle is None:
+            return alike
+        if tried.verdict(name, entry.path, middle) == met:
+            alike = middle
+        else:
+            flipped = middle
+
+
+def _between(entry, alike, flipped):
+    """Return a value between two, ``None`` where they are as close as is asked."""
+    if entry.quantum is not None:
+        low, high = (round(end / entry.quantum) for end in (alike, flipped))
+        return None if abs(high - low) <= 1 else _number((low + high) // 2 * entry.quantum, entry)
+    if abs(alike - flipped) <= _AS_CLOSE_AS * max(abs(alike), abs(flipped), abs(entry.value)):
+        return None
+    middle = _number((alike + flipped) / 2, entry)
+    return None if middle in (alike, flipped) else middle
+
+
+def _number(value, entry):
+    """Return a value as it would be typed: a whole count, or twelve digits."""
+    return round(value) if entry.is_count else float(f'{value:.12g}')
+
+
+def outward(entry, way):
+    """Yield the values that an input is stepped through on one side, up to its legal limit.
+
+    Parameters
+    ----------
+    entry : Input
+        The input. [unitless]
+    way : int
+        -1 for down, 1 for up. [unitless]
+
+    Yields
+    ------
+    value : int or float
+        Moving away from the input's own value, each once; the limit last. [unit of the key]
+    """
+    limit = entry.lowest if way < 0 else entry.highest
+    if entry.quantum is not None:
+        walk = _counted(entry, way)
+    elif entry.lowest < 0:
+        walk = _evenly(entry, way)
+    else:
+        walk = _by_factors(entry, way)
+    last = entry.value
+    for value in takewhile(lambda one: (one - limit) * way < 0, walk):
+        if value != last:
+            yield (last := value)
+    if last != limit:
+        yield limit
+
+
+def _parts():
+    """Yield how many steps out each value lies: parts of the first one, then whole ones."""
+    yield from _FIRST_PARTS
+    yield from count(1)
+
+
+def _evenly(entry, way):
+    step = (entry.highest - entry.lowest) / STEPS
+    return (_number(entry.value + way * part * step, entry) for part in _parts())
+
+
+def _by_factors(entry, way):
+    lowest = entry.lowest or entry.highest * 10.0**-_DECADES
+    if way < 0 and entry.value <= lowest:
+        return iter(())
+    start = max(entry.value, lowest)
+    factor = math.log(entry.highest / lowest) / STEPS
+    ends = (start * math.exp(min(way * part * factor, 700.0)) for part in _parts())
+    # Below the last decade of a key that begins at 0 there is only 0.
+    return (_number(value, entry) for value in takewhile(lambda one: way > 0 or one >= lowest, ends))
+
+
+def _counted(entry, way):
+    """Step by single counts, then by factors of the legal range, never less than one count."""
+    here = round(entry.value / entry.quantum)
+    lowest = max(entry.lowest, entry.quantum)
+    growth = math.exp(math.log(entry.highest / lowest) / STEPS)
+    for single in range(1, _SINGLE + 1):
+        yield _number((here + way * single) * entry.quantum, entry)
+    at = here + way * _SINGLE
+    while 0 < at < 1e15:
+        at = max(at + 1, math.floor(at * growth)) if way > 0 else min(at - 1, math.ceil(at / growth))
+        yield _number(at * entry.quantum, entry)
+
+
+__all__ = ['NOTE', 'Input', 'Margin', 'Tried', 'margins', 'moved', 'outward']
