@@ -119,6 +119,8 @@ def filled(document):
     _unlisted(checked)
     if checked['purpose'] == 'weather' and checked['weather'] is None:
         checked['weather'] = _record(TREE['weather'], {}, 'weather')
+    if checked['purpose'] == 'weather' and checked['weather'] is None:
+        checked['weather'] = _record(TREE['weather'], {}, 'weather')
     return {'pulsewright': FORMAT, **checked, 'remarks': _remarks(document.get('remarks', {}))}
 
 

@@ -11,6 +11,7 @@ import re
 
 from pycore.clauses import ALSO, CLAUSES, NOT_IN_ALSO, PATCH
 from pycore.plan_keys import BY_PATH, GROUPS, JUDGED, OPTIONAL_RECORDS
+from pycore.plan_paths import key_of, value_at
 from pycore.shown import shown_digits, shown_unit, shown_value
 from pycore.wording import SHOWN_UNITS
 
@@ -18,48 +19,6 @@ _FEW = 4
 _SLOT = re.compile(r'\{([^}]*)\}')
 _PER_PRF = ('radar.carrier_ghz', 'radar.pulse_us', 'radar.bandwidth_mhz', 'doppler.notch_mps')
 _PER_CPI = ('waveform.pulses', 'waveform.fill_pulses')
-
-
-def value_at(plan, path):
-    """Return what stands at a path of a plan.
-
-    Parameters
-    ----------
-    plan : dict
-        A filled plan. [plan's units]
-    path : str
-        Dotted path; a number is a place in a list. [unitless]
-
-    Returns
-    -------
-    value : object
-        ``None`` where nothing stands there.
-    """
-    value = plan
-    for part in path.split('.'):
-        if isinstance(value, list) and part.isdigit():
-            value = value[int(part)] if int(part) < len(value) else None
-        else:
-            value = value.get(part) if isinstance(value, dict) else None
-    return value
-
-
-def key_of(path):
-    """Return the key that a path belongs to.
-
-    Parameters
-    ----------
-    path : str
-        Dotted path, with or without places in lists. [unitless]
-
-    Returns
-    -------
-    key : Key or None
-        ``None`` where there is no such key.
-    """
-    whole = re.sub(r'\.\d+(?=\.)', '[]', path)
-    whole = re.sub(r'\.\d+$', '', whole)
-    return BY_PATH.get(whole) or BY_PATH.get(whole.replace('.', '[].', 1))
 
 
 def facts(plan, units):

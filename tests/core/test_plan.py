@@ -296,3 +296,8 @@ def test_any_json_is_a_plan_or_refused_in_one_sentence(document):
 )
 def test_what_came_is_shown_short(value, text):
     assert shown(value).replace('\N{NARROW NO-BREAK SPACE}', ' ') == text
+
+
+def test_a_plan_for_weather_has_weather_to_be_judged_by():
+    assert filled({'waveform': {'pri_us': [1000]}, 'purpose': 'weather'})['weather']['width_mps'] == 2
+    assert filled({'waveform': {'pri_us': [1000]}})['weather'] is None
