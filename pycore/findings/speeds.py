@@ -72,12 +72,13 @@ def _stagger_blind_speed(computed, units):
     threshold = trimmed(computed.plan.response_min_db)
     true, unit = in_speed_unit(response.true_first_blind_m_s, units)
     repeats = 'first blind speed' if response.is_blind else 'speed at which the response repeats'
-    detail = (
-        f'the true {repeats} is {significant(true)} {unit}, '
-        f'{significant(response.ratio_to_mean)} times that of the mean PRI; '
-        f'the deepest dip is {significant(response.deepest_db)} dB at '
-        f'{significant(in_speed_unit(response.deepest_at_m_s, units)[0])} {unit}; '
-        f'{percent(response.share_above)} of the wanted speeds stand above {threshold} dB'
+    detail = '; '.join(
+        (
+            f'the true {repeats} is {significant(true)} {unit}, '
+            f'{significant(response.ratio_to_mean)} times that of the mean PRI',
+            *_dip(response, units),
+            f'{percent(response.share_above)} of the wanted speeds stand above {threshold} dB',
+        )
     )
     label = f'first speed above the notch at which the response falls below {threshold} dB'
     found = response.first_below_m_s
@@ -106,6 +107,14 @@ def _stagger_blind_speed(computed, units):
         detail,
         fault=f'the response falls below {threshold} dB at {with_unit(shown, unit)}',
     )
+
+
+def _dip(response, units):
+    """Say how deep the deepest dip is, and where; nothing where no wanted speed lies beyond the rise."""
+    if response.deepest_db is None:
+        return ()
+    at, unit = in_speed_unit(response.deepest_at_m_s, units)
+    return (f'the deepest dip is {significant(response.deepest_db)} dB at {significant(at)} {unit}',)
 
 
 def decode_range(computed, units):
