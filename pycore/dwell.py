@@ -202,7 +202,8 @@ def cells_per_second(gate_counts, pulses, time_used_s):
     rate : float
         Gates times filters of all CPIs, over the time used. [1/s]
     """
-    return float(np.multiply(gate_counts, pulses).sum() / time_used_s)
+    # As floats: whole numbers of a browser's engine end at 2^31, and a million gates times 4096 filters lie beyond.
+    return float(np.multiply(gate_counts, pulses, dtype=float).sum() / time_used_s)
 
 
 def range_walk(speed_m_s, time_s, bandwidth_hz):

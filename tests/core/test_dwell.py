@@ -54,6 +54,11 @@ def test_cells_are_gates_times_filters_over_the_time_used():
     assert dwell.cells_per_second(np.array([978, 858]), PULSES, 18.4e-3) == pytest.approx(9 * 1836 / 18.4e-3)
 
 
+def test_cells_of_the_largest_plan_fit_the_short_whole_numbers_of_a_browser():
+    gates, pulses = np.array([1_000_000], dtype=np.int32), np.array([4096], dtype=np.int32)
+    assert dwell.cells_per_second(gates, pulses, 1.0) == 4.096e9
+
+
 def test_the_mean_duty_lies_between_the_shares_of_the_intervals_and_below_the_largest():
     sent = np.array([1e-6, 3e-6])
     mean = dwell.mean_duty(sent, PRI_S, PULSES + FILL)

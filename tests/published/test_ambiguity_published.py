@@ -98,33 +98,6 @@ def test_a_duty_of_a_fifth_of_a_percent_bounds_the_shortest_interval():
     assert dwell.largest_duty([1.57e-6, 1.57e-6], [3.1e-3, 780e-6]) == pytest.approx(0.002, rel=0.01)
 
 
-def test_an_s_band_radar_near_a_kilohertz():
-    # Common practice, numbers our own: 2.9 GHz, 1.1 kHz: 136.27 km, 56.86 m/s (110.5 kt), unambiguous in range only.
-    blind = ambiguity.first_blind_speed(1 / 1.1e3, ambiguity.wavelength(2.9e9))
-    reach = ambiguity.unambiguous_range(1 / 1.1e3)
-    assert reach == pytest.approx(136.27e3, abs=5.0)
-    assert blind == pytest.approx(56.86, abs=0.005)
-    assert blind / KNOT_M_S == pytest.approx(110.5, abs=0.05)
-    assert ambiguity.regime(reach, blind, 110e3, 300.0) == 'low'
-
-
-def test_a_nose_radar_at_x_band_is_ambiguous_in_both():
-    # Common practice, numbers our own: 10 GHz, 10 kHz, 100 km.
-    blind = ambiguity.first_blind_speed(1e-4, ambiguity.wavelength(10e9))
-    assert ambiguity.regime(ambiguity.unambiguous_range(1e-4), blind, 100e3, 600.0) == 'medium'
-
-
-def test_receding_rain_and_a_fast_closing_target_share_an_apparent_speed():
-    # Common practice: span 60 m/s, -12 and +48 m/s.
-    assert ambiguity.fold_speed(48.0, 60.0) == ambiguity.fold_speed(-12.0, 60.0) == -12.0
-
-
-def test_a_target_at_a_whole_multiple_of_the_blind_speed_looks_still():
-    # Common practice: multiples of λ PRF/2.
-    blind = ambiguity.first_blind_speed(0.5e-3, 0.125)  # exact in binary: 125 m/s
-    assert ambiguity.fold_speed([k * blind for k in range(-3, 4)], blind).tolist() == [0.0] * 7
-
-
 def test_a_target_blind_at_one_interval_in_range_and_speed_and_clear_at_another():
     # [R14] p. 395-396, fig. 5.28: 10 GHz, 30 km, 300 m/s; 100 us: at 0 of the interval and of the speed; 120 us: 80 us
     # and 50 m/s (c = 3e8, taken out here by counting in delay and in units of λ).
