@@ -66,6 +66,7 @@ function patches(plan, known, { grammar, fill }) {
 function slotPieces(slot, plan, context) {
   if (slot.startsWith('list ')) return listPieces(slot.slice(5), plan, context);
   if (slot.startsWith('do ')) return [doPiece(...slot.slice(3).split('|'))];
+  if (slot.startsWith('goes ')) return [{ text: goes(valueAt(plan, slot.slice(5))) }];
   if (slot === 'rail') return [{ rail: railCells(plan, context) }];
   if (slot in WORDS) return [{ text: WORDS[slot](plan) }];
   if (slot.includes('?')) return [{ text: wordFor(plan, ...slot.split('?')) }];
@@ -92,6 +93,10 @@ function railCells(plan, context) {
     { text: other.shown(key, pri) },
     ...differing.map((path) => numberPiece(`${path}.${i}`, plan, context)),
   ]);
+}
+
+function goes(speed) {
+  return speed > 0 ? 'closing' : speed < 0 ? 'receding' : 'standing still';
 }
 
 function way({ coverage: { speed_mps: [low, high] } }) {
