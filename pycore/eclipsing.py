@@ -9,7 +9,14 @@ import numpy as np
 from pycore.combs import Comb, repeated
 from pycore.eclipsing_losses import eclipsing_loss, mean_eclipsing_loss, mean_received, whole_share
 from pycore.near_ranges import clear_with_near_pulse
-from pycore.receiver import METRES_PER_SECOND_OF_DELAY, NearPulse, near_echo_is_back, open_windows, received_share
+from pycore.receiver import (
+    METRES_PER_SECOND_OF_DELAY,
+    NearPulse,
+    near_echo_is_back,
+    near_pulse_fits,
+    open_windows,
+    received_share,
+)
 
 __all__ = [
     'METRES_PER_SECOND_OF_DELAY',
@@ -21,6 +28,7 @@ __all__ = [
     'mean_eclipsing_loss',
     'mean_received',
     'near_echo_is_back',
+    'near_pulse_fits',
     'open_windows',
     'received_share',
     'whole_share',

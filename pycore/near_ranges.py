@@ -3,7 +3,7 @@
 import numpy as np
 
 from pycore.combs import repeated
-from pycore.receiver import METRES_PER_SECOND_OF_DELAY, open_windows, share_in
+from pycore.receiver import METRES_PER_SECOND_OF_DELAY, near_pulse_fits, open_windows, share_in
 from pycore.spans import Spans
 
 _NO_SHARE = 1e-10  # of an echo: what rounding can make of nothing, and of the difference of two equal shares
@@ -35,7 +35,8 @@ def clear_with_near_pulse(pri_s, pulse_s, recovery_s, guard_s, received_min, ran
     parts = []
     for pri, pulse in zip(pri_s.tolist(), pulse_s.tolist(), strict=True):
         windows = open_windows(pri, pulse, recovery_s, guard_s, near)
-        by_near = _clear(windows, pri, near.pulse_s, received_min, near.sent_at_s, (low, change))
+        heard = windows if near_pulse_fits(near, pri, guard_s) else []
+        by_near = _clear(heard, pri, near.pulse_s, received_min, near.sent_at_s, (low, change))
         by_long = _clear(windows, pri, pulse, received_min, 0.0, (change, high))
         parts.append(_joined([*by_near, *by_long]))
     prf = np.arange(len(parts)).repeat([len(part) for part in parts])

@@ -110,16 +110,37 @@ def received_share(range_m, pri_s, pulse_s, recovery_s, guard_s, near=None):
 
     Notes
     -----
-    Beyond ``near.to_range_m`` the long echo may straddle the near pulse: both received parts count.
+    Beyond ``near.to_range_m`` the long echo may straddle the near pulse: both received parts count. A near pulse for
+    which an interval has no room is not sent in it: nothing is then received up to ``near.to_range_m``.
     """
     range_m = np.asarray(range_m, dtype=float)
     windows = open_windows(pri_s, pulse_s, recovery_s, guard_s, near)
     delay = range_m / METRES_PER_SECOND_OF_DELAY
     share = share_in(windows, pri_s, delay, pulse_s)
     if near is not None:
-        by_near = share_in(windows, pri_s, delay + near.sent_at_s, near.pulse_s)
+        by_near = share_in(windows, pri_s, delay + near.sent_at_s, near.pulse_s) * near_pulse_fits(near, pri_s, guard_s)
         share = np.where(range_m <= near.to_range_m, by_near, share)
     return share[()]
+
+
+def near_pulse_fits(near, pri_s, guard_s):
+    """Return whether an interval has room for the near pulse.
+
+    Parameters
+    ----------
+    near : NearPulse
+        The near pulse. [s]
+    pri_s : float or array, shape N
+        Intervals. [s]
+    guard_s : float
+        Time that the receiver is shut before a pulse. [s]
+
+    Returns
+    -------
+    fits : bool or array, shape N
+        Where it is over before the guard of the next long pulse.
+    """
+    return near.sent_at_s + near.pulse_s <= pri_s - guard_s
 
 
 def near_echo_is_back(near, pri_s, guard_s):

@@ -46,6 +46,8 @@ def test_the_received_share_is_what_is_left_of_an_echo_piece_by_piece(receiver, 
     is_open = (at >= pulse + recovery) & (at < pri - guard)
     if near is not None:
         is_open &= (at < near.sent_at_s - guard) | (at >= near.sent_at_s + near.pulse_s + recovery)
+    if by_near and near.sent_at_s + near.pulse_s > pri - guard:
+        is_open[:] = False  # no room in the interval: never sent
     # The echo meets at most six edges of windows, each of which cuts one piece.
     assert received_share(range_m, pri, pulse, recovery, guard, near) == pytest.approx(is_open.mean(), abs=6 / PIECES)
 
@@ -119,6 +121,14 @@ def test_the_near_pulse_sees_what_the_long_one_hides():
     # Near pulse: 1.5 us; it serves up to 10 km, beyond which the long echo's first half is still too early at 10.6 km.
     assert spans.start[0] == pytest.approx(HALF_C * 1.5e-6, rel=1e-9)
     assert eclipsing.first_opening(1e-6, 0.5, pulse, near)[0] == pytest.approx(spans.start[0])
+
+
+def test_an_interval_without_room_for_the_near_pulse_does_not_see_near():
+    near = NearPulse(1e-6, 70e-6, 5e3)
+    pri = np.array([60e-6, 70.5e-6, 72e-6])
+    spans = clear_ranges(pri, np.full(3, 1e-6), 1e-6, 0.0, 0.5, (0.0, 5e3), near)
+    assert set(spans.prf.tolist()) == {2}
+    assert received_share(3e3, 60e-6, 1e-6, 1e-6, 0.0, near) == 0.0
 
 
 def test_the_near_echo_must_be_back_before_the_guard():
