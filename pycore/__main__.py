@@ -15,9 +15,13 @@ from pathlib import Path
 from pycore import api, document
 from pycore.errors import InputError
 from pycore.findings.finding import SIGNS
+from pycore.wording import trimmed
 
 BAD_INPUT = 2
 """Exit status where the input cannot be used."""
+
+TIGHTEST = 3
+"""So many inputs are printed under a finding with ``--margins``. [unitless]"""
 
 LARGEST_PLAN_BYTES = 1_000_000
 """A file longer than this is no plan. [bytes]"""
@@ -54,6 +58,9 @@ def _parser():
     commands = parser.add_subparsers(required=True, metavar='COMMAND')
     assess = _command(commands, 'assess', _assess, 'print the findings of a plan')
     assess.add_argument('--json', action='store_true', help='print every number as JSON')
+    assess.add_argument(
+        '--margins', action='store_true', help='how far each input can move before a verdict flips (takes seconds)'
+    )
     _command(commands, 'link', _link, 'print the link of a plan, without the address it is appended to')
     timing = _command(commands, 'timing', _timing, 'print the timing table in counts of the clock')
     timing.add_argument('--csv', action='store_true', help='print it as CSV')
@@ -115,7 +122,7 @@ def _limited(data, name):
 def _assess(options):
     plan = plan_of(options.plan)
     if options.json:
-        print(json.dumps(api.assess(plan), ensure_ascii=False, allow_nan=False))
+        print(json.dumps(api.assess(plan, options.margins), ensure_ascii=False, allow_nan=False))
         return
     answer = api.note(plan)
     print(answer['plan']['title'] or 'Untitled plan')
@@ -124,6 +131,19 @@ def _assess(options):
         print(f'{SIGNS[finding["verdict"]]} {finding["verdict"]:<15}  {finding["text"]}')
         if finding['remark_text'] and finding['remark']:
             print(f'{"":<19}{finding["remark_text"]}')
+        if options.margins and finding['met'] is not None:
+            _print_margins(api.margins_of(plan, finding['name'])['margins'])
+
+
+def _print_margins(rows):
+    """Print how far the tightest inputs of a finding can move."""
+    for row in rows[:TIGHTEST]:
+        ends = ' and '.join(
+            f'{word} {trimmed(row[end])}{" " if row["unit"] else ""}{row["unit"]}'
+            for word, end in (('down to', 'from'), ('up to', 'to'))
+            if row[end] is not None
+        )
+        print(f'{"":<19}{row["label"]} {trimmed(row["value"])}: the same verdict {ends}')
 
 
 def _link(options):

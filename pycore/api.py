@@ -12,21 +12,26 @@ from pycore.columns import picture
 from pycore.computed import Computed
 from pycore.differences import differing_inputs, judged_changes, verdicts_differ
 from pycore.errors import InputError
-from pycore.findings import findings, verdict
+from pycore.findings import verdict
 from pycore.follow import follow
+from pycore.holds_over import judged
+from pycore.margins import margins_shown
 from pycore.plan import read
 from pycore.timing import columns, timing_table
 from pycore.variation import steps, varied
 from pycore.wording import SHOWN_UNITS
 
 
-def assess(plan):
+def assess(plan, margins=False):
     """Return the assessment of a plan: all its numbers and findings.
 
     Parameters
     ----------
     plan : dict
         A plan; only ``waveform.pri_us`` is required. [plan's units]
+    margins : bool
+        Whether the margins of every judged finding are worked out too, which takes seconds; the key ``margins`` is
+        there only then. [unitless]
 
     Returns
     -------
@@ -38,7 +43,7 @@ def assess(plan):
     InputError
         Where a key of the plan cannot be used: field, rule, limit, and what came.
     """
-    return assessment(Computed(read(plan)))
+    return assessment(Computed(read(plan)), margins)
 
 
 def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, deep=False):
@@ -70,7 +75,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     start = None if opened is None else link.read_link(opened)
     document, said, refused = _edited(plan if start is None else start.document, edits, units)
     computed = Computed(read(document), with_echoes=deep)
-    found = findings(computed, units)
+    found = judged(computed, units)
     return {
         'plan': computed.plan.document,
         'link': link.written(computed.plan.document),
@@ -127,7 +132,7 @@ def compare(plan, other, units=None):
     """
     units = {**SHOWN_UNITS, **(units or {})}
     ours, theirs = (Computed(read(one)) for one in (plan, other))
-    changes = judged_changes(findings(ours, units), findings(theirs, units))
+    changes = judged_changes(judged(ours, units), judged(theirs, units))
     return {
         'inputs': differing_inputs(ours.plan.document, theirs.plan.document, units),
         'findings': changes,
@@ -160,7 +165,7 @@ def vary(plan, inputs):
             rows.append({**dict(zip(head, values, strict=True)), 'refused': result.message})
             continue
         found = {}
-        for finding in findings(Computed(read(result)), SHOWN_UNITS):
+        for finding in judged(Computed(read(result)), SHOWN_UNITS):
             found[finding.name], found[f'{finding.name} met'] = finding.value, finding.met
         rows.append({**dict(zip(head, values, strict=True)), **found})
     columns = list(dict.fromkeys(column for row in rows for column in row))
@@ -250,5 +255,32 @@ def _finite(value):
     return value if math.isfinite(value) else None
 
 
-ACTIONS = {'assess': assess, 'note': note, 'compare': compare, 'vary': vary, 'follow': follow_target, 'timing': timing}
+def margins_of(plan, finding):
+    """Return how far each input can move, alone, before the verdict of a finding flips.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+    finding : str
+        Name of the finding. [unitless]
+
+    Returns
+    -------
+    margins : dict
+        ``finding``, ``met``, ``margins`` (``key``, ``label``, ``unit``, ``value``, ``from``, ``to``; tightest first;
+        ``None`` where no flip was found), ``note``.
+    """
+    return margins_shown(read(plan), finding)
+
+
+ACTIONS = {
+    'assess': assess,
+    'note': note,
+    'compare': compare,
+    'vary': vary,
+    'follow': follow_target,
+    'timing': timing,
+    'margins': margins_of,
+}
 """What the worker in the browser may be asked for, by name."""

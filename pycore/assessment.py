@@ -7,26 +7,33 @@ plan's PRIs, ``None`` for what has no value.
 import math
 
 from pycore import dwell
-from pycore.findings import findings
+from pycore.holds_over import as_rows, held
+from pycore.margins import all_margins
 from pycore.wording import SHOWN_UNITS
 
 FORMAT = 1
 """Number of the plan's and the assessment's format."""
 
 
-def assessment(computed):
+def assessment(computed, with_margins=False):
     """Return all that a plan gives, as a plain dictionary.
 
     Parameters
     ----------
     computed : Computed
         What the plan gives. [unitless]
+    with_margins : bool
+        Whether the margins of every judged finding are worked out too, which takes seconds; the key ``margins`` is
+        there only then. [unitless]
 
     Returns
     -------
     assessment : dict
         Ready for JSON: dictionaries, lists, strings, floats, booleans and ``None``.
     """
+    each = held(computed, SHOWN_UNITS)
+    found = [one.finding for one in each]
+    margins = {'margins': all_margins(computed.plan, found)} if with_margins else {}
     return {
         'pulsewright': FORMAT,
         'plan': computed.plan.document,
@@ -41,7 +48,9 @@ def assessment(computed):
         'decode': _decode(computed),
         'dwell': _dwell(computed),
         'detection': _detection(computed),
-        'findings': [as_dict(finding) for finding in findings(computed, SHOWN_UNITS)],
+        **margins,
+        'holds_over': as_rows(computed, each),
+        'findings': [as_dict(finding) for finding in found],
     }
 
 

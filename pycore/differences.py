@@ -1,18 +1,11 @@
 """Two plans side by side: inputs that differ first, then each finding as better, worse or the same."""
 
 from pycore.findings.finding import NOT_ASKED
+from pycore.findings.rank import rank
 from pycore.plan_document import TREE
 from pycore.sentence import key_of
 from pycore.shown import shown_value
 
-_MORE_IS_BETTER = {
-    **dict.fromkeys(('visible', 'must-see', 'blind-speed', 'decode-range', 'decode-speed', 'detection'), True),
-    **dict.fromkeys(('nyquist', 'extended-nyquist', 'second-trip'), True),
-    **dict.fromkeys(('largest-hole', 'unseen-inbound', 'unseen-crossing', 'dwell', 'duty', 'range-walk'), False),
-    **dict.fromkeys(('unfolding', 'velocity-error'), False),
-}
-_NONE_IS_BEST = ('blind-speed', 'decode-range', 'decode-speed')
-"""Findings whose value is ``None`` where there is no end to it; elsewhere ``None`` is the worst."""
 _SAME = 1e-9
 
 
@@ -120,19 +113,10 @@ def change_word(name, value, other):
     word : str
         ``'better'``, ``'worse'`` or ``'same'``.
     """
-    base = name.partition('.')[0]
-    more = _MORE_IS_BETTER[base]
-    ranks = [_rank(base, one, more) for one in (value, other)]
+    ranks = [rank(name, one) for one in (value, other)]
     if ranks[0] == ranks[1] or abs(ranks[0] - ranks[1]) <= _SAME * max(abs(ranks[0]), abs(ranks[1])):
         return 'same'
     return 'better' if ranks[0] > ranks[1] else 'worse'
-
-
-def _rank(base, value, more):
-    """Return a number that is larger for what is better."""
-    if value is None:
-        return 1e300 if base in _NONE_IS_BEST else -1e300
-    return value if more else -value
 
 
 def verdicts_differ(changes):

@@ -27,7 +27,15 @@ _TARGET = (
 
 MATTERS = {
     'visible': (*_SEEN, 'wanted.visible_pct'),
-    'must-see': (*_PRIS, *_RECEIVER, *_NOTCH, *_M, 'must_see[].range_km', 'must_see[].speed_mps', 'must_see[].visible_pct'),
+    'must-see': (
+        *_PRIS,
+        *_RECEIVER,
+        *_NOTCH,
+        *_M,
+        'must_see[].range_km',
+        'must_see[].speed_mps',
+        'must_see[].visible_pct',
+    ),
     'largest-hole': (*_SEEN, 'wanted.hole_km', 'wanted.hole_mps'),
     'unseen-inbound': (*_SEEN, 'wanted.unseen_s'),
     'unseen-crossing': (

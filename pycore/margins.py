@@ -15,9 +15,9 @@ from itertools import count, takewhile
 from pycore.computed import Computed
 from pycore.errors import InputError
 from pycore.findings import named
-from pycore.margin_inputs import Input, inputs_of
+from pycore.margin_inputs import inputs_of
 from pycore.plan import read
-from pycore.plan_document import filled
+from pycore.plan_document import shown
 from pycore.wording import SHOWN_UNITS
 
 STEPS = 64
@@ -64,6 +64,18 @@ class Margin:
     low: float | None
     high: float | None
     tightness: float
+
+    @property
+    def row(self):
+        """The margin as a plain dictionary, ready for JSON."""
+        return {
+            'key': self.key,
+            'label': self.label,
+            'unit': self.unit,
+            'value': self.value,
+            'from': self.low,
+            'to': self.high,
+        }
 
 
 class Tried:
@@ -149,13 +161,84 @@ def margins(plan, name, tried=None):
     margins : list of Margin
         Only inputs for which a flip was found; none for a finding that is not judged.
     """
-    document = filled(plan.document)
+    document = plan.document
     tried = tried or Tried(document)
     found = named(Computed(plan, with_echoes=False), name, SHOWN_UNITS)
     if found is None or found.met is None:
         return []
     each = [_margin(tried, name, one, found.met) for one in inputs_of(document, name)]
     return sorted((one for one in each if one is not None), key=lambda one: one.tightness)
+
+
+def all_margins(plan, findings):
+    """Return the margins of every judged finding.
+
+    Parameters
+    ----------
+    plan : Plan
+        The plan. [unitless]
+    findings : sequence of Finding
+        Its findings. [unitless]
+
+    Returns
+    -------
+    margins : dict
+        For each finding that is judged, by its name, the rows of :func:`margins`, ready for JSON.
+    """
+    tried = Tried(plan.document)
+    judged = (finding.name for finding in findings if finding.met is not None)
+    return {name: [one.row for one in margins(plan, name, tried)] for name in judged}
+
+
+def margins_shown(plan, name):
+    """Return the margins of one finding as a page shows them.
+
+    Parameters
+    ----------
+    plan : Plan
+        The plan. [unitless]
+    name : str
+        Name of the finding. [unitless]
+
+    Returns
+    -------
+    shown : dict
+        ``finding``, ``met``, ``margins`` (rows, tightest first), ``note``.
+
+    Raises
+    ------
+    InputError
+        Where the plan has no such finding.
+    """
+    found = asked_for(Computed(plan, with_echoes=False), name)
+    rows = [one.row for one in margins(plan, found.name)]
+    return {'finding': found.name, 'met': found.met, 'margins': rows, 'note': NOTE}
+
+
+def asked_for(computed, name):
+    """Return the finding that was asked for by its name.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    name : str
+        Name of the finding. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        At the plan's own carrier.
+
+    Raises
+    ------
+    InputError
+        Where the plan has no such finding.
+    """
+    found = named(computed, name, SHOWN_UNITS) if isinstance(name, str) else None
+    if found is None:
+        raise InputError('finding', f'The plan has no finding {shown(name)}.')
+    return found
 
 
 def _margin(tried, name, entry, met):
@@ -276,6 +359,3 @@ def _counted(entry, way):
     while 0 < at < 1e15:
         at = max(at + 1, math.floor(at * growth)) if way > 0 else min(at - 1, math.ceil(at / growth))
         yield _number(at * entry.quantum, entry)
-
-
-__all__ = ['NOTE', 'Input', 'Margin', 'Tried', 'margins', 'moved', 'outward']
