@@ -1,6 +1,7 @@
 """Run inside Pyodide: use the engine as a page would, and write down which modules of the library and of numpy it took.
 
 Reads /project (our sources, by the names in the session), /runtime (numpy's wheel) and /job/session.json;
+writes /job/kept.json.
 """
 
 import ast
