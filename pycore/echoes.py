@@ -184,7 +184,9 @@ class Echoes:
         plan, part = self.plan, self.parts[-1]
         if plan.surface is None:
             return None
-        nearest = np.maximum(part.first_opening_m, plan.range_m[0])
+        # Beyond R_u a wanted range shares its gate with the nearest clutter that there is.
+        shares = self.computed.unambiguous_range_m < plan.range_m[1]
+        nearest = np.where(shares, part.first_opening_m, np.maximum(part.first_opening_m, plan.range_m[0]))
         ratio = clutter.clutter_to_noise(plan.surface, nearest, part.first_opening_m, part.factor[:, 0])
         lobes = np.array([filters.lobe_edge(cpi.weights) for cpi in part.cpis])
         width = plan.wavelength_m / (2.0 * plan.pulses * plan.pri_s)

@@ -11,7 +11,20 @@ OFTEN = 0.01
 
 
 def nyquist(computed, units):
-    """Return the finding on the Nyquist speed of a single PRF, the largest of the set."""
+    """Return the finding on the Nyquist speed of a single PRF, the largest of the set.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     speeds = [in_speed_unit(float(blind) / 2, units)[0] for blind in computed.blind_speed_m_s]
     largest, unit = in_speed_unit(float(computed.blind_speed_m_s.max()) / 2, units)
     every = f'± {listed(significant(speed) for speed in speeds)} {unit}' if len(speeds) > 1 else ''
@@ -48,7 +61,20 @@ _NO_PAIR = 'speeds are unfolded by exactly two different PRIs on one carrier'
 
 
 def extended_nyquist(computed, units):
-    """Return the finding on the Nyquist speed of both PRFs together."""
+    """Return the finding on the Nyquist speed of both PRFs together.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     wanted = computed.plan.document['weather']['wanted_mps']
     text = '' if wanted is None else f'at least ± {as_typed(*in_speed_unit(wanted, units))}'
     pair, label = _pair(computed), 'Nyquist speed of two PRFs together'
@@ -85,7 +111,20 @@ def _deviations(computed):
 
 
 def unfolding(computed, units):
-    """Return the finding on how often unfolding picks a wrong fold."""
+    """Return the finding on how often unfolding picks a wrong fold.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     pair, label = _pair(computed), 'unfolding that picks a wrong fold'
     if pair is None:
         return Finding('unfolding', label, None, 'none', 'share', detail=_NO_PAIR)
@@ -104,7 +143,20 @@ def unfolding(computed, units):
 
 
 def velocity_error(computed, units):
-    """Return the finding on the standard error of the mean speed, the largest of the set."""
+    """Return the finding on the standard error of the mean speed, the largest of the set.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     wanted = computed.plan.document['weather']['error_mps']
     text = '' if wanted is None else f'at most {as_typed(*in_speed_unit(wanted, units))}'
     worst, label = max(_deviations(computed)), 'standard error of the mean speed'
@@ -131,7 +183,20 @@ def velocity_error(computed, units):
 
 
 def second_trip(computed, units):
-    """Return the finding on the ranges whose echoes overlay the coverage one interval late."""
+    """Return the finding on the ranges whose echoes overlay the coverage one interval late.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
     plan = computed.plan
     overlays = weather.second_trip(plan.range_m, computed.unambiguous_range_m)[:, 0]
     reach = float(computed.unambiguous_range_m.min())

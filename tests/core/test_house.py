@@ -33,7 +33,7 @@ def test_every_public_function_says_what_its_parameters_are_and_in_which_unit(fu
     text = inspect.getdoc(function) or ''
     assert text, 'no docstring'
     for name in inspect.signature(function).parameters:
-        entry = re.search(rf'^(\w+, )*{name}(, \w+)* : .*?(?=^\S|\Z)', text, re.MULTILINE | re.DOTALL)
+        entry = re.search(rf'^(\w+, )*\*{{0,2}}{name}(, \w+)*( :|$).*?(?=^\S|\Z)', text, re.MULTILINE | re.DOTALL)
         assert entry, f'{name} is not documented'
         assert re.search(r'\[[^\]]+\]', entry.group()), f'{name} has no [unit]'
 

@@ -5,8 +5,10 @@ import math
 import numpy as np
 import pytest
 
+from pycore.computed import Computed
 from pycore.filters import lobe_edge
 from pycore.notch import platform_spread, suggested_notch
+from pycore.plan import read
 from pycore.windows import window
 
 
@@ -46,3 +48,19 @@ def test_each_prf_of_a_list_gets_the_suggestion_that_it_gets_alone():
 @pytest.mark.parametrize(('name', 'filters'), [('rectangular', 1.0), ('chebyshev', 1.77)])
 def test_a_nine_pulse_filter_is_down_to_its_sidelobes_where_the_handbooks_say(name, filters):
     assert lobe_edge(window(name, 9, 40.0)) == pytest.approx(filters, abs=0.005)
+
+
+@pytest.mark.parametrize(('pri_us', 'from_km'), [(980.0, 2.0), (300.0, 0.224844)])
+def test_beyond_its_unambiguous_range_a_plan_meets_the_nearest_clutter(pri_us, from_km):
+    # 980 us reach 147 km, beyond the coverage: clutter from 2 km on; 300 us reach 45 km: clutter from the first opening
+    plan = read(
+        {
+            'radar': {'pulse_us': 1.0, 'recovery_us': 1.0},
+            'coverage': {'range_km': [2.0, 110.0], 'speed_mps': [0.0, 300.0]},
+            'waveform': {'pri_us': [pri_us], 'received_min': 0.5},
+            'surface': {'cnr_db': 45.0, 'at_km': 10.0, 'to_km': 40.0, 'range_power': 3.0},
+        }
+    )
+    found = Computed(plan).echoes.suggested_notch
+    ratio = 10**4.5 * (10.0 / from_km) ** 3
+    assert found.clutter_m_s == pytest.approx(found.spread_m_s * math.sqrt(2 * math.log(ratio)), rel=1e-6)
