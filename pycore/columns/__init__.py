@@ -27,7 +27,7 @@ def order(kind):
     return tuple(swap.get(name, name) for name in FIGURES)
 
 
-def picture(name, computed, units, size=None):
+def picture(name, computed, units, size=None, mark=None):
     """Return one figure of a plan.
 
     Parameters
@@ -40,6 +40,8 @@ def picture(name, computed, units, size=None):
         Units that the reader prefers, by ``range``, ``speed``, ``pri``. [unitless]
     size : mapping or None
         Width and height of its plot. [px]
+    mark : Mark or None
+        The target that is followed, which every figure marks. [m, m/s]
 
     Returns
     -------
@@ -47,4 +49,4 @@ def picture(name, computed, units, size=None):
         ``title``; ``caption``, ``short`` (one line), ``summary`` (for a screen reader), ``table`` (``head``, ``rows``);
         ``columns`` by source; ``ranges``, ``labels``, ``units`` and fixed ``ticks`` by axis.
     """
-    return _MODULES[name].picture(computed, units, size)
+    return _MODULES[name].picture(computed, units, size, mark)

@@ -2,7 +2,7 @@
 
 Sources: for dwells ``lanes``, ``notches`` (of each PRF), ``unseen`` (clear on fewer
 than M); for a stagger ``response``, ``threshold``, ``below`` (where the response is
-too low), ``speeds`` (marked speeds) and their names. Those of the other kind are empty.
+too low), ``speeds`` (marked speeds) and their names; ``target``. Those of the other kind are empty.
 """
 
 import numpy as np
@@ -12,6 +12,7 @@ from pycore.columns.axes import interval_name, speed_axis
 from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import looks
+from pycore.columns.mark import across
 from pycore.columns.zone_sentences import zones_sentence
 from pycore.wording import THIN_SPACE, listed, percent, significant
 
@@ -20,7 +21,7 @@ NAME, TITLE = 'blind-speeds', 'Blind speeds'
 _NO_BARS = {'y': np.zeros(0), 'left': np.zeros(0), 'right': np.zeros(0)}
 
 
-def picture(computed, units, size=None):
+def picture(computed, units, size=None, mark=None):
     """Return the figure of blind speeds.
 
     Parameters
@@ -31,6 +32,8 @@ def picture(computed, units, size=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Width of the plot, for the curve of a stagger. [px]
+    mark : Mark or None
+        The target that is followed. [m, m/s]
 
     Returns
     -------
@@ -38,8 +41,12 @@ def picture(computed, units, size=None):
         Columns, ranges, labels, ticks and words.
     """
     axis = speed_axis(computed.plan.speed_m_s, units)
-    if not computed.is_stagger:
-        return _of_dwells(computed, axis, units)
+    answer = _of_stagger(computed, axis) if computed.is_stagger else _of_dwells(computed, axis, units)
+    answer['columns']['target'] = across(mark and mark.speed_m_s, axis, answer['ranges']['y'])
+    return answer
+
+
+def _of_stagger(computed, axis):
     answer = answering.picture(computed, axis)
     answer['columns'] |= {'lanes': _NO_BARS, 'notches': _NO_BARS, 'unseen': _NO_BARS}
     return {'title': TITLE, **answer, 'units': {'x': axis.unit}}

@@ -1,7 +1,7 @@
 """Figure: the number of clear PRFs over range and radial speed.
 
 Sources: ``map`` (classes, see :mod:`pycore.columns.classes`), ``regions`` and
-``region-names`` (must-see), ``holes`` (their numbers). The colours of the classes
+``region-names`` (must-see), ``holes`` (their numbers), ``target`` (the followed one). The colours of the classes
 belong to the page, so that only its palette changes with its scheme.
 """
 
@@ -10,6 +10,7 @@ import numpy as np
 from pycore import zones
 from pycore.columns.axes import range_axis, speed_axis
 from pycore.columns.classes import classes
+from pycore.columns.mark import ring
 from pycore.columns.named import names_at
 from pycore.columns.zone_words import words
 
@@ -27,7 +28,7 @@ _DISC = 17
 _WAYS = ((12.0, -12.0), (-12.0, -12.0), (12.0, 12.0), (-12.0, 12.0))
 
 
-def picture(computed, units, size=None):
+def picture(computed, units, size=None, mark=None):
     """Return the figure of blind zones.
 
     Parameters
@@ -38,6 +39,8 @@ def picture(computed, units, size=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Width and height of the plot. [px]
+    mark : Mark or None
+        The target that is followed. [m, m/s]
 
     Returns
     -------
@@ -53,6 +56,7 @@ def picture(computed, units, size=None):
             'map': {'image': classes(count, computed.looks, computed.m), **_frame(x, y)},
             **_regions(computed, x, y),
             'holes': _numbers(computed, x, y, blind),
+            'target': ring(mark, x, y),
         },
         'ranges': {'x': x.ends, 'y': y.ends},
         'labels': {'x': x.label, 'y': y.label},

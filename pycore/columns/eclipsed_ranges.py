@@ -1,7 +1,7 @@
 """Figure: which ranges each PRF receives, how much of the echo, and which of them enough PRFs receive.
 
 Sources: ``lanes`` (a bar along each lane), ``eclipsed`` (on each PRF), ``unseen``
-(on fewer than M), ``received`` (the received share, its area and its edge).
+(on fewer than M), ``received`` (the received share, its area and its edge), ``target``.
 """
 
 import numpy as np
@@ -10,6 +10,7 @@ from pycore.columns.axes import interval_name, range_axis
 from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import cycle_looks, looks
+from pycore.columns.mark import across
 from pycore.columns.received import received_corners
 from pycore.columns.zone_sentences import zones_sentence
 from pycore.wording import count_word, percent, significant
@@ -22,7 +23,7 @@ MOST_WITH_SHARE = 6
 _SHARE_FROM, _SHARE_HIGH = -0.47, 0.2
 
 
-def picture(computed, units, size=None):
+def picture(computed, units, size=None, mark=None):
     """Return the figure of eclipsed ranges.
 
     Parameters
@@ -33,6 +34,8 @@ def picture(computed, units, size=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Not used: nothing here depends on the size. [px]
+    mark : Mark or None
+        The target that is followed. [m, m/s]
 
     Returns
     -------
@@ -44,11 +47,15 @@ def picture(computed, units, size=None):
     eclipsed = gaps(computed.prf_ranges, plan.n, plan.range_m)
     unseen = zones(computed.range_sweep, computed.looks, computed.m)
     counted = None if plan.n == 1 else 'all intervals' if computed.is_stagger else f'{plan.m} of {plan.n}'
+    lanes = lane_range(plan.n, counted is not None)
     return {
         'title': TITLE,
         **_words(computed, axis, names, eclipsed, unseen),
-        'columns': _columns(computed, axis, eclipsed, unseen, counted is not None),
-        'ranges': {'x': axis.ends, 'y': lane_range(plan.n, counted is not None)},
+        'columns': {
+            **_columns(computed, axis, eclipsed, unseen, counted is not None),
+            'target': across(mark and mark.range_m, axis, lanes),
+        },
+        'ranges': {'x': axis.ends, 'y': lanes},
         'labels': {'x': axis.label, 'y': ''},
         'units': {'x': axis.unit},
         'ticks': {'y': lane_ticks(names, counted)},

@@ -3,13 +3,15 @@
 On logarithmic axes all PRFs of one carrier lie on a line of slope -1, those of a
 band in a strip. Sources: ``edges`` (of the bands), ``band`` (the strips that the
 plan's carriers lie in), ``band-names``, ``lines`` (one for each carrier), ``asked``
-(what one PRF would have to reach) and ``asked-name``, ``prfs`` and ``prf-names``.
+(what one PRF would have to reach) and ``asked-name``, ``prfs`` and ``prf-names``, ``target``
+(a PRF further out and higher up would show the followed target without ambiguity).
 """
 
 import numpy as np
 
 from pycore import ambiguity, bands
 from pycore.columns.axes import decade_ticks, interval_name, range_axis, speed_axis
+from pycore.columns.mark import ring
 from pycore.columns.named import names_at
 from pycore.columns.trade_words import words
 
@@ -19,7 +21,7 @@ _ROOM = 2.2
 """Factor between the outermost mark and the end of the axis. [unitless]"""
 
 
-def picture(computed, units, size=None):
+def picture(computed, units, size=None, mark=None):
     """Return the figure of the trade between unambiguous range and first blind speed.
 
     Parameters
@@ -30,6 +32,8 @@ def picture(computed, units, size=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Not used: nothing here depends on the size. [px]
+    mark : Mark or None
+        The target that is followed. [m, m/s]
 
     Returns
     -------
@@ -44,7 +48,12 @@ def picture(computed, units, size=None):
     return {
         'title': TITLE,
         **words(computed, x, y, names),
-        'columns': {**_bands(computed.plan, x, y), **_asked(computed.plan, x, y), **_prfs(computed, x, y, names)},
+        'columns': {
+            **_bands(computed.plan, x, y),
+            **_asked(computed.plan, x, y),
+            **_prfs(computed, x, y, names),
+            'target': _target(mark, x, y),
+        },
         'ranges': {'x': x.ends, 'y': y.ends},
         'labels': {'x': x.label, 'y': f'{y.label}, twice the Nyquist speed'},
         'units': {'x': x.unit, 'y': y.unit},
@@ -59,6 +68,12 @@ def _axes(computed, units):
     speeds = np.append(computed.blind_speed_m_s, high - low)
     x, y = ((float(values.min()) / _ROOM, float(values.max()) * _ROOM) for values in (ranges, speeds))
     return range_axis(x, units, 'unambiguous range'), speed_axis(y, units, 'first blind speed')
+
+
+def _target(mark, x, y):
+    """Return the ring of the target, which a logarithmic axis has no place for at range or speed nought."""
+    here = mark is not None and x.limits[0] < mark.range_m and y.limits[0] < mark.speed_m_s
+    return ring(mark if here else None, x, y)
 
 
 def _product(frequency_hz, x, y):

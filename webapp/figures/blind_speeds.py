@@ -4,6 +4,7 @@ from bokeh.models import HBar, Line, Segment
 
 from pycore.columns import blind_speeds
 from webapp.figures.lanes import lanes
+from webapp.figures.marks import upright
 from webapp.figures.names import write
 from webapp.figures.style import draw, plot, source
 
@@ -21,11 +22,12 @@ def build(picture):
     Returns
     -------
     figure : bokeh figure
-        Sources ``lanes``, ``notches``, ``unseen``; ``response``, ``threshold``, ``below``, ``speeds``, ``names``.
+        Sources ``lanes``, ``notches``, ``unseen``; ``response``, ``threshold``, ``below``, ``speeds``, ``names``; ``target``.
     """
     made = plot(NAME, picture)
     lanes(made, NAME, picture, 'notches')
     _response(made, picture)
+    upright(made, NAME, picture)
     return made
 
 

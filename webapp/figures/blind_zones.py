@@ -5,6 +5,7 @@ from bokeh.models import Image, LinearColorMapper, Quad, Text
 
 from pycore.columns import blind_zones
 from pycore.columns.classes import NAMES
+from webapp.figures.marks import ring
 from webapp.figures.names import write
 from webapp.figures.palette import CLASS_ROLES
 from webapp.figures.style import SANS, SMALL, draw, paint, plot, source
@@ -23,7 +24,7 @@ def build(picture):
     Returns
     -------
     figure : bokeh figure
-        Sources ``map``, ``regions``, ``region-names``, ``holes``.
+        Sources ``map``, ``regions``, ``region-names``, ``holes``, ``target``.
     """
     made = paint(plot(NAME, picture), outline_line_color='hair')
     made.outline_line_alpha = 1
@@ -32,6 +33,7 @@ def build(picture):
     draw(made, source(NAME, picture, 'map'), image, level='image')
     _regions(made, picture)
     _holes(made, picture)
+    ring(made, NAME, picture)
     return made
 
 

@@ -3,6 +3,7 @@
 from bokeh.models import Patches, Quad, Scatter, Segment
 
 from pycore.columns import trade_line
+from webapp.figures.marks import ring
 from webapp.figures.names import write
 from webapp.figures.style import draw, plot, source
 
@@ -22,7 +23,8 @@ def build(picture):
     Returns
     -------
     figure : bokeh figure
-        Sources ``edges``, ``band``, ``band-names``, ``lines``, ``asked``, ``asked-name``, ``prfs``, ``prf-names``.
+        Sources ``edges``, ``band``, ``band-names``, ``lines``, ``asked``, ``asked-name``, ``prfs``, ``prf-names``,
+        ``target``.
     """
     made = plot(NAME, picture, 'log', 'log')
     draw(made, source(NAME, picture, 'band'), Patches(xs='xs', ys='ys', line_alpha=0), fill_color='band')
@@ -35,4 +37,5 @@ def build(picture):
     write(made, NAME, picture, 'prf-names', role='strong-text', ground=0.6)
     mark = Scatter(x='x', y='y', size=10, line_width=1.5)
     draw(made, source(NAME, picture, 'prfs'), mark, fill_color='ink', line_color='paper')
+    ring(made, NAME, picture)
     return made
