@@ -18,6 +18,7 @@ from pycore.response import Response, binomial_weights, repeat_counts, staggered
 from pycore.spans import Spans
 
 _MOST_COSINES = 4_000_000
+_SUM_OF_NOTHING = 1e-12  # of the weights' sizes: what decimals that add up to 0 may leave in floating point
 
 
 @dataclass(frozen=True, slots=True)
@@ -193,7 +194,7 @@ def staggered(pri_counts, clock_hz, delays, weights, wavelength_m, least_db, spe
         float(notch),
         float(below) if np.isfinite(below) else None,
         true_first,
-        abs(sum(used)) < 1e-12,
+        abs(sum(used)) <= _SUM_OF_NOTHING * sum(abs(weight) for weight in used),
         float(Fraction(sum(int(count) for count in pri_counts), len(pri_counts) * repeat)),
         depth,
         at,

@@ -208,3 +208,12 @@ def test_the_first_blind_interval_of_a_set_lies_where_too_few_prfs_are_clear():
     assert found == pytest.approx((56.245, 60.623))
     assert first_blind_interval(blind, np.array([6.0, 6.0]), 1, (0.0, 50.0)) is None
     assert first_blind_interval(blind, np.array([6.0, 6.0]), 2, (0.0, 50.0)) == pytest.approx((48.623, 50.0))
+
+
+@pytest.mark.parametrize(
+    ('weights', 'is_blind'),
+    [((0.1, 0.2, -0.3), True), ((1e-9, -1e-9), True), ((1e-13, 1e-13), False), ((1, -0.999), False)],
+)
+def test_weights_reject_what_stands_still_where_they_add_up_to_nothing_whatever_their_size(weights, is_blind):
+    found = staggered((1000, 1200), 1e6, 1, weights, 0.1, -10.0, (0.0, 100.0))
+    assert found.is_blind == is_blind

@@ -135,3 +135,15 @@ def test_without_blanking_the_published_set_has_no_blind_cell_outside_the_first_
     assert 0.0121 <= (count < 3).mean() <= 0.0133
     first = (range_m < 1.5e8 * 1e-6) | (speed_m_s <= 17)[:, None]
     assert not ((count < 3) & ~first).any()
+
+
+@pytest.mark.parametrize(('n', 'm'), [(8, 3), (9, 3), (4, 2), (2, 1)])
+def test_prfs_stepped_by_the_clutter_width_over_n_less_m_leave_m_of_them_clear_of_the_first_blind_zone(n, m):
+    # [R14] p. 413: steps of at least β/(N - M) Hz, β the width of the mainlobe clutter: here 2 kHz about 15 kHz
+    width_hz = 2000.0
+    prf_hz = 15e3 + width_hz / (n - m) * np.arange(n)
+    notch = np.full(n, width_hz * WAVELENGTH_M / 4)
+    limits = (7000.0 * WAVELENGTH_M / 2, prf_hz[-1] * 1.2 * WAVELENGTH_M / 2)
+    swept = patterns.sweep(notch_clear_speeds(prf_hz * WAVELENGTH_M / 2, notch, limits), limits)
+    clear = np.bitwise_count(swept.pattern)[np.diff(swept.edges) > EXACT]
+    assert clear.min() == m
