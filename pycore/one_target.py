@@ -12,6 +12,10 @@ from pycore.eclipsing import METRES_PER_SECOND_OF_DELAY, clear_ranges, received_
 from pycore.stagger import notch_clear_speeds
 
 
+AT_REST_M_S = 1e-9
+"""A target no faster than this stands still. [m/s]"""
+
+
 @dataclass(frozen=True, slots=True)
 class EveryPri:
     """What each PRI makes of one target.
@@ -89,7 +93,7 @@ def every_pri(pri_s, range_m, speed_m_s, place, recovery_s, guard_s, received_mi
     slower, faster = _around(notch_clear_speeds(blind_m_s, place.notch_m_s * each, axis), pri_s.size, speed_m_s)
     range_clear, speed_clear = below >= 0.0, slower >= 0.0
     ahead = below if speed_m_s > 0 else above
-    until = np.full(pri_s.size, np.inf) if speed_m_s == 0 else ahead / abs(speed_m_s)
+    until = ahead / abs(speed_m_s) if abs(speed_m_s) > AT_REST_M_S else np.full(pri_s.size, np.inf)
     return EveryPri(
         pri_s,
         _received(pri_s, range_m, place.pulse_s, recovery_s, guard_s, near),
