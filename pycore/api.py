@@ -8,7 +8,8 @@ import math
 
 from pycore import edit, link
 from pycore.assessment import assessment
-from pycore.columns import picture
+from pycore.columns import followed, picture
+from pycore.columns.mark import marked
 from pycore.computed import Computed
 from pycore.differences import differing_inputs, judged_changes, verdicts_differ
 from pycore.errors import InputError
@@ -46,7 +47,7 @@ def assess(plan, margins=False):
     return assessment(Computed(read(plan)), margins)
 
 
-def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, deep=False):
+def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, deep=False, target=None):
     """Return all that a page shows of a plan, after the edits that were made to it.
 
     Parameters
@@ -65,17 +66,20 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         Units that the reader prefers, by ``range``, ``speed``, ``pri``. [unitless]
     deep : bool
         Whether findings that take long are worked out where nothing is judged by them. [unitless]
+    target : mapping or None
+        ``range_km`` and ``speed_mps`` of the target that is followed; all figures mark it. [km, m/s]
 
     Returns
     -------
     note : dict
-        The plan, its link, what was said and refused, verdict, findings, figures.
+        The plan, its link, what was said and refused, verdict, findings, figures, and what becomes of the target.
     """
     units = {**SHOWN_UNITS, **(units or {})}
     start = None if opened is None else link.read_link(opened)
     document, said, refused = _edited(plan if start is None else start.document, edits, units)
     computed = Computed(read(document), with_echoes=deep)
     found = judged(computed, units)
+    mark = marked(computed, target)
     return {
         'plan': computed.plan.document,
         'link': link.written(computed.plan.document),
@@ -84,7 +88,8 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         'refused': refused,
         'verdict': verdict(found),
         'findings': [_shown(finding) for finding in found],
-        'figures': {name: picture(name, computed, units, (size or {}).get(name)) for name in figures},
+        'figures': {name: picture(name, computed, units, (size or {}).get(name), mark) for name in figures},
+        'target': None if mark is None else followed.words(mark, units),
     }
 
 

@@ -1,9 +1,11 @@
-"""The target that is followed, as every figure marks it: a ring where it has two co-ordinates, a line where it has one."""
+"""The followed target as every figure marks it: a ring where both its co-ordinates show, a line where one does."""
 
+import math
 from functools import cached_property
 
 import numpy as np
 
+from pycore.errors import InputError
 from pycore.follow import follow
 
 
@@ -29,6 +31,36 @@ class Mark:
     def followed(self):
         """What each PRF and the set make of it."""
         return follow(self.computed, self.range_m, self.speed_m_s)
+
+
+def marked(computed, target):
+    """Return the target that a page follows.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [SI]
+    target : mapping or None
+        ``range_km``, not negative, and ``speed_mps``. [km, m/s]
+
+    Returns
+    -------
+    mark : Mark or None
+        None where no target is followed.
+
+    Raises
+    ------
+    InputError
+        Where one of the two is no such number.
+    """
+    if target is None:
+        return None
+    for key, lowest in (('range_km', 0.0), ('speed_mps', -math.inf)):
+        value = target.get(key)
+        if not isinstance(value, int | float) or not (math.isfinite(value) and value >= lowest):
+            rule = 'a number, not below 0' if lowest == 0.0 else 'a number'
+            raise InputError(f'target.{key}', f'target.{key} must be {rule}; got {value!r}.')
+    return Mark(computed, target['range_km'] * 1e3, target['speed_mps'])
 
 
 def ring(mark, x, y):

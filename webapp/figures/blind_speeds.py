@@ -22,7 +22,8 @@ def build(picture):
     Returns
     -------
     figure : bokeh figure
-        Sources ``lanes``, ``notches``, ``unseen``; ``response``, ``threshold``, ``below``, ``speeds``, ``names``; ``target``.
+        Sources ``lanes``, ``notches``, ``unseen``; ``response``, ``threshold``, ``below``, ``speeds``, ``names``;
+        ``target``.
     """
     made = plot(NAME, picture)
     lanes(made, NAME, picture, 'notches')
