@@ -37,6 +37,8 @@ def axis(pri, drawn):
 
 
 @given(receivers(), st.floats(0.0, 5.0))
+@example((1e-4, 1e-5, 0.0, 1e-5, 0.5, NearPulse(1e-6, 5e-5, 0.0)), 0.42)  # within the guard before a near pulse
+@example((1e-4, 4e-5, 0.0, 0.0, 0.5, None), 0.9)  # runs over into the next interval
 def test_the_received_share_is_what_is_left_of_an_echo_piece_by_piece(receiver, part):
     pri, pulse, recovery, guard, _, near = receiver
     range_m = part * HALF_C * pri
@@ -54,6 +56,7 @@ def test_the_received_share_is_what_is_left_of_an_echo_piece_by_piece(receiver, 
 
 @given(receivers(), axes)
 @example((1e-4, 1e-5, 0.0, 0.0, 1.0, NearPulse(1e-6, 2e-5, 3e3)), (0.0, 2.0))
+@example((1e-4, 5e-5, 6e-6, 0.0, 0.9, None), (0.0, 2.0))  # a window that is open, but too short for the needed part
 def test_a_range_is_clear_where_enough_of_the_echo_and_more_than_nothing_is_received(receiver, drawn):
     pri, pulse, recovery, guard, least, near = receiver
     limits = axis(pri, drawn)
@@ -112,6 +115,12 @@ def test_a_long_echo_that_straddles_the_near_pulse_counts_on_both_sides():
     # Shut from 40 to 50 us; an echo from 35 to 55 us has 5 us before and 5 us after, of 20.
     near = NearPulse(10e-6, 40e-6, 100.0)
     assert received_share(HALF_C * 35e-6, 100e-6, 20e-6, 0.0, 0.0, near) == pytest.approx(0.5, rel=1e-9)
+
+
+def test_a_near_echo_longer_than_the_pulse_is_heard_on_both_sides_of_it():
+    # Sent at 70 us for 20 us, back from 95 to 115 us: the long pulse of 1 us at 100 us cuts one part in twenty.
+    near = NearPulse(20e-6, 70e-6, 10e3)
+    assert received_share(HALF_C * 25e-6, 100e-6, 1e-6, 0.0, 0.0, near) == pytest.approx(0.95, rel=1e-9)
 
 
 def test_the_near_pulse_sees_what_the_long_one_hides():
