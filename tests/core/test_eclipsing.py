@@ -56,6 +56,7 @@ def test_the_received_share_is_what_is_left_of_an_echo_piece_by_piece(receiver, 
 
 @given(receivers(), axes)
 @example((1e-4, 1e-5, 0.0, 0.0, 1.0, NearPulse(1e-6, 2e-5, 3e3)), (0.0, 2.0))
+@example((4e-4, 2e-4, 0.0, 0.0, 0.0, NearPulse(1e-4, 2e-4, HALF_C * 4e-4 * 0.125)), (0.125, 1.0))
 @example((1e-4, 5e-5, 6e-6, 0.0, 0.9, None), (0.0, 2.0))  # a window that is open, but too short for the needed part
 def test_a_range_is_clear_where_enough_of_the_echo_and_more_than_nothing_is_received(receiver, drawn):
     pri, pulse, recovery, guard, least, near = receiver
@@ -64,7 +65,8 @@ def test_a_range_is_clear_where_enough_of_the_echo_and_more_than_nothing_is_rece
     range_m = np.linspace(*limits, 499)
     share = received_share(range_m, pri, pulse, recovery, guard, near)
     inside = ((range_m[:, None] >= spans.start) & (range_m[:, None] <= spans.stop)).any(axis=1)
-    edges = np.concatenate((spans.start, spans.stop, [-1.0]))
+    # Where the near pulse hands over, a single range belongs to it and nothing beside it does.
+    edges = np.concatenate((spans.start, spans.stop, [near.to_range_m if near else -1.0]))
     sure = (np.abs(share - least) > SURE) | (least == share) & (least in (0.0, 1.0))
     sure &= (np.abs(range_m[:, None] - edges) > ONE_MICROMETRE * HALF_C * pri).all(axis=1)
     assert np.array_equal(inside[sure], ((share >= least) & (share > 0))[sure])
