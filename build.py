@@ -36,15 +36,17 @@ def build(given=None, kind='build', snapshot=True):
     parts = bytecode.engine_parts(node, parts_of_others, snapshot)
     parts = {name: payload.encoded(path.read_bytes()) for name, path in parts.items()}
     worker = worker_module(parts_of_others, WEBAPP / 'engine' / 'worker.js')
-    parts = {'worker': payload.encoded(worker.encode()), **parts}
+    library = bokeh_script(python)
+    parts = {'bokeh': payload.encoded(library.encode()), 'worker': payload.encoded(worker.encode()), **parts}
 
-    # the page: its scripts in the order in which they run, and what it shows before the engine is there
+    # the page, with what it shows before the engine is there
     contents = page.Contents(
         template=(WEBAPP / 'page' / 'index.html').read_text(encoding='utf-8'),
         style=(WEBAPP / 'page' / 'style.css').read_text(encoding='utf-8'),
         opening=opening.opening_json(python),
         licences=licences.licences(python, parts_of_others),
-        scripts={'bokeh': bokeh_script(python), 'app': checked(node, join.joined(WEBAPP / 'app', 'main.js'))},
+        library=library,
+        app=checked(node, join.joined(WEBAPP / 'app', 'main.js')),
         parts=parts,
     )
 

@@ -108,10 +108,10 @@ class Note:
     def commit(self, key, text):
         """Type a number, press Enter, and wait until what follows is painted; return self."""
         before = self.shown()
-        self.number(key).click()
-        field = self.frame.locator(f'input[data-key="{key}"], [data-key="{key}"] input').first
-        field.fill(text)
-        field.press('Enter')
+        number = self.number(key)
+        number.click()
+        number.fill(text)
+        number.press('Enter')
         expect(self.root).to_have_attribute('data-shown', str(before + 1), timeout=STEP_MS)
         return self
 

@@ -62,7 +62,7 @@ def test_the_opening_findings_are_there_before_the_engine(note):
 
 
 def test_with_webassembly_switched_off_the_note_stays_and_says_why(launch, site, watched, note):
-    note.page = watched(launch('--js-flags=--noexpose-wasm'), (site.address, 'data:', 'blob:'))
+    note.page = watched(launch('--js-flags=--jitless'), (site.address, 'data:', 'blob:'))
     note.inside(note.page).open()
 
     expect(note.root).to_have_attribute('data-engine', 'failed')
@@ -94,4 +94,4 @@ def test_with_scripts_switched_off_a_sentence_says_so(chrome, site, watched, not
     note.page = watched(chrome, (site.address, 'data:'), java_script_enabled=False)
     note.inside(note.page).open()
 
-    expect(note.page.get_by_text('scripts are switched off')).to_be_visible()
+    expect(note.page.locator('noscript p')).to_be_visible()

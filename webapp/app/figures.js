@@ -1,5 +1,7 @@
 // The figures on the screen: embedded once, afterwards only their data, ends, labels and colours change. The only file that
-// knows BokehJS (a global, `Bokeh`). It knows neither plans nor the page: what it shows comes as a picture from the core.
+// knows how BokehJS is used. It knows neither plans nor the page: what it shows comes as a picture from the core.
+
+import { bokeh } from './bokeh.js';
 
 const SCHEMES = ['light', 'dark']; // the order of the colours in a model's tags
 
@@ -9,7 +11,7 @@ let scheme = 'light';
 
 // Embed a figure's document in an element; it is as large as the element from then on.
 export async function mount(name, element, item) {
-  const { Bokeh } = globalThis;
+  const Bokeh = await bokeh();
   element.style.visibility = 'hidden'; // not seen in the other scheme first
   const manager = await Bokeh.embed.embed_item(item, element);
   const [view] = manager.roots;

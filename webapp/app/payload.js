@@ -1,4 +1,4 @@
-// Where the engine's parts are: in data blocks of this page, or in classic scripts beside it that call PULSEWRIGHT.deliver.
+// Where the large parts of the page are: in data blocks of this page, or in classic scripts beside it that call PULSEWRIGHT.deliver.
 // Knows how a part is written (gzip, then base64) and nothing of what it is for.
 
 const waiting = new Map();
@@ -8,14 +8,23 @@ window.PULSEWRIGHT = Object.assign(window.PULSEWRIGHT ?? {}, {
 });
 
 export async function partOfPage(name) {
-  await parsed();
-  const text = document.getElementById(`part-${name}`)?.textContent ?? (await delivered(name));
+  if (!arrived(block(name))) await parsed();
+  const text = block(name)?.textContent ?? (await delivered(name));
   return inflated(name, bytesOf(name, text));
 }
 
 export async function hasPart(name) {
   await parsed();
-  return document.getElementById(`part-${name}`) !== null || name in places();
+  return block(name) !== null || name in places();
+}
+
+function block(name) {
+  return document.getElementById(`part-${name}`);
+}
+
+// While the page is being read, a block is whole once something stands behind it.
+function arrived(element) {
+  return document.readyState !== 'loading' || Boolean(element?.nextSibling);
 }
 
 function parsed() {

@@ -66,7 +66,7 @@ def opening():
     from webapp import figures
 
     plans = examples()
-    answer = api.note(plan=plans[EXAMPLE]['plan'], figures=list(FIGURES))
+    answer = api.note(plan=plans[EXAMPLE]['plan'], figures=list(FIGURES), deep=True)
     pictures = answer['figures']
     items = {name: figures.build(name, picture) for name, picture in pictures.items()}
     for picture in pictures.values():

@@ -30,17 +30,18 @@ class Contents:
     ----------
     template, style, opening, licences : str
         HTML, CSS, JSON and plain text. [unitless]
-    scripts : dict of str to str
-        Classic scripts by name, in the order in which they run. [unitless]
+    library, app : str
+        BokehJS, which the page unpacks and runs when it wants it, and the page's own script. [unitless]
     parts : dict of str to str
-        The engine's parts by name, encoded. [unitless]
+        The large parts by name, encoded, BokehJS among them. [unitless]
     """
 
     template: str
     style: str
     opening: str
     licences: str
-    scripts: dict
+    library: str
+    app: str
     parts: dict
 
 
@@ -57,16 +58,15 @@ def hosted(contents):
     files : dict of str to str
         index.html and its scripts, whose names change with what is in them.
     """
-    scripts = {hashed(name, text): text for name, text in contents.scripts.items()}
+    app = hashed('app', contents.app)
     parts = {name: payload.script(name, text) for name, text in contents.parts.items()}
     places = {name: hashed(name, text) for name, text in parts.items()}
-    body = data('parts', json_of(places))
-    body += ''.join(f'<script defer src="{name}"></script>\n' for name in scripts)
-    index = assembled(contents, "'self'", body)
+    body = data('parts', json_of(places)) + f'<script defer src="{app}"></script>\n'
+    index = assembled(contents, f"'self' {allowed(contents.library)}", body)
 
     return {
         'index.html': index,
-        **scripts,
+        app: contents.app,
         **{places[name]: text for name, text in parts.items()},
         'licences.txt': contents.licences,
     }
@@ -85,12 +85,12 @@ def single(contents):
     page : str
         HTML.
     """
-    inline = [f'\n{text}\n' for text in contents.scripts.values()]
-    body = ''.join(f'<script>{text}</script>\n' for text in inline)
-    body += ''.join(payload.block(name, text) for name, text in contents.parts.items())
+    app = f'\n{contents.app}\n'
+    blocks = {name: payload.block(name, text) for name, text in contents.parts.items()}
+    body = blocks.pop('bokeh') + f'<script>{app}</script>\n' + ''.join(blocks.values())
     body += f'<script type="text/plain" id="licences">\n{contents.licences}</script>\n'
 
-    return assembled(contents, ' '.join(map(allowed, inline)), body)
+    return assembled(contents, f'{allowed(app)} {allowed(contents.library)}', body)
 
 
 def assembled(contents, scripts, body):

@@ -16,13 +16,13 @@ UNCHECKED = 1  # the header's flag: found by hash, never checked against a sourc
 
 
 def bare(code):
-    """Return a code object in which each function is one line: a tenth smaller, and tracebacks still name the function."""
+    """Return a code object in which each function is one line: a tenth smaller, and tracebacks still name it."""
     parts = tuple(bare(part) if hasattr(part, 'co_code') else part for part in code.co_consts)
     return code.replace(co_consts=parts, co_linetable=one_line(len(code.co_code) // 2))
 
 
 def one_line(units):
-    """Return a table of line numbers that says: all of these code units belong to the function's first line.
+    """Return a table of line numbers that gives all of these code units to the function's first line.
 
     The format is CPython's own (Objects/locations.md): an entry of kind 13, a line without columns, covers up to 8 units
     and is followed by the step in lines.
