@@ -68,3 +68,30 @@ def test_enough_and_too_few_are_said_for_any_m_of_n(n, m, enough, too_few):
 )
 def test_the_key_names_only_the_tones_that_the_map_can_have(n, m, text):
     assert key_sentence(n, m) == text
+
+
+@pytest.mark.parametrize(
+    ('dwell_ms', 'fill', 'text'),
+    [
+        (20.0, 1, 'One set takes 18.4 ms of the 20.0 ms on target; 1.60 ms, 8.00 %, are unused.'),
+        (18.4, 1, 'One set fills the 18.4 ms on target.'),
+        (12.0, 1, 'One set takes 18.4 ms, 6.40 ms more than the 12.0 ms on target.'),
+        (36.8, 1, 'Two sets of 18.4 ms each fill the 36.8 ms on target.'),
+        (
+            60.0,
+            1,
+            'One set takes 18.4 ms; three of them fit into the 60.0 ms on target and leave 4.80 ms, 8.00 %, unused.',
+        ),
+        (None, 1, 'One set takes 18.4 ms; no time on target is given.'),
+        (None, 0, 'No fill pulses are sent.'),
+        (20.0, 1, 'Fill pulses, dark, take 1.84 ms, 10.0 % of it; pale, the pulses that count.'),
+    ],
+)
+def test_the_dwell_says_what_a_set_takes_and_what_is_left(dwell_ms, fill, text):
+    # (9 + 1) · (980 + 860) µs = 18.4 ms, of which the fill pulses are 1.84 ms.
+    plan = {
+        'radar': {'dwell_ms': dwell_ms, 'scan_rpm': None},
+        'waveform': {'pri_us': [980, 860], 'pulses': 9, 'fill_pulses': fill},
+    }
+    caption = columns.picture('dwell', Computed(read(plan)), SHOWN_UNITS)['caption'].replace(THIN_SPACE, ' ')
+    assert text in caption

@@ -38,9 +38,9 @@ BROKEN = re.compile(rf'nan|\binf\b|None|  | ,|\.\.|[{{}}]|-|(?<![\d.])0\.0+[ {TH
 """What no sentence may hold: what was left out, set wrongly, a hyphen for a minus, nothing for something."""
 
 
-def pictures(document, units=SHOWN_UNITS, size=SIZE):
+def pictures(document, units=SHOWN_UNITS, size=SIZE, only=columns.FIGURES):
     computed = Computed(read(document))
-    return {name: columns.picture(name, computed, units, size) for name in columns.FIGURES}
+    return {name: columns.picture(name, computed, units, size) for name in only}
 
 
 def texts(value):
@@ -325,3 +325,27 @@ def test_zones_of_an_axis_join_neighbouring_segments():
 
     swept = sweep(Spans(np.array([0, 1]), np.array([2.0, 4.0]), np.array([4.0, 6.0])), (0.0, 10.0))
     assert runs(swept, swept.pattern != 0).tolist() == [[2.0, 6.0]]
+
+
+def test_the_cpis_of_a_dwell_follow_each_other_without_a_gap():
+    document = {**OPENING, 'waveform': {'pri_us': [980.0, 860.0], 'pulses': 9, 'fill_pulses': 1, 'detect_m': 1}}
+    lane = pictures(document, only=['dwell'])['dwell']['columns']
+    # 980 µs, then nine of them; 860 µs, then nine.
+    np.testing.assert_allclose(lane['fill']['left'], [0.0, 9.8])
+    np.testing.assert_allclose(lane['fill']['right'], lane['counted']['left'])
+    np.testing.assert_allclose(lane['counted']['right'], [9.8, 18.4])
+
+
+def test_pulses_are_drawn_one_by_one_only_where_they_do_not_run_together():
+    few, many = (
+        pictures(OPENING, size={'width': width}, only=['dwell'])['dwell']['columns']['pulses']['x']
+        for width in (600, 40)
+    )
+    np.testing.assert_allclose(few[[0, 1, 9, 10]], [0.0, 0.98, 8.82, 9.68])
+    assert (few.size, many.size) == (18, 0)
+
+
+def test_what_lies_beyond_the_time_on_target_is_marked():
+    short = {**OPENING, 'radar': {**OPENING['radar'], 'dwell_ms': 12.0}}
+    over = pictures(short, only=['dwell'])['dwell']['columns']['over']
+    np.testing.assert_allclose([over['left'][0], over['right'][0]], [12.0, 16.56])

@@ -2,9 +2,9 @@
 
 from bokeh.embed import json_item
 
-from webapp.figures import blind_speeds, blind_zones, eclipsed_ranges, trade_line
+from webapp.figures import blind_speeds, blind_zones, dwell, eclipsed_ranges, trade_line
 
-_MODULES = {module.NAME: module for module in (blind_zones, trade_line, eclipsed_ranges, blind_speeds)}
+_MODULES = {module.NAME: module for module in (blind_zones, trade_line, eclipsed_ranges, blind_speeds, dwell)}
 
 
 def drawn(name, picture):
