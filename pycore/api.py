@@ -21,6 +21,7 @@ from pycore.plan import read
 from pycore.timing import columns, timing_table
 from pycore.variation import steps, varied
 from pycore.wording import SHOWN_UNITS
+from pycore.workings import workings
 
 
 def assess(plan, margins=False):
@@ -279,6 +280,24 @@ def margins_of(plan, finding):
     return margins_shown(read(plan), finding)
 
 
+def workings_of(plan, finding):
+    """Return how one finding of a plan comes about.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+    finding : str
+        Name of the finding. [unitless]
+
+    Returns
+    -------
+    workings : dict
+        ``finding``, ``lines`` (each ``formula``, ``numbers``, ``result``, ``source``), ``value``, ``notes``.
+    """
+    return workings(Computed(read(plan)), finding)
+
+
 ACTIONS = {
     'assess': assess,
     'note': note,
@@ -287,5 +306,6 @@ ACTIONS = {
     'follow': follow_target,
     'timing': timing,
     'margins': margins_of,
+    'workings': workings_of,
 }
 """What the worker in the browser may be asked for, by name."""
