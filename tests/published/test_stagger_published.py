@@ -75,8 +75,8 @@ def test_ratios_that_are_widely_printed(counts, ratio):
 )
 def test_deepest_dips(counts, delays, depth_db, at):
     # Computed: power averaged over the phases, normalised to the mean gain; place in units of the mean PRF.
-    until = 3.0 if counts == (4000, 3000) else 14.0
-    stagger, mean = found(counts, 25e3, delays, (0.3, until))
+    # The speeds reach beyond the true first blind speed of 3:4, 3.5 times the mean PRF's, which is no dip.
+    stagger, mean = found(counts, 25e3, delays, (0.3, 14.0))
     assert stagger.deepest_db == pytest.approx(depth_db, abs=LAST_DIGIT_DB)
     if at is not None:
         assert stagger.deepest_at_m_s / mean == pytest.approx(at, abs=0.0005)
