@@ -3,11 +3,13 @@
 
 const LATE_MS = 150; // the running line appears
 const LONG_MS = 1000; // and the word "computing"
+const PAUSE_MS = 400; // after the last edit of a run: what takes long is worked out then
 
-export function createAsking({ engine, state, figures, units, onLate, onAnswer, onFault }) {
+export function createAsking({ engine, state, figures, sizes, units, onLate, onAnswer, onFault }) {
   let opened = null; // a link's text, until the engine has read it
   let waits = 0;
   let timers = [];
+  let pause = 0;
 
   const late = (how) => onLate(how);
   const rest = () => {
@@ -15,23 +17,26 @@ export function createAsking({ engine, state, figures, units, onLate, onAnswer, 
     late('');
   };
 
-  function ask() {
+  function ask(deep = false) {
+    clearTimeout(pause);
     const request = { ...state.request(), opened };
-    const args = { edits: request.edits.map(plain), figures: figures(), units: units() };
+    const args = { edits: request.edits.map(plain), figures: figures(), size: sizes(), units: units(), deep };
     if (waits === 0) timers = [setTimeout(late, LATE_MS, 'late'), setTimeout(late, LONG_MS, 'long')];
     waits += 1;
     engine.newest('note', opened === null ? { ...args, plan: request.plan } : { ...args, opened })
-      .then((answer) => { if (answer) take(request, answer); }, (error) => onFault(error, request))
+      .then((answer) => { if (answer) take(request, answer, deep); }, (error) => onFault(error, request))
       .finally(() => {
         waits -= 1;
         if (waits === 0) rest();
       });
   }
 
-  function take(request, answer) {
+  function take(request, answer, deep) {
     if (!state.settle(request, answer)) return;
     if (request.opened === opened) opened = null;
     onAnswer(answer, request);
+    clearTimeout(pause);
+    if (!deep) pause = setTimeout(ask, PAUSE_MS, true);
   }
 
   return {

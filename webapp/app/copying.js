@@ -21,3 +21,15 @@ function copyBySelection(text) {
   focused?.focus?.({ preventScroll: true });
   return copied;
 }
+
+// What is copied of the plan reads as one paragraph: cells of the rail in a row, words that act left out.
+export function copyAsSentence(node) {
+  node.addEventListener('copy', (event) => {
+    const selection = getSelection();
+    if (!node.contains(selection.anchorNode) || !node.contains(selection.focusNode) || !selection.rangeCount) return;
+    const copied = selection.getRangeAt(0).cloneContents();
+    for (const quiet of copied.querySelectorAll('.quiet')) quiet.remove();
+    event.clipboardData.setData('text/plain', copied.textContent.replace(/ +/g, ' ').trim());
+    event.preventDefault();
+  });
+}

@@ -65,7 +65,7 @@ function fill(entry, finding) {
   node.dataset.value = written(finding.value);
   parts.mark.dataset.sign = sign;
   setText(parts.mark, word);
-  setText(parts.label, finding.label ?? finding.text);
+  setText(parts.label, `${finding.label.slice(0, 1).toUpperCase()}${finding.label.slice(1)}`);
   setText(parts.detail, finding.detail ? `; ${finding.detail}` : '');
   setText(parts.value, finding.value_text ?? '');
   setText(parts.wanted, finding.wanted_text ? `wanted ${finding.wanted_text}` : '');

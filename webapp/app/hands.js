@@ -32,11 +32,11 @@ export function createHands({ state, keys, quantities, status, families, redraw,
     else redraw();
   }
 
-  // An action on the list of PRIs; `then` is the number that has the focus when it is done.
-  function act(action, given = {}, then = action === 'add-pri' ? `${LIST}.${state.now.plan.waveform.pri_us.length}` : null) {
+  // An action on the list of PRIs; `place` is the one that has the focus when it is done, a new one is the last.
+  function act(action, given = {}, place = action === 'add-pri' ? -1 : null) {
     run.path = '';
     state.commit({ do: action, ...given, name: NAMES[action] ?? 'The last step' });
-    if (then) onAnswered(() => focus(then, action === 'add-pri'));
+    if (place !== null) onAnswered(state.now.count, () => focus(`${LIST}.${place < 0 ? state.now.plan.waveform.pri_us.length - 1 : place}`, place < 0));
   }
 
   // What the strip shows of a number.
@@ -68,7 +68,7 @@ export function createHands({ state, keys, quantities, status, families, redraw,
       const [index, count] = [placeOf(path), state.now.plan.waveform.pri_us.length];
       const to = index + by;
       if (index === null || to < 0 || to >= count) return;
-      act('move-pri', { index, to }, `${LIST}.${to}`);
+      act('move-pri', { index, to }, to);
     },
     act,
     redraw,

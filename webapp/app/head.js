@@ -10,7 +10,7 @@ import { setText } from './number.js';
 const LONG_FOR_CHAT = 1900; // characters of a link; some chats cut what is longer
 const at = (id) => document.getElementById(id);
 
-export function createHead({ opening, state, status, address, hands, page, keys, quantities, openExample }) {
+export function createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening, openExample }) {
   let origin = opening.answer.plan;
   let link = address.opened || opening.answer.link;
   let pasted = false;
@@ -31,7 +31,7 @@ export function createHead({ opening, state, status, address, hands, page, keys,
     return [
       engineWord(pending.length),
       decided(plan.decided),
-      changed ? `${changed} ${changed === 1 ? 'input differs' : 'inputs differ'} from what was opened` : 'as it was opened',
+      isOpening() ? '' : changed ? `${changed} ${changed === 1 ? 'input differs' : 'inputs differ'} from what was opened` : 'as it was opened',
       'everything underlined can be typed, stepped or dragged',
     ].filter(Boolean).join(' · ');
   }

@@ -10,15 +10,20 @@ export function createLooks({ state, keys, quantities, engineState }) {
     return edit.text ?? quantities.shown(key, edit.value);
   }
 
+  // In a table the first end of an interval leaves the unit to the second.
+  function alone(path, key, value) {
+    return key?.kind === 'interval' && path.endsWith('.0') ? quantities.digitsOf(key, value) : quantities.shown(key, value);
+  }
+
   // What the sentence shows for a path: `said` is its own way of showing (a list shares one unit).
   function look(path, said) {
     const key = keys.of(path);
     const value = valueAt(state.now.plan, path);
     const refusal = state.now.refused.find((edit) => edit.key === path);
-    const pair = state.now.refused.some((edit) => path.startsWith(`${edit.field}.`) && edit.key !== edit.field);
+    const pair = state.now.refused.some((edit) => isPair(path, edit.field) && isPair(edit.key, edit.field));
     const pending = pendingShown(path, key);
     return {
-      shown: pending ?? said ?? quantities.shown(key, value),
+      shown: pending ?? said ?? alone(path, key, value),
       value,
       label: key?.label ?? path,
       lowest: key?.lowest,
@@ -32,11 +37,17 @@ export function createLooks({ state, keys, quantities, engineState }) {
 
   // One line for each refused number: the core's sentence, and what everything below still shows.
   function refusals() {
-    return state.now.refused.map(({ key: path, message }) => {
+    return state.now.refused.map(({ key: path, field, message: rule }) => {
       const key = keys.of(path);
+      const message = isPair(path, field) ? `${rule} Type the other end.` : rule;
       return { key: path, label: key?.label ?? path, message, still: quantities.shown(key, valueAt(state.now.plan, path)) };
     });
   }
 
   return { look, refusals };
+}
+
+// The core names the interval, not one of its ends, where the two do not agree.
+function isPair(path, field) {
+  return path.startsWith(`${field}.`);
 }

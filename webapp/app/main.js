@@ -5,6 +5,7 @@ import { createAddress } from './address.js';
 import { createAsking } from './asking.js';
 import { listenToDragging } from './dragging.js';
 import { startEngine } from './engine.js';
+import { sizes } from './figures.js';
 import { createHands } from './hands.js';
 import { createHead } from './head.js';
 import { createKeys } from './keys.js';
@@ -27,29 +28,31 @@ const quantities = createQuantities(opening.grammar, { range: 'km', speed: 'm/s'
 const status = createStatus(document.getElementById('status'));
 const state = createState(opening.answer.plan);
 const address = createAddress(openLink);
-const hands = createHands({ state, keys, quantities, status, families: opening.units.families, redraw: () => page.redraw(), onAnswered: (act) => waiting.push(act), focus: (path, typing) => page.focus(path, typing) });
+const hands = createHands({ state, keys, quantities, status, families: opening.units.families, redraw: () => page.redraw(), onAnswered: (count, act) => waiting.push({ count, act }), focus: (path, typing) => page.focus(path, typing) });
 const page = createPage({ opening, keys, quantities, state, hands, ask: () => asking.ask() });
 const travel = createTravel({ state, status, page, buttons: { undo: document.getElementById('undo'), redo: document.getElementById('redo') } });
-const head = createHead({ opening, state, status, address, hands, page, keys, quantities, openExample });
+const head = createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening: () => asking.isOpening(), openExample });
 let findings = opening.answer.findings;
-const waiting = []; // what is to be done when the next answer stands on the page
+let waiting = []; // what is to be done when the answer to an edit stands on the page
 
 // The engine's parts are unpacked on this thread: first the note is painted.
 let painted = null;
 const first = new Promise((resolve) => { painted = resolve; });
 const engine = startEngine({ payload: (name) => first.then(() => partOfPage(name)), onFail: failed });
-const asking = createAsking({ engine, state, figures: page.pictures.visible, units: () => quantities.units, onLate: head.late, onAnswer: answered, onFault: fault });
+const asking = createAsking({ engine, state, figures: page.pictures.visible, sizes, units: () => quantities.units, onLate: head.late, onAnswer: answered, onFault: fault });
 
 function answered(answer, request) {
   status.sayWhenQuiet(flipped(request.opened ? [] : findings, answer.findings));
   findings = answer.findings;
   const told = answer.refused.filter(({ edit }) => edit.text === undefined || edit.do).map(({ message }) => message);
   if (answer.said.length + told.length) status.say([...told, ...answer.said].join(' '));
-  waiting.splice(0).forEach((act) => act());
+  for (const { act } of waiting.filter(({ count }) => count <= request.count)) act();
+  waiting = waiting.filter(({ count }) => count > request.count);
   if (request.opened !== null) head.opened(answer);
   head.answered(answer);
   address.show(answer.link);
-  page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(request.count, Number(root.dataset.shown)); });
+  const shown = state.committed(request.count);
+  page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(shown, Number(root.dataset.shown)); });
 }
 
 function fault(error) {

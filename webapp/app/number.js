@@ -75,6 +75,7 @@ export function closeField(number) {
   number.removeAttribute('contenteditable');
   number.classList.remove('open');
   number.style.minWidth = '';
+  delete number.dataset.committed;
   touch(number, false);
 }
 

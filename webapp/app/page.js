@@ -1,5 +1,6 @@
 // All parts of the page and how they are repainted: from the state after every edit, from an answer when one has come.
 
+import { copyAsSentence } from './copying.js';
 import { createFindings } from './findings.js';
 import { createKeysTable } from './keys-table.js';
 import { createLooks } from './looks.js';
@@ -8,6 +9,7 @@ import { createParagraph } from './paragraph.js';
 import { createPictures } from './pictures.js';
 import { createRefused } from './refused.js';
 import { createSentence } from './sentence.js';
+import { shownByKey, spoken } from './spoken.js';
 import { stickWhenPassed } from './sticky.js';
 import { createTitle } from './title.js';
 import { createVerdict } from './verdict.js';
@@ -24,16 +26,29 @@ export function createPage({ opening, keys, quantities, state, hands, ask }) {
   const findings = createFindings(at('findings'), (name, text) => hands.act('remark', { finding: name, text }));
   const refused = createRefused(at('refused'), hands.putBack);
   const title = createTitle(at('title'), { longest: keys.of('title').longest, commit: (text) => hands.commit({ key: 'title', text }) });
-  const pictures = createPictures({ chief: at('chief'), rest: at('figures'), items: opening.items, onSeen: () => seen() });
+  const pictures = createPictures({ chief: at('chief'), rest: at('figures'), items: opening.items, titles: Object.fromEntries(Object.entries(opening.answer.figures).map(([name, { title }]) => [name, title])), onSeen: () => seen() });
   const table = createKeysTable({ box: at('quantities'), place: at('quantities-tables'), keys, numberFor, commit: hands.commit });
+  const redraws = { running: false, wanted: false };
   let painted = 0;
   let painting = Promise.resolve();
 
+  // Moving a number that has the focus makes it leave, which asks for another redraw in the middle of this one.
   function redraw() {
-    const said = withActions(sentence(state.now.plan)).map((clause) => (table.isOpen() && clause.id === 'also' ? asText(clause) : clause));
+    redraws.wanted = true;
+    if (redraws.running) return;
+    redraws.running = true;
+    while (redraws.wanted) {
+      redraws.wanted = false;
+      draw();
+    }
+    redraws.running = false;
+  }
+
+  function draw() {
+    const said = spoken(sentence(state.now.plan), table.isOpen());
     paragraph.update(said);
-    const pieces = said.flatMap((clause) => clause.pieces).flatMap((piece) => piece.rail?.flat() ?? [piece]);
-    const shown = new Map(pieces.filter(({ key }) => key).map(({ key, shown: text }) => [key, text]));
+    pictures.arrange(opening.order[state.now.plan.waveform.kind]);
+    const shown = shownByKey(said);
     table.update(state.now.plan, shown);
     for (const number of document.querySelectorAll('.number')) setNumber(number, looks.look(number.dataset.key, shown.get(number.dataset.key)));
     const refusals = looks.refusals();
@@ -59,6 +74,7 @@ export function createPage({ opening, keys, quantities, state, hands, ask }) {
   }
 
   table.onToggle(redraw);
+  copyAsSentence(at('plan'));
   stickWhenPassed({ place: at('plan-place'), plan: at('plan'), verdict: at('verdict'), verdictPlace: at('verdict-place') });
 
   return {
@@ -80,8 +96,7 @@ export function createPage({ opening, keys, quantities, state, hands, ask }) {
       painted = count;
       verdict.update(answer.verdict);
       findings.update(answer.findings);
-      pictures.arrange(opening.order[answer.plan.waveform.kind]);
-      painting = painting.then(() => pictures.show(answer.figures, count));
+      painting = painting.then(() => pictures.show(answer.figures, count)).then(() => pictures.mark(painted));
       return painting.then(nextFrame);
     },
     clear() {
@@ -90,19 +105,6 @@ export function createPage({ opening, keys, quantities, state, hands, ask }) {
       pictures.clear();
     },
   };
-}
-
-// A rail has its own actions; shorter plans get the way to one more PRI at their end.
-function withActions(clauses) {
-  const rail = clauses.some(({ pieces }) => pieces.some((piece) => piece.rail));
-  const add = { id: 'add', short: false, pieces: [{ do: 'add-pri', text: 'Add a PRI' }] };
-  const also = clauses.findIndex(({ id }) => id === 'also');
-  return rail ? clauses : clauses.toSpliced(also < 0 ? clauses.length : also, 0, add);
-}
-
-// A number that is off its default stands in the open table; the line above then names it without being a second one.
-function asText({ pieces, ...clause }) {
-  return { ...clause, pieces: pieces.map(({ shown, text }) => ({ text: shown ?? text })) };
 }
 
 function nextFrame() {

@@ -19,6 +19,7 @@ export function createParagraph({ node, numberFor, act }) {
   function buttonFor({ do: action, text, label }) {
     if (!buttons.has(action)) buttons.set(action, quietButton(text, label, () => act(action)));
     setText(buttons.get(action), text);
+    buttons.get(action).setAttribute('aria-label', label ?? text);
     return buttons.get(action);
   }
 
@@ -33,20 +34,20 @@ export function createParagraph({ node, numberFor, act }) {
     const cell = partFor(`cell ${i}`, 'rail-cell');
     const end = partFor(`end ${i}`, 'rail-end');
     setText(end, i === all.length - 1 ? '.' : '; ');
-    lay(cell, [...lines.map((line, row) => (line.key ? lineFor(`line ${i} ${row}`, numberFor(line.key)) : noteFor(`note ${i}`, line.text))), end]);
+    lay(cell, [...lines.flatMap((line, row) => [commaFor(i, row), lineFor(line, i, row)]).slice(1), end]);
     return cell;
   }
 
-  function lineFor(id, number) {
-    const line = partFor(id, 'rail-line');
-    lay(line, [number]);
+  function lineFor({ key, text }, i, row) {
+    const line = partFor(`line ${i} ${row}`, key ? 'rail-line' : 'rail-other');
+    lay(line, [key ? numberFor(key) : text]);
     return line;
   }
 
-  function noteFor(id, text) {
-    const note = partFor(id, 'rail-other');
-    setText(note, text);
-    return note;
+  function commaFor(i, row) {
+    const comma = partFor(`comma ${i} ${row}`, 'rail-end');
+    setText(comma, ', ');
+    return comma;
   }
 
   function partFor(id, className) {

@@ -1,13 +1,13 @@
 // The figures' frames: number, caption, text summary, and which of them are on the screen. What is drawn is figures.js's.
 // A figure that is not on the screen is neither embedded nor computed; `onSeen()` tells that one has come into view.
 
-import { mount, update } from './figures.js';
+import { mount, onHover, update } from './figures.js';
 import { createFigureTable } from './figure-table.js';
 import { setText } from './number.js';
 
 const NEAR = '240px'; // a figure this close to the screen counts as on it
 
-export function createPictures({ chief, rest, items, onSeen }) {
+export function createPictures({ chief, rest, items, titles, onSeen }) {
   const frames = new Map();
   const inView = new IntersectionObserver((entries) => {
     for (const { target, isIntersecting } of entries) frames.get(target.dataset.figure).seen = isIntersecting;
@@ -23,6 +23,8 @@ export function createPictures({ chief, rest, items, onSeen }) {
     return frames.get(name);
   };
 
+  onHover((name, x, y) => setText(frames.get(name).reading, place(frames.get(name).units, { x, y })));
+
   return {
     // Figures stand in the core's order; the first is the chief one and stands beside the plan.
     arrange(names) {
@@ -30,10 +32,11 @@ export function createPictures({ chief, rest, items, onSeen }) {
         const { node, label } = frameFor(name);
         const place = i === 0 ? chief : rest;
         if (node.parentNode !== place || place.children[i === 0 ? 0 : i - 1] !== node) place.insertBefore(node, place.children[i === 0 ? 0 : i - 1] ?? null);
-        label.dataset.number = i + 1;
+        setText(label, `Fig. ${i + 1} ${titles[name]}.`);
       });
     },
     visible: () => [...frames].filter(([, frame]) => frame.seen).map(([name]) => name),
+    mark: (count) => { for (const { node, count: drawn } of frames.values()) node.classList.toggle('outdated', drawn !== count); },
     outdated: (count) => [...frames].some(([, frame]) => frame.seen && frame.count !== count),
     async show(pictures, count) {
       for (const [name, picture] of Object.entries(pictures)) await draw(frameFor(name), name, picture, items[name], count);
@@ -51,6 +54,7 @@ export function createPictures({ chief, rest, items, onSeen }) {
 
 async function draw(frame, name, picture, item, count) {
   caption(frame, picture);
+  frame.units = picture.units ?? {};
   frame.count = count;
   frame.mounted ??= mount(name, frame.plot, item);
   await frame.mounted;
@@ -58,8 +62,13 @@ async function draw(frame, name, picture, item, count) {
   frame.node.classList.remove('pending');
 }
 
-function caption(frame, { title, caption: text, summary, table }) {
-  setText(frame.label, `Fig. ${frame.label.dataset.number} ${title}.`);
+// Where a pointer is in a plot, in the axes' own units.
+function place(units, at) {
+  const axes = ['x', 'y'].filter((side) => units[side] && at[side] !== null);
+  return axes.map((side) => `${Number(at[side].toPrecision(4))}\u202f${units[side]}`.replace('-', '\u2212')).join(', ');
+}
+
+function caption(frame, { caption: text, summary, table }) {
   setText(frame.caption, text);
   setText(frame.summary, summary ?? '');
   frame.table.update(table);

@@ -5,7 +5,7 @@ const DEPTH = 200; // undo steps
 
 export function createState(plan) {
   const watchers = [];
-  const state = { plan, pending: [], refused: [], past: [], future: [], epoch: 0, count: 0 };
+  const state = { plan, pending: [], refused: [], past: [], future: [], epoch: 0, count: 0, lost: new Set() };
   const changed = (cause) => watchers.forEach((watch) => watch(cause));
   return {
     now: state,
@@ -18,6 +18,8 @@ export function createState(plan) {
     begin: (first) => { state.plan = first; changed('begin'); },
     open: (next, name) => { open(state, next, name); changed('open'); },
     settle: (request, answer) => settle(state, request, answer, changed),
+    // How many edits up to this one were committed: what was refused was not.
+    committed: (count) => count - [...state.lost].filter((lost) => lost <= count).length,
     request: () => ({ plan: state.plan, edits: [...state.pending, ...state.refused], epoch: state.epoch, count: state.count }),
   };
 }
@@ -70,7 +72,7 @@ function settle(state, request, answer, changed) {
   state.pending = state.pending.filter(came);
   // A refused step is told and forgotten; a refused text stays where it was typed.
   state.refused = refusals.filter((edit) => edit.text !== undefined && edit.key && !replaced.has(edit.key));
-  forgetRefused(state, refusals);
+  forgetRefused(state, request, refusals);
   changed('answer');
   return true;
 }
@@ -80,7 +82,9 @@ function sentFor({ edits }, { key, text, value }) {
 }
 
 // What was refused has changed nothing, so there is nothing to undo.
-function forgetRefused(state, refusals) {
+function forgetRefused(state, request, refusals) {
   const counts = new Set(refusals.map((edit) => edit.count));
+  for (const { count } of request.edits) state.lost.delete(count);
+  for (const count of counts) state.lost.add(count);
   state.past = state.past.filter((step) => !counts.has(step.at));
 }

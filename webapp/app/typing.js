@@ -12,6 +12,8 @@ export function listenToTyping(root, plan) {
   });
   on('keydown', (number, event) => key(number, event, plan));
   on('input', (number) => touch(number, true));
+  // A new number is typed over the one that Enter has just committed: the first press leaves it selected.
+  on('mousedown', (number, event) => { if (isOpen(number) && wasCommitted(number)) event.preventDefault(); });
   on('focusout', (number) => leave(number, plan));
   on('click', (number, event) => {
     if (isOpen(number) || plan.wasDragged()) return;
@@ -34,6 +36,7 @@ const openKeys = {
   Enter: (number, event, plan) => {
     commitField(number, plan);
     selectAll(number);
+    number.dataset.committed = '';
   },
   Escape: (number, event, plan) => {
     closeField(number);
@@ -78,6 +81,12 @@ function commitField(number, plan) {
 // Delete on an empty cell of the rail removes it.
 function removeEmpty(number, event, plan) {
   return fieldText(number) === '' && plan.remove(number.dataset.key);
+}
+
+function wasCommitted(number) {
+  const committed = 'committed' in number.dataset && !isTouched(number);
+  delete number.dataset.committed;
+  return committed;
 }
 
 function leave(number, plan) {
