@@ -1,32 +1,21 @@
 """How far each input can move, alone, before the verdict of a finding flips.
 
-Each input is stepped outward from its value: first by small parts of a step,
-then by whole ones, each 1/64 of the key's legal range. Keys that cannot be
-negative are stepped by factors (over six decades where they begin at 0), signed
-ones evenly, counts and PRIs by single ones at first. The first change of the
-verdict is bisected. A walk ends where the plan is refused, or where the key's
-limits are. A flip that is narrower than the step can be missed.
+Each input is stepped outward from its value (:mod:`pycore.margin_steps`), and the
+first change of the verdict is bisected. A walk ends where the plan is refused, or
+where the key's limits are. A flip that is narrower than the step can be missed.
 """
 
-import math
 from dataclasses import dataclass
-from itertools import count, takewhile
 
 from pycore.computed import Computed
 from pycore.errors import InputError
 from pycore.findings import named
 from pycore.margin_inputs import inputs_of
+from pycore.margin_steps import STEPS, as_typed_value, outward
 from pycore.plan import read
 from pycore.plan_document import shown
 from pycore.wording import SHOWN_UNITS
 
-STEPS = 64
-"""A step is so many parts of a key's legal range. [unitless]"""
-_DECADES = 6
-"""A key that begins at 0 is stepped by factors over so many decades below its highest value. [unitless]"""
-_FIRST_PARTS = (1 / 64, 1 / 32, 1 / 16, 1 / 8, 1 / 4, 1 / 2)
-_SINGLE = 64
-"""So many single counts are tried before the steps grow. [unitless]"""
 _AS_CLOSE_AS = 1e-9
 """The bisection ends when it knows the flip to this part of the input. [unitless]"""
 NOTE = (
@@ -284,78 +273,8 @@ def _between(entry, alike, flipped):
     """Return a value between two, ``None`` where they are as close as is asked."""
     if entry.quantum is not None:
         low, high = (round(end / entry.quantum) for end in (alike, flipped))
-        return None if abs(high - low) <= 1 else _number((low + high) // 2 * entry.quantum, entry)
+        return None if abs(high - low) <= 1 else as_typed_value((low + high) // 2 * entry.quantum, entry)
     if abs(alike - flipped) <= _AS_CLOSE_AS * max(abs(alike), abs(flipped), abs(entry.value)):
         return None
-    middle = _number((alike + flipped) / 2, entry)
+    middle = as_typed_value((alike + flipped) / 2, entry)
     return None if middle in (alike, flipped) else middle
-
-
-def _number(value, entry):
-    """Return a value as it would be typed: a whole count, or twelve digits."""
-    return round(value) if entry.is_count else float(f'{value:.12g}')
-
-
-def outward(entry, way):
-    """Yield the values that an input is stepped through on one side, up to its legal limit.
-
-    Parameters
-    ----------
-    entry : Input
-        The input. [unitless]
-    way : int
-        -1 for down, 1 for up. [unitless]
-
-    Yields
-    ------
-    value : int or float
-        Moving away from the input's own value, each once; the limit last. [unit of the key]
-    """
-    limit = entry.lowest if way < 0 else entry.highest
-    if entry.quantum is not None:
-        walk = _counted(entry, way)
-    elif entry.lowest < 0:
-        walk = _evenly(entry, way)
-    else:
-        walk = _by_factors(entry, way)
-    last = entry.value
-    for value in takewhile(lambda one: (one - limit) * way < 0, walk):
-        if value != last:
-            yield (last := value)
-    if last != limit:
-        yield limit
-
-
-def _parts():
-    """Yield how many steps out each value lies: parts of the first one, then whole ones."""
-    yield from _FIRST_PARTS
-    yield from count(1)
-
-
-def _evenly(entry, way):
-    step = (entry.highest - entry.lowest) / STEPS
-    return (_number(entry.value + way * part * step, entry) for part in _parts())
-
-
-def _by_factors(entry, way):
-    lowest = entry.lowest or entry.highest * 10.0**-_DECADES
-    if way < 0 and entry.value <= lowest:
-        return iter(())
-    start = max(entry.value, lowest)
-    factor = math.log(entry.highest / lowest) / STEPS
-    ends = (start * math.exp(min(way * part * factor, 700.0)) for part in _parts())
-    # Below the last decade of a key that begins at 0 there is only 0.
-    return (_number(value, entry) for value in takewhile(lambda one: way > 0 or one >= lowest, ends))
-
-
-def _counted(entry, way):
-    """Step by single counts, then by factors of the legal range, never less than one count."""
-    here = round(entry.value / entry.quantum)
-    lowest = max(entry.lowest, entry.quantum)
-    growth = math.exp(math.log(entry.highest / lowest) / STEPS)
-    for single in range(1, _SINGLE + 1):
-        yield _number((here + way * single) * entry.quantum, entry)
-    at = here + way * _SINGLE
-    while 0 < at < 1e15:
-        at = max(at + 1, math.floor(at * growth)) if way > 0 else min(at - 1, math.ceil(at / growth))
-        yield _number(at * entry.quantum, entry)

@@ -60,8 +60,7 @@ def _edge(start, blind, notch, speed_m_s):
         if k > 0 and abs(value - start) <= _ON_THE_EDGE * max(abs(start), period):
             numbers = put_in(f'k = {k}', f'v_b = {shown(period, "m/s")}', f'notch {shown(half, "m/s")}')
             return Line(f'it begins at k v_b − notch of PRF {place + 1}', numbers, shown(value, 'm/s')), value
-    ends = [abs(end) for end in speed_m_s if abs(abs(end) - start) <= _ON_THE_EDGE * max(start, 1.0)]
-    value = ends[0] if ends else start
+    value = min((0.0, *(abs(end) for end in speed_m_s)), key=lambda end: abs(end - start))
     return Line('it begins where the wanted speeds do', shown(value, 'm/s'), shown(value, 'm/s')), value
 
 
