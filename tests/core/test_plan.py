@@ -301,3 +301,10 @@ def test_what_came_is_shown_short(value, text):
 def test_a_plan_for_weather_has_weather_to_be_judged_by():
     assert filled({'waveform': {'pri_us': [1000]}, 'purpose': 'weather'})['weather']['width_mps'] == 2
     assert filled({'waveform': {'pri_us': [1000]}})['weather'] is None
+
+
+def test_a_list_for_the_only_interval_is_its_one_number():
+    plan = filled({'waveform': {'pri_us': [1000], 'pulses': [9]}, 'radar': {'pulse_us': [2.5]}})
+    assert plan['waveform']['pulses'] == 9
+    assert plan['radar']['pulse_us'] == 2.5
+    refusal({'waveform': {'pri_us': [1000, 900], 'pulses': [9]}})

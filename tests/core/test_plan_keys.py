@@ -112,6 +112,17 @@ def test_a_default_lies_within_its_own_limits(key):
     assert key.nullable or key.default is not None or key.path == 'waveform.pri_us'
 
 
+@pytest.mark.parametrize(
+    'key', [key for key in KEYS if key.nullable and key.lowest is not None], ids=lambda key: key.path
+)
+def test_a_number_that_may_be_none_has_a_value_to_begin_with(key):
+    start = key.default if key.default is not None else key.start
+    assert all(key.lowest <= one <= key.highest for one in (start if isinstance(start, list) else [start]))
+    plan = with_everything()
+    put(plan, key.path, start)
+    assert at(read(plan).document, key.path) == start
+
+
 def test_the_table_holds_every_key_of_a_plan_written_out_in_full():
     known = {key.path.replace('[]', '') for key in KEYS}
     records = set(OPTIONAL_RECORDS) | {'rain', 'must_see', *IN_THE_HEAD}

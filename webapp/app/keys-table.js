@@ -62,11 +62,9 @@ function row(key, path, commit) {
   return { key, path, node, cell, field, none, without };
 }
 
-// Where a quantity begins that had no value: its default, else the end of its limits that is nearest to nothing.
-function startOf({ default: start, kind, lowest, highest }) {
-  if (start !== null) return start;
-  const least = Math.min(Math.max(0, lowest ?? 0), highest ?? 0);
-  return kind === 'interval' ? [lowest, highest] : least;
+// Where a quantity begins that had no value: its default, else where the core says that such a one begins.
+function startOf({ default: usual, start }) {
+  return usual ?? start;
 }
 
 function group(groups, name, rows) {
