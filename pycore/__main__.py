@@ -13,6 +13,7 @@ from fractions import Fraction
 from pathlib import Path
 
 from pycore import api, document
+from pycore.commands.find import find
 from pycore.errors import InputError
 from pycore.findings.finding import SIGNS
 from pycore.wording import trimmed
@@ -68,6 +69,7 @@ def _parser():
     vary.add_argument('inputs', nargs='+', metavar='KEY A..B', help='a key of the plan and the interval it runs over')
     vary.add_argument('--by', action='append', required=True, metavar='STEP', help='step of each input, in its unit')
     vary.add_argument('-o', dest='output', metavar='FILE', help='write there instead of standard output')
+    _find_options(_command(commands, 'find', _find, 'search for plans that leave less of the coverage blind'))
     compare = _command(commands, 'compare', _compare, 'print how a plan differs from others')
     compare.add_argument('others', nargs='+', metavar='OTHER', help='plans to compare it with')
     compare.add_argument('--json', action='store_true', help='print the comparison as JSON')
@@ -148,6 +150,70 @@ def _print_margins(rows):
 
 def _link(options):
     print(api.note(plan_of(options.plan))['link'])
+
+
+def _find_options(find):
+    """Add the limits that a search can be asked for; those that are not named come from the plan."""
+    find.add_argument('--n', type=int, help='number of PRIs')
+    find.add_argument('--m', type=int, help='how many of them must see a target')
+    find.add_argument('--pri-us', metavar='A..B', help='interval of PRIs')
+    find.add_argument('--keep', action='append', metavar='US', help='a PRI to keep; more than once for several')
+    find.add_argument('--avoid', action='append', metavar='A..B', help='an interval of PRIs to avoid')
+    find.add_argument('--step-us', metavar='US', help='PRIs are whole steps of this')
+    find.add_argument('--whole-gates', action='store_true', help='PRIs are whole range gates')
+    find.add_argument('--apart-us', metavar='US', help='least difference between any two PRIs')
+    find.add_argument('--decode', choices=('blur', 'exact', 'none'), default='blur', help='how decoding is judged')
+    find.add_argument('--hole-km', metavar='KM', help='a longer hole is not tolerated')
+    find.add_argument('--hole-mps', metavar='MPS', help='a wider hole is not tolerated')
+    find.add_argument('--cpi-ms', metavar='MS', help='time of each CPI, instead of its pulses')
+    find.add_argument('--seconds', metavar='S', help='time allowance (10 unless steps are given)')
+    find.add_argument('--steps', type=int, metavar='K', help='steps to take; the same steps give the same list')
+    find.add_argument('--seed', type=int, default=1, metavar='K', help='seed of the search')
+    find.add_argument('--workers', type=int, default=1, metavar='W', help='processes')
+    find.add_argument('--cluster', metavar='ADDRESS', help='a Dask scheduler that does the work')
+    find.add_argument('--json', action='store_true', help='print JSON lines')
+
+
+def _find(options):
+    """Search until the allowance is over, then print what was found."""
+    numbers = ('step_us', 'apart_us', 'hole_km', 'hole_mps', 'cpi_ms')
+    asked = {
+        **{name: _exact(name, getattr(options, name)) for name in numbers},
+        'n': options.n,
+        'm': options.m,
+        'pri_us': options.pri_us and _pair('pri-us', options.pri_us),
+        'keep_us': [_exact('keep', one) for one in options.keep or ()],
+        'avoid_us': [_pair('avoid', one) for one in options.avoid or ()],
+        'whole_gates': options.whole_gates,
+        'decode': options.decode,
+    }
+    seconds = None if options.seconds is None else float(_exact('seconds', options.seconds))
+    seconds = 10.0 if seconds is None and options.steps is None else seconds
+    if options.workers < 1 or (options.steps is not None and options.steps < 1):
+        raise InputError('', '--workers and --steps must be at least 1.')
+    answer = find(plan_of(options.plan), asked, seconds, options.steps, options.seed, options.workers, options.cluster)
+    if options.json or not sys.stdout.isatty():
+        print(json.dumps(answer, allow_nan=False))
+        return
+    for one in answer['plans']:
+        pris = ' '.join(f'{pri:g}' for pri in one['pri_us'])
+        print(f'{one["visible_share"]:.3%} seen, {one["excess_over_floor"]:.4%} above the floor: {pris} us')
+    print(answer['verdict'] or f'{answer["tried"]} sets tried in {answer["seconds"]:.1f} s, seed {answer["seed"]}')
+
+
+def _exact(name, text):
+    """Return a decimal exactly; ``None`` stays."""
+    try:
+        return None if text is None else Fraction(text)
+    except (ValueError, ZeroDivisionError):
+        raise InputError(name, f'{name} must be a number; got {text[:40]}.') from None
+
+
+def _pair(name, text):
+    low, found, high = text.partition('..')
+    if not found:
+        raise InputError(name, f'{name} must be an interval such as 35..150; got {text[:40]}.')
+    return _exact(name, low), _exact(name, high)
 
 
 def _timing(options):
