@@ -11,6 +11,7 @@ from pycore.assessment import assessment
 from pycore.columns import followed, picture
 from pycore.columns.mark import marked
 from pycore.computed import Computed
+from pycore.conventions import conventions
 from pycore.differences import differing_inputs, judged_changes, verdicts_differ
 from pycore.errors import InputError
 from pycore.findings import verdict
@@ -307,5 +308,6 @@ ACTIONS = {
     'timing': timing,
     'margins': margins_of,
     'workings': workings_of,
+    'conventions': conventions,
 }
 """What the worker in the browser may be asked for, by name."""
