@@ -8,6 +8,7 @@ import math
 
 from pycore import edit, link
 from pycore.assessment import assessment
+from pycore.cautions import cautions
 from pycore.columns import followed, picture
 from pycore.columns.mark import marked
 from pycore.computed import Computed
@@ -74,7 +75,8 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     Returns
     -------
     note : dict
-        The plan, its link, what was said and refused, verdict, findings, figures, and what becomes of the target.
+        The plan, its link, what was said and refused, verdict, findings, cautions, figures, and what becomes of the
+        target.
     """
     units = {**SHOWN_UNITS, **(units or {})}
     start = None if opened is None else link.read_link(opened)
@@ -90,6 +92,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         'refused': refused,
         'verdict': verdict(found),
         'findings': [_shown(finding) for finding in found],
+        'cautions': cautions(computed, units),
         'figures': {name: picture(name, computed, units, (size or {}).get(name), mark) for name in figures},
         'target': None if mark is None else followed.words(mark, units),
     }
