@@ -11,13 +11,14 @@ from urllib.parse import quote, unquote
 
 from pycore.errors import InputError
 from pycore.plan_document import limits_text, shown
+from pycore.plan_keys import MOST_PRIS
 from pycore.quantity import FAMILIES, as_number
 
 UNIT_TEXT = {'µs': 'us', 'm/s': 'mps', 'km/h': 'kmh', '%': 'pct', '°': 'deg', 'm²': 'm2'}
 """Units whose own spelling mail and chat might spoil, and what stands for them in a link."""
 
 _FROM_TEXT = {text: unit for unit, text in UNIT_TEXT.items()}
-_NUMBER = re.compile(r'-?\d{1,40}(?:\.\d{1,40})?(?:e-?\d{1,3})?')
+_NUMBER = re.compile(r'-?[0-9]{1,40}(?:\.[0-9]{1,40})?(?:e-?[0-9]{1,3})?')
 
 
 def number_text(value):
@@ -109,6 +110,8 @@ def _decoded(text):
 
 def _read_list(key, parts, field, text):
     """Read numbers; those without a unit share the next one that has one."""
+    if len(parts) > MOST_PRIS:
+        raise InputError(field, f'{key.label} must be at most {MOST_PRIS} numbers; got {len(parts)}.')
     values, unit = [], None
     for part in reversed(parts):
         match = _NUMBER.match(part)
