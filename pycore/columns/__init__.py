@@ -1,8 +1,9 @@
 """What the figures show: named columns, axes, captions, summaries and tables, one module for each figure."""
 
-from pycore.columns import blind_speeds, blind_zones, dwell, eclipsed_ranges, trade_line
+from pycore.columns import blind_speeds, blind_zones, detection, dwell, eclipsed_ranges, trade_line
 
-_MODULES = {module.NAME: module for module in (blind_zones, trade_line, eclipsed_ranges, blind_speeds, dwell)}
+_IN_ORDER = (blind_zones, trade_line, eclipsed_ranges, blind_speeds, detection, dwell)
+_MODULES = {module.NAME: module for module in _IN_ORDER}
 
 FIGURES = tuple(_MODULES)
 """Names of the figures, in the order in which a note of dwells shows them. [unitless]"""

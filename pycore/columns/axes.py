@@ -153,3 +153,27 @@ def decade_ticks(low, high):
     at = [digit * 10.0**decade for decade in decades for digit in digits]
     kept = [value for value in at if low <= value <= high]
     return kept, [trimmed(value) for value in kept]
+
+
+def round_ticks(low, high, most=6):
+    """Return round numbers, evenly spaced, between two ends of a linear axis.
+
+    Parameters
+    ----------
+    low, high : float
+        Its ends, in the shown unit. [any]
+    most : int
+        Most steps between them. [unitless]
+
+    Returns
+    -------
+    at : list of float
+        Where the ticks stand. [any]
+    text : list of str
+        What stands beside them.
+    """
+    rough = (high - low) / most
+    decade = 10.0 ** math.floor(math.log10(rough))
+    step = next(decade * digit for digit in (1, 2, 5, 10) if decade * digit >= rough * (1 - _SAME))
+    at = [number * step for number in range(math.ceil(low / step - _SAME), math.floor(high / step + _SAME) + 1)]
+    return at, [trimmed(value) for value in at]

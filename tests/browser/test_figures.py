@@ -11,6 +11,7 @@ from PIL import Image
 from playwright.sync_api import expect
 
 from pycore import columns
+from pycore.columns.mark import marked
 from pycore.computed import Computed
 from pycore.plan import read
 from pycore.wording import SHOWN_UNITS
@@ -24,6 +25,7 @@ PAGE = (
     '<!doctype html><body style="margin: 0; height: 3000px"><div id="plot" style="height: 320px; width: 640px"></div>'
 )
 SIZE = {'width': 580, 'height': 270}
+TARGET = {'range_km': 57.0, 'speed_mps': 150.0}
 SHOW = """
 async ({ name, item, text, bytes, scheme }) => {
   if (scheme) figuresUnderTest.setScheme(scheme);
@@ -64,8 +66,9 @@ def blank(chrome):
     page.add_script_tag(path=BOKEH_JS)
     modules = ''.join((APP / name).read_text(encoding='utf-8') for name in ('figures.js', 'arrays.js'))
     names = 'mount, update, setScheme, onPick, onHover, sizes, revived'
+    modules = re.sub(r'^export |^import .*\n', '', modules, flags=re.M)
     page.add_script_tag(
-        content=f'{re.sub(r"^export ", "", modules, flags=re.M)}\nwindow.figuresUnderTest = {{ {names} }};'
+        content=f'const bokeh = () => globalThis.Bokeh;\n{modules}\nwindow.figuresUnderTest = {{ {names} }};'
     )
     yield page
     page.close()
@@ -128,6 +131,28 @@ def test_a_click_tells_where_it_was_in_the_units_of_the_axes(blank):
     assert name == 'blind-zones'
     assert x == pytest.approx(110, abs=2 * 108 / size['width'])
     assert 100 < y < 200
+
+
+def test_under_the_map_of_detection_a_pointer_has_a_range_and_no_speed(blank):
+    show(blank, 'detection', document([980.0, 860.0]))
+    blank.evaluate('() => figuresUnderTest.onHover((...place) => { window.hovered = place; })')
+    blank.mouse.move(330, 60)
+    assert 150 < blank.evaluate('() => window.hovered[2]') < 300
+    blank.mouse.move(330, 250)
+    name, x, y = blank.evaluate('() => window.hovered')
+    assert 40 < x < 70
+    assert y is None
+
+
+def test_a_followed_target_is_marked_in_the_colour_of_lines(blank):
+    picture = columns.picture(
+        'blind-zones', computed := Computed(read(document([980.0, 860.0]))), SHOWN_UNITS, SIZE, marked(computed, TARGET)
+    )
+    show(blank, 'blind-zones', document([980.0, 860.0]))
+    assert rgb_of('line', 'light') not in colours_up(blank)
+    blank.evaluate('([name, data]) => figuresUnderTest.update(name, pictureOf(data))', ['blind-zones', sent(picture)])
+    blank.evaluate('() => figuresUnderTest.setScheme("light")')
+    assert rgb_of('line', 'light') in colours_up(blank)
 
 
 def test_leaving_the_plot_ends_the_hover(blank):

@@ -349,3 +349,76 @@ def test_what_lies_beyond_the_time_on_target_is_marked():
     short = {**OPENING, 'radar': {**OPENING['radar'], 'dwell_ms': 12.0}}
     over = pictures(short, only=['dwell'])['dwell']['columns']['over']
     np.testing.assert_allclose([over['left'][0], over['right'][0]], [12.0, 16.56])
+
+
+DETECTED = {
+    **OPENING,
+    'waveform': {**OPENING['waveform'], 'pri_us': [980.0, 860.0, 735.0], 'detect_m': 2},
+    'target': {'snr_db': 10.0, 'at_km': 60.0, 'fluctuation': 'swerling1', 'pd_wanted': 0.8},
+}
+
+
+def test_the_map_of_detection_agrees_with_the_followed_target_cell_by_cell():
+    from pycore import detected
+    from pycore.follow import follow
+
+    computed = Computed(read({**DETECTED, 'rain': [{'range_km': [15.0, 45.0], 'cnr_db': 30.0}]}))
+    at_range, at_speed = np.array([3e3, 30e3, 61e3, 128.95e3]), np.array([0.0, 12.0, 58.0, 211.0])
+    found = detected.probability_over(computed, at_range, at_speed)
+    exact = [[follow(computed, r, v).probability for v in at_speed] for r in at_range]
+    # The map averages over the strength in coarse steps, to about a thousandth.
+    np.testing.assert_allclose(found, exact, atol=3e-3)
+
+
+def test_the_map_of_a_stagger_agrees_with_the_followed_target_cell_by_cell():
+    from pycore import detected
+    from pycore.follow import follow
+
+    computed = Computed(read({**STAGGER, 'rain': [{'range_km': [15.0, 45.0], 'cnr_db': 30.0}]}))
+    at_range, at_speed = np.array([3e3, 30e3, 61e3, 143e3]), np.array([0.0, 12.0, 58.0, 211.0])
+    found = detected.probability_over(computed, at_range, at_speed)
+    exact = [[follow(computed, r, v).probability for v in at_speed] for r in at_range]
+    np.testing.assert_allclose(found, exact, atol=3e-3)
+
+
+@pytest.mark.parametrize('document', [DETECTED, STAGGER], ids=['dwells', 'stagger'])
+def test_curves_of_detection_pass_the_wanted_probability_at_the_ranges_in_the_caption(document):
+    from pycore.columns import detection
+
+    computed = Computed(read(document))
+    reached = computed.echoes.reached_km()
+    for name in ('best', 'median'):
+        curve = detection.curves_of(computed, np.array([reached[name] * 1e3]))[name]
+        assert curve[0] == pytest.approx(0.8, abs=3e-3)
+
+
+def test_the_strip_of_curves_lies_under_the_map_and_a_pointer_there_has_no_speed():
+    picture = pictures(DETECTED, only=['detection'])['detection']
+    assert picture['holds']['y'] == [0.0, 300.0]
+    assert picture['ranges']['y'][0] < 0.0
+    median = picture['columns']['median']['y']
+    assert (median < 0).all()
+    assert (np.diff(median) <= 1e-9).all()
+
+
+def test_steps_of_the_probability_part_at_what_is_wanted():
+    from pycore.columns import detection
+
+    edges = detection.steps(0.8)
+    assert edges.tolist() == pytest.approx([0.08, 0.4, 0.8, 0.9])
+    assert len(detection.STEPS) == edges.size + 1
+    assert detection.STEPS[np.searchsorted(edges, 0.8, side='right')] == 'enough'
+
+
+@pytest.mark.parametrize(
+    ('low', 'high', 'expected'),
+    [
+        (0, 300, [0, 50, 100, 150, 200, 250, 300]),
+        (-100, 700, [0, 200, 400, 600]),
+        (0.2, 0.5, [0.2, 0.25, 0.3, 0.35, 0.4, 0.45, 0.5]),
+    ],
+)
+def test_linear_axes_have_round_ticks(low, high, expected):
+    from pycore.columns.axes import round_ticks
+
+    assert round_ticks(low, high)[0] == pytest.approx(expected)

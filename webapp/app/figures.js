@@ -16,7 +16,7 @@ export async function mount(name, element, item) {
   const manager = await Bokeh.embed.embed_item(item, element);
   const [view] = manager.roots;
   const models = [...view.model.references()];
-  mounted.set(name, { element, view, models, named: namesOf(models), said: {} });
+  mounted.set(name, { element, view, models, named: namesOf(models), said: {}, holds: {} });
   repaint(models);
   withoutTabStop(view);
   listen(name, element);
@@ -24,8 +24,10 @@ export async function mount(name, element, item) {
 }
 
 // Show another picture of the same figure. Columns are typed arrays or lists; an image is a typed array with a `shape`.
-export function update(name, { columns, ranges, labels, ticks }) {
+// `holds` gives the ends between which an axis measures what it says; beyond them lies another part of the figure.
+export function update(name, { columns, ranges, labels, ticks, holds = {} }) {
   const { named, said } = mounted.get(name);
+  mounted.get(name).holds = holds;
   for (const side of ['x', 'y']) {
     const [start, end] = ranges[side];
     named.get(`${name}/${side}`).setv({ start, end });
@@ -102,7 +104,7 @@ function withoutTabStop(view) {
 }
 
 function listen(name, element) {
-  const at = (event) => placeOf(mounted.get(name).view, event);
+  const at = (event) => placeOf(mounted.get(name), event);
   let inside = false;
   element.addEventListener('click', (event) => {
     const place = at(event);
@@ -119,10 +121,14 @@ function listen(name, element) {
   });
 }
 
-// Where in the plot a pointer is, or null beside it.
-function placeOf({ el, frame }, { clientX, clientY }) {
+// Where in the plot a pointer is, or null beside it; null on an axis that does not hold there.
+function placeOf({ view: { el, frame }, holds }, { clientX, clientY }) {
   const { left, top } = el.getBoundingClientRect();
   const [sx, sy] = [clientX - left, clientY - top];
   if (!frame.bbox.contains(sx, sy)) return null;
-  return [frame.x_scale.invert(sx), frame.y_scale.invert(sy)];
+  return [within(holds.x, frame.x_scale.invert(sx)), within(holds.y, frame.y_scale.invert(sy))];
+}
+
+function within(ends, value) {
+  return ends && (value < ends[0] || value > ends[1]) ? null : value;
 }

@@ -2,9 +2,10 @@
 
 from bokeh.embed import json_item
 
-from webapp.figures import blind_speeds, blind_zones, dwell, eclipsed_ranges, trade_line
+from webapp.figures import blind_speeds, blind_zones, detection, dwell, eclipsed_ranges, trade_line
 
-_MODULES = {module.NAME: module for module in (blind_zones, trade_line, eclipsed_ranges, blind_speeds, dwell)}
+_IN_ORDER = (blind_zones, trade_line, eclipsed_ranges, blind_speeds, detection, dwell)
+_MODULES = {module.NAME: module for module in _IN_ORDER}
 
 
 def drawn(name, picture):

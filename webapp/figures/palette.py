@@ -23,6 +23,10 @@ PALETTE = {
     'axis': ('#9aa2ac', '#59626f'),
     'hair': ('#c9ccce', '#3a424d'),
     'band': ('#f0ede4', '#1f252d'),
+    'hardly': ('#333d4d', '#d3cfc4'),
+    'seldom': ('#657182', '#9aa0a5'),
+    'often': ('#9aa6b2', '#67717c'),
+    'enough': ('#dbe5ea', '#29343f'),
     'asked': ('#dcebf0', '#1d323b'),
 }
 """Each role's colour in every scheme. [unitless]"""
@@ -37,3 +41,6 @@ CLASS_ROLES = {
     'all': 'paper',
 }
 """The role that each class of the map of blind zones is drawn in. [unitless]"""
+
+STEP_ROLES = {'hardly': 'hardly', 'seldom': 'seldom', 'often': 'often', 'enough': 'enough', 'surely': 'paper'}
+"""The role that each step of the probability of detection is drawn in. [unitless]"""

@@ -1,0 +1,99 @@
+"""The words of detection: how far the wanted probability reaches, and what the tones of the map stand for."""
+
+import numpy as np
+
+from pycore.wording import capitalised, percent, significant, trimmed
+
+_LEAST = 0.0005
+
+
+def words(computed, x, y, found, mark=None):
+    """Return caption, short caption, summary and table of detection.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [SI]
+    x, y : Axis
+        Of range and of radial speed. [m, m/s]
+    found : float array, shape V × R
+        Probability in every cell of the map. [unitless]
+    mark : Mark or None
+        The target that is followed. [m, m/s]
+
+    Returns
+    -------
+    words : dict
+        caption, short, summary, table.
+    """
+    first = _reached(computed, x)
+    rest = [_curves(computed), _key(computed), *_marked(mark)]
+    return {
+        'caption': ' '.join([first, *rest]),
+        'short': first,
+        'summary': f'{_shares(computed, x, y, found)} {first}',
+        'table': _table(computed, x),
+    }
+
+
+def _wanted(computed):
+    return trimmed(computed.plan.target.pd_wanted)
+
+
+def _reached(computed, x):
+    """Say to which ranges the wanted probability holds."""
+    reached = {
+        name: None if value is None else x.text(value * 1e3) for name, value in computed.echoes.reached_km().items()
+    }
+    lead = f'Detected with probability {_wanted(computed)}'
+    best, median, worst = (reached[name] for name in ('best', 'median', 'worst'))
+    if best is None:
+        return f'The target is detected with probability {_wanted(computed)} at no wanted speed.'
+    if best == worst:
+        return f'{lead} to {best} at every speed.'
+    if median is None:
+        return f'{lead} to {best} at the best speed, and at less than half of the speeds at all.'
+    if worst is None:
+        return f'{lead} to {median} at half of the speeds, to {best} at the best and not at the worst.'
+    return f'{lead} to {median} at half of the speeds, to {best} at the best and {worst} at the worst.'
+
+
+def _curves(computed):
+    lead = 'The curves' if computed.echoes.reached_km()['best'] is None else 'Ranges and curves'
+    return f'{lead} (median heavy, worst dashed) are by noise alone.'
+
+
+def _key(computed):
+    """Say what the map counts besides the noise, and its tones."""
+    cleared = "the canceller's response" if computed.is_stagger else 'notch'
+    what = f'eclipsing, {cleared} and clutter' if computed.echoes.patches else f'eclipsing and {cleared}'
+    return f'In the map {what} count too; plain and the tone next to it are at least {_wanted(computed)}.'
+
+
+def _marked(mark):
+    """Say how probable the followed target is."""
+    if mark is None:
+        return []
+    chance = mark.followed.probability
+    return [f'The target, ringed, has {significant(chance) if chance >= _LEAST else f"below {_LEAST}"}.']
+
+
+def _shares(computed, x, y, found):
+    """Say how much of the map reaches what is wanted, for someone who does not see it."""
+    enough = float(np.mean(found >= computed.plan.target.pd_wanted))
+    part = f'About {percent(enough)}' if 0.0 < enough < 1.0 else 'All' if enough else 'No part'
+    return capitalised(
+        f'map of the probability of detection over range, {x.span()}, and radial speed, {y.span()}, with curves along '
+        f'the range under it. {part} of it has at least the wanted probability.'
+    )
+
+
+def _table(computed, x):
+    """Return the ranges of the best, the median and the worst speed."""
+    names = {'best': 'Best speed', 'median': 'Half of the speeds', 'worst': 'Worst speed'}
+    reached = computed.echoes.reached_km()
+    rows = [
+        [text, 'not reached' if reached[name] is None else significant(x.shown(reached[name] * 1e3))]
+        for name, text in names.items()
+    ]
+    return {'head': ['Speed', f'Range at probability {_wanted(computed)} ({x.unit})'], 'rows': rows}
