@@ -14,7 +14,7 @@ from pycore.crossings import clear_speeds, deepest_dip, first_notch, first_peak
 from pycore.eclipsing import METRES_PER_SECOND_OF_DELAY, clear_ranges, first_opening
 from pycore.finder_choices import choices
 from pycore.finder_decode import pulses_of
-from pycore.finder_judge import hole_share, short_of
+from pycore.finder_shortfalls import hole_share, short_of
 from pycore.floor import floor_ranges, floor_speeds
 from pycore.holes import holes
 from pycore.patterns import sweep

@@ -6,108 +6,19 @@ score second, so that it finds its way to sets that meet everything, and knows h
 near the best of the others came.
 """
 
-from dataclasses import dataclass
-
 import numpy as np
 
+from pycore.finder_blocks import Block, Times, Weighed
 from pycore.finder_choices import choices
 from pycore.finder_decode import Decoder, pulses_of
-from pycore.finder_found import TIME_STEPS
 from pycore.finder_scores import Scorer
+from pycore.finder_shortfalls import DIGITS, hole_share, short_of
 from pycore.finder_sight import floor_of, sight_of
 from pycore.holes import holes
 from pycore.unseen import inbound
 
-MET_WITHIN = 1e-9
-"""A share counts as reached, and a time as kept, that is so near. [unitless]"""
-
-DIGITS = 12
-"""Scores and shortfalls are rounded to so many decimals before they are compared. [unitless]"""
-
 _MOST_AT_ONCE = 2_048
 """Candidates that are looked at in one step. [unitless]"""
-
-
-@dataclass(frozen=True, slots=True)
-class Block:
-    """Candidates for a place, and the tables they are scored with.
-
-    Parameters
-    ----------
-    kind : int
-        Place that they are for. [unitless]
-    counts : int array, shape C
-        PRIs. [clock counts]
-    time_s : float array, shape C
-        What one of them takes with its pulses. [s]
-    tables : tuple of pairs of Table
-        For the coverage and for each must-see region. [m, m/s]
-    """
-
-    kind: int
-    counts: np.ndarray
-    time_s: np.ndarray
-    tables: tuple
-
-
-@dataclass(frozen=True, slots=True)
-class Weighed:
-    """All sets that some held PRIs make with one candidate.
-
-    Parameters
-    ----------
-    legal : bool array, shape C
-        Far enough from the PRIs that are held. [unitless]
-    decodes : bool array, shape C
-        False where it surely does not decode. [unitless]
-    score : float array, shape C
-        Blind share beyond the floor, rounded. [unitless]
-    short : float array, shape (K, C)
-        Shortfall of each limit of ``Judge.weighed``. [unitless]
-    time_s : float array, shape C
-        Time used. [s]
-    """
-
-    legal: np.ndarray
-    decodes: np.ndarray
-    score: np.ndarray
-    short: np.ndarray
-    time_s: np.ndarray
-
-    @property
-    def total(self):
-        """Sum of the shortfalls, shape C, rounded."""
-        return self.short.sum(axis=0).round(DIGITS)
-
-
-@dataclass(frozen=True, slots=True)
-class Times:
-    """The times that sets can use, in equal parts.
-
-    Parameters
-    ----------
-    shortest, longest : float
-        Ends. [s]
-    """
-
-    shortest: float
-    longest: float
-
-    def step(self, time_s):
-        """Return which part a time belongs to.
-
-        Parameters
-        ----------
-        time_s : float array, shape S
-            Times used. [s]
-
-        Returns
-        -------
-        step : int array, shape S
-            From 0 to ``TIME_STEPS`` - 1. [unitless]
-        """
-        part = (time_s - self.shortest) / max(self.longest - self.shortest, 1e-300)
-        return (part * TIME_STEPS).clip(0, TIME_STEPS - 1).astype(np.intp)
 
 
 class Judge:
@@ -370,42 +281,3 @@ class Judge:
             time_s = inbound(seen).time_s
             short['unseen'] = 0.0 if np.isnan(time_s) else float(short_of(-min(time_s, 1e9), -limits.unseen_s))
         return short
-
-
-def hole_share(found):
-    """Return how much of the coverage lies in holes that are too large.
-
-    Parameters
-    ----------
-    found : Holes
-        Judged. [m, m/s]
-
-    Returns
-    -------
-    share : float
-        0 where there is none, and never 0 where there is one, though it may be too small to be listed. [unitless]
-    """
-    large = sum(hole.share for hole in found.listed if hole.too_large)
-    return max(float(large), 1e-6) if found.too_large else 0.0
-
-
-def short_of(got, wanted):
-    """Return by how much a limit is missed, as a part of it.
-
-    Parameters
-    ----------
-    got : float or array, shape S
-        What there is. [any]
-    wanted : float or None
-        Least that is wanted; of what must not be too large, both negative. ``None`` for no limit. [same]
-
-    Returns
-    -------
-    short : float or array, shape S
-        0 where it is met. [unitless]
-    """
-    if wanted is None:
-        return np.zeros(np.shape(got))
-    missing = wanted - np.asarray(got)
-    scale = max(abs(wanted), 1e-300)
-    return np.where(missing > MET_WITHIN * scale, missing / scale, 0.0)

@@ -10,8 +10,9 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from pycore.finder_blocks import Block, Weighed
 from pycore.finder_found import Ledger
-from pycore.finder_judge import DIGITS, Block, Weighed
+from pycore.finder_shortfalls import DIGITS
 
 _STARTS = 12
 """Starts in vain after which a slice gives up on decoding and finds out how near to it sets come. [unitless]"""

@@ -8,8 +8,8 @@ from pycore.eclipsing import METRES_PER_SECOND_OF_DELAY
 from pycore.finder_cycle import StaggerJudge
 from pycore.finder_decode import pulses_of
 from pycore.finder_found import Ledger
-from pycore.finder_judge import DIGITS
 from pycore.finder_report import Better, tightest, with_
+from pycore.finder_shortfalls import DIGITS
 from pycore.holes import holes
 from pycore.patterns import sweep
 from pycore.sight import floor, share, within

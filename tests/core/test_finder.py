@@ -116,12 +116,21 @@ def test_the_best_of_a_small_problem_is_the_best_of_all_sets(name):
     assert sorted(got.values()) == pytest.approx(sorted(expected.values()), abs=2e-12)
 
 
+@pytest.mark.parametrize('limits', [SMALL, CASES.two_kinds], ids=['alike', 'two kinds'])
+def test_going_through_all_sets_meets_every_set_once(limits):
+    parts = [run_slice(limits, 1, number) for number in range(1, finder.slices(limits))]
+    rising = (
+        combinations(range(50, 69), 4) if limits is SMALL else product(combinations(range(50, 63), 2), range(50, 63))
+    )
+    assert sum(part.tried for part in parts) == sum(1 for _ in rising)
+
+
 def test_a_descent_alone_finds_the_best_of_a_small_problem():
     best = by_going_through(SMALL)[0]
     assert run_slice(SMALL, seed=3, number=0).best[0] == best
 
 
-@settings(max_examples=8, deadline=None)
+@settings(max_examples=4, deadline=None)
 @given(seed=st.integers(0, 2**63), steps=st.integers(1, 700))
 def test_whoever_takes_the_slices_the_list_is_the_same(seed, steps):
     limits = replace(SMALL, places=SMALL.places * 2, m=3, pri_counts=(50, 95))
