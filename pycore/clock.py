@@ -2,8 +2,9 @@
 
 from fractions import Fraction
 
-from pycore.quantity import FAMILIES, as_number
+from pycore.quantity import as_number
 from pycore.shown import digits
+from pycore.units import FAMILIES
 
 MOST_COUNTS_OFF = Fraction(1, 10**6)
 """A PRI may stand so far off a whole count of the clock and be that count. [clock counts]"""

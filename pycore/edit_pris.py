@@ -12,8 +12,9 @@ from pycore.errors import InputError
 from pycore.plan_document import checked_number, shown
 from pycore.plan_keys import BY_PATH, KEYS, MOST_PRIS
 from pycore.plan_paths import known_key, put, value_at
-from pycore.quantity import FAMILIES, typed_list
+from pycore.quantity import typed_list
 from pycore.shown import digits, shown_unit
+from pycore.units import FAMILIES
 from pycore.wording import count_word
 
 _PRIS = 'waveform.pri_us'

@@ -12,7 +12,8 @@ from urllib.parse import quote, unquote
 from pycore.errors import InputError
 from pycore.plan_document import limits_text, shown
 from pycore.plan_keys import MOST_PRIS
-from pycore.quantity import FAMILIES, as_number
+from pycore.quantity import as_number
+from pycore.units import FAMILIES
 
 UNIT_TEXT = {'µs': 'us', 'm/s': 'mps', 'km/h': 'kmh', '%': 'pct', '°': 'deg', 'm²': 'm2'}
 """Units whose own spelling mail and chat might spoil, and what stands for them in a link."""

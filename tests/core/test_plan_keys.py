@@ -8,7 +8,7 @@ import pytest
 from pycore import link, plan_keys
 from pycore.plan import filled, read
 from pycore.plan_keys import GROUPS, KEYS, OPTIONAL_RECORDS
-from pycore.quantity import FAMILIES
+from pycore.units import FAMILIES
 
 OPENING = json.loads((Path(__file__).parents[2] / 'webapp/examples/opening.json').read_text('utf-8'))['plan']
 BARE = {'waveform': {'pri_us': [980.0, 860.0]}}

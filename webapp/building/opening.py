@@ -118,7 +118,7 @@ def units():
     units : dict
         By family: what one of each unit is in the family's base unit; and how else a unit may be spelt.
     """
-    from pycore.quantity import FAMILIES, SPELLINGS
+    from pycore.units import FAMILIES, SPELLINGS
 
     return {
         'families': {name: {unit: float(base) for unit, base in family.items()} for name, family in FAMILIES.items()},
