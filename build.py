@@ -90,12 +90,13 @@ def write(files):
 
 def test(python, selected):
     """Check the style of the sources and run the tests; return the exit status. pytest has the last word."""
+    status = 0
     for verb in (['check'], ['format', '--check']):
         if subprocess.run([python, '-m', 'ruff', *verb, '--quiet', '.'], cwd=ROOT).returncode:
-            print(f'The style check failed: run "ruff {" ".join(verb)}" to see where.')
-            return 1
+            print(f'The style check failed: ruff {" ".join(verb)}')
+            status = 1
 
-    return subprocess.run([python, '-m', 'pytest', *selected], cwd=ROOT).returncode
+    return subprocess.run([python, '-m', 'pytest', *selected], cwd=ROOT).returncode or status
 
 
 def main():

@@ -77,7 +77,9 @@ def test_no_text_of_the_data_ends_its_element(contents):
 def test_the_data_and_the_library_stand_before_the_script_that_reads_them(contents):
     text = page.single(contents)
 
-    assert text.index('id="opening"') < text.index('id="part-bokeh"') < text.index('second()') < text.index('id="part-wasm"')
+    marks = ['id="opening"', 'id="part-bokeh"', 'second()', 'id="part-wasm"']
+
+    assert marks == sorted(marks, key=text.index)
 
 
 def test_a_script_that_changes_changes_its_name_and_no_other(contents):

@@ -24,8 +24,8 @@ def bare(code):
 def one_line(units):
     """Return a table of line numbers that gives all of these code units to the function's first line.
 
-    The format is CPython's own (Objects/locations.md): an entry of kind 13, a line without columns, covers up to 8 units
-    and is followed by the step in lines.
+    The format is CPython's own: an entry of kind 13, a line without columns, covers up to 8 units and is followed by
+    the step in lines. Without a table, the traceback module fails on the frame.
     """
     entries = [min(8, units - start) for start in range(0, units, 8)]
     return b''.join(bytes([0x80 | 13 << 3 | length - 1, 0]) for length in entries)
