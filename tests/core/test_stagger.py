@@ -164,9 +164,27 @@ def test_a_narrow_null_beside_a_broad_shallow_valley_is_found():
     assert (depth, at) == pytest.approx((-74.49, 80.30), abs=0.01)
 
 
-def test_of_equal_dips_the_slowest_is_named():
-    response = staggered_response((1000,), 1e6, (1, -1), WAVELENGTH_M)
-    assert deepest_dip(response, 20.0, 220.0)[1] == pytest.approx(50.0, abs=1e-3)
+def test_the_deepest_dip_is_found_where_the_steps_pass_it_by():
+    # At whole steps the valley at 645 m/s looks deeper than the one at 758 m/s, which is.
+    response = staggered_response((39, 32, 53, 47), 1e5, (1, -1), WAVELENGTH_M)
+    depth, at = deepest_dip(response, 58.47953216374269, 818.7134502923976)
+    fine = np.linspace(740.0, 780.0, 40001)
+    assert depth == pytest.approx(response.decibels(fine).min(), abs=1e-4)
+    assert at == pytest.approx(758.18, abs=0.01)
+
+
+@pytest.mark.parametrize(('cycle', 'at'), [((4, 3), 0.24557), ((9, 7), 0.44761), ((11, 8, 9), 0.1)])
+def test_of_equal_dips_the_slowest_is_named(cycle, at):
+    # Two delays; a period is a mirror image of itself, so that every dip in it comes twice.
+    response = staggered_response(cycle, 1e5, (1, -2, 1), WAVELENGTH_M)
+    found = deepest_dip(response, 0.1 * response.repeats_m_s, 0.9 * response.repeats_m_s)
+    assert found[1] / response.repeats_m_s == pytest.approx(at, abs=1e-4)
+
+
+def test_crossings_are_looked_for_at_a_sixteenth_of_what_the_longest_time_folds():
+    # 1080 + 1240 counts of 1 us: λ/2 over 2.32 ms.
+    response = staggered_response((1000, 1200, 1080, 1240), 1e6, (1, -2, 1), WAVELENGTH_M)
+    assert response.step_m_s == pytest.approx(WAVELENGTH_M / 2 / 2.32e-3 / 16, rel=1e-12)
 
 
 def test_what_cancels_but_for_rounding_is_nothing():

@@ -3,6 +3,7 @@
 import json
 from pathlib import Path
 
+import numpy as np
 import pytest
 
 from pycore import ambiguity, dwell
@@ -31,10 +32,10 @@ def by_file(header):
     return header['file']
 
 
-def test_the_data_are_all_there():
-    assert len(DATA['headers']) == 8
-    assert len(PRFS) == 8
-    assert len(KATX['cuts']) == 4
+def test_the_data_are_all_there_and_say_where_they_come_from():
+    assert (len(DATA['headers']), len(PRFS), len(KATX['cuts'])) == (8, 8, 4)
+    assert 'arm_pyart' in DATA['provenance']
+    assert all(row['status'] for row in PRFS.values())
 
 
 @pytest.mark.parametrize('header', [one for one in DATA['headers'] if one['nyquist_m_s']], ids=by_file)
@@ -78,8 +79,9 @@ def test_a_table_of_eight_prfs_and_their_ranges_in_whole_kilometres(row):
 
 @pytest.mark.parametrize('row', PRFS.values(), ids=lambda row: str(row['number']))
 def test_the_eight_intervals_are_whole_multiples_of_six_and_two_thirds_microseconds(row):
-    # The multiple is the range in kilometres that light of 3e8 m/s would give.
-    assert 1 / row['prf_hz'] / (20e-6 / 3) == pytest.approx(row['range_km'], rel=2e-5)
+    # 20/3 us is a kilometre at 3e8 m/s: with that the printed kilometres are whole but for the PRF's last digit.
+    textbook = 3e8 / SPEED_OF_LIGHT_M_S
+    assert ambiguity.unambiguous_range(1 / row['prf_hz']) * textbook / 1e3 == pytest.approx(row['range_km'], rel=2e-5)
 
 
 def test_one_wavelength_explains_range_and_speed_of_every_cut_of_a_volume():
@@ -114,7 +116,8 @@ def test_the_longest_and_the_shortest_reach():
 @pytest.mark.parametrize(('number', 'pulses'), [(1, 28), (4, 75), (5, 88), (6, 95), (7, 103), (8, 111)])
 def test_pulses_of_a_radial_keep_its_dwell(number, pulses):
     # NOAA/NWS Warning Decision Training Branch, DLOC Topic 3 Lesson 1, section 6-7: VCP 21 at 1.45 degrees.
-    assert pulses / PRFS[number]['prf_hz'] == pytest.approx(87e-3, abs=0.6e-3)
+    used = dwell.time_used(np.array([1 / PRFS[number]['prf_hz']]), np.array([pulses]), np.array([0]))
+    assert used == pytest.approx(87e-3, abs=0.6e-3)
 
 
 @pytest.mark.parametrize('cut', KATX['pulses'], ids=lambda cut: str(cut['prf_number']))
