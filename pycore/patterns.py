@@ -14,7 +14,7 @@ EDGE_TOLERANCE = 1e-9
 """Edges closer than this part of their axis are one edge. [unitless]"""
 
 _BITS_AT_ONCE = 4
-_MOST_BITS_IN_GROUPS = 11
+_MOST_BITS_IN_GROUPS = 13
 
 # In 64 bits, though a browser's engine counts in 32 unless told otherwise: sixteen PRFs and their floors need 33.
 _BIT = 1 << np.arange(32, dtype=np.int64)
