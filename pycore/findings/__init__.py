@@ -1,9 +1,12 @@
 """What a plan reaches: one sentence for each thing that a review asks, in a fixed order."""
 
+from pycore.findings.blind import blind_speed
+from pycore.findings.decode import decode_range, decode_speed
 from pycore.findings.detection import detection
-from pycore.findings.dwell import duty, dwell
-from pycore.findings.seen import largest_hole, must_see, unseen_crossing, unseen_inbound, visible
-from pycore.findings.speeds import blind_speed, decode_range, decode_speed, range_walk
+from pycore.findings.dwell import duty, dwell, range_walk
+from pycore.findings.holes import largest_hole
+from pycore.findings.seen import must_see, visible
+from pycore.findings.unseen import unseen_crossing, unseen_inbound
 from pycore.findings.verdict import verdict
 from pycore.findings.weather import extended_nyquist, nyquist, second_trip, unfolding, velocity_error
 

@@ -19,44 +19,34 @@ def detection(computed, units):
     finding : Finding
         Value, what was wanted, and the sentence.
     """
-    plan = computed.plan
-    wanted_m = plan.wanted.detect_m
-    label = f'range at which the target is detected with probability {trimmed(plan.target.pd_wanted)}'
-    wanted_text = '' if wanted_m is None else f'at least {as_typed(*in_range_unit(wanted_m, units))}'
-    wanted = None if wanted_m is None else wanted_m / 1e3
+    plan, wanted_m = computed.plan, computed.plan.wanted.detect_m
+    probability = trimmed(plan.target.pd_wanted)
+    label = f'range at which the target is detected with probability {probability}'
     if not computed.with_echoes and wanted_m is None:
         return Finding('detection', label, None, '…', 'km')
+    text = '' if wanted_m is None else f'at least {as_typed(*in_range_unit(wanted_m, units))}'
     reached = computed.echoes.reached_km()
-    median = reached['median']
-    if median is None:
-        met = None if wanted_m is None else False
-        return Finding(
-            'detection',
-            label,
-            None,
-            'not reached',
-            'km',
-            wanted,
-            wanted_text,
-            met,
-            _spread(reached, units),
-            fault=f'the target is not detected at half of the speeds with probability {trimmed(plan.target.pd_wanted)}',
-        )
-    shown, unit = in_range_unit(median * 1e3, units)
-    limit = None if wanted_m is None else in_range_unit(wanted_m, units)[0]
-    return Finding(
-        'detection',
-        label,
-        median,
-        with_unit(shown, unit, limit),
-        'km',
-        wanted,
-        wanted_text,
-        at_least(median, wanted),
-        _spread(reached, units),
+    asked = Finding(
+        *('detection', label, None, 'not reached', 'km', None if wanted_m is None else wanted_m / 1e3, text),
+        detail=_spread(reached, units),
+    )
+    if reached['median'] is None:
+        fault = f'the target is not detected at half of the speeds with probability {probability}'
+        return asked.reached(None, 'not reached', met=None if wanted_m is None else False, fault=fault)
+    return _median(asked, reached['median'], units)
+
+
+def _median(asked, median_km, units):
+    """Return the finding with the range that half of the wanted speeds reach."""
+    wanted = asked.wanted
+    shown, unit = in_range_unit(median_km * 1e3, units)
+    limit = None if wanted is None else in_range_unit(wanted * 1e3, units)[0]
+    return asked.reached(
+        *(median_km, with_unit(shown, unit, limit)),
+        met=at_least(median_km, wanted),
         fault=f'the target is detected only to {with_unit(shown, unit, limit)}',
-        spare=float('inf') if wanted is None else (median - wanted) / wanted,
-        spare_text='' if wanted is None else f'the detection range, {with_unit(shown - limit, unit)} to spare',
+        spare=float('inf') if not wanted else (median_km - wanted) / wanted,
+        spare_text='' if not wanted else f'the detection range, {with_unit(shown - limit, unit)} to spare',
     )
 
 

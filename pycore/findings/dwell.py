@@ -1,7 +1,7 @@
-"""Findings on time on target and duty."""
+"""Findings on time on target, duty and range walk."""
 
 from pycore.findings.finding import Finding, at_most
-from pycore.wording import as_typed_percent, percent, significant, with_unit
+from pycore.wording import as_typed, as_typed_percent, percent, significant, with_unit
 
 
 def dwell(computed, units):
@@ -72,4 +72,35 @@ def duty(computed, units):
         fault=f'the duty reaches {percent(largest, limit)}',
         spare=float('inf') if not limit else (limit - largest) / limit,
         spare_text='' if not limit else f'the duty, {significant((limit - largest) * 100)} % to spare',
+    )
+
+
+def range_walk(computed, units):
+    """Return the finding on how many gates the fastest target crosses within one CPI.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    units : mapping
+        Shown units, with keys ``range`` and ``speed``. [unitless]
+
+    Returns
+    -------
+    finding : Finding
+        Value, what was wanted, and the sentence.
+    """
+    wanted = computed.plan.wanted.range_walk_gates
+    worst = float(max(computed.range_walk_gates))
+    return Finding(
+        'range-walk',
+        'range walk of the fastest target within one CPI',
+        worst,
+        with_unit(worst, 'gates', wanted),
+        'gates',
+        wanted,
+        '' if wanted is None else f'at most {as_typed(wanted, "gates")}',
+        at_most(worst, wanted),
+        f'{significant(computed.range_walk_set_gates)} gates over the whole set' if computed.plan.n > 1 else '',
+        fault=f'the fastest target walks through {with_unit(worst, "gates", wanted)}',
     )

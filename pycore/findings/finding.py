@@ -86,6 +86,25 @@ class Finding:
             return f'not met, accepted: {self.remark}' if self.remark else 'not met; no reason given'
         return self.remark or ''
 
+    def reached(self, value, value_text, **more):
+        """Return the finding with what the plan reaches.
+
+        Parameters
+        ----------
+        value : float, list or None
+            Full precision, in the plan's unit. [unit]
+        value_text : str
+            As it stands in the sentence. [unitless]
+        more : mapping
+            Verdict, detail, fault, spare. [unitless]
+
+        Returns
+        -------
+        finding : Finding
+            A copy with what was asked as it is.
+        """
+        return replace(self, value=value, value_text=value_text, **more)
+
     def with_remark(self, remarks):
         """Return the finding with the engineer's remark on it.
 

@@ -6,9 +6,6 @@ from pycore import pulse_pair, weather
 from pycore.findings.finding import Finding, at_least, at_most
 from pycore.wording import as_typed, between, in_range_unit, in_speed_unit, listed, percent, significant, with_unit
 
-OFTEN = 0.01
-"""Unfolding that fails more often than this is named in the verdict (our own choice). [unitless]"""
-
 
 def nyquist(computed, units):
     """Return the finding on the Nyquist speed of a single PRF, the largest of the set.
@@ -77,26 +74,26 @@ def extended_nyquist(computed, units):
     """
     wanted = computed.plan.document['weather']['wanted_mps']
     text = '' if wanted is None else f'at least ± {as_typed(*in_speed_unit(wanted, units))}'
-    pair, label = _pair(computed), 'Nyquist speed of two PRFs together'
+    asked = Finding('extended-nyquist', 'Nyquist speed of two PRFs together', None, 'none', 'm/s', wanted, text)
+    pair = _pair(computed)
     if pair is None:
-        met = None if wanted is None else False
-        return Finding('extended-nyquist', label, None, 'none', 'm/s', wanted, text, met, _NO_PAIR, fault=_NO_PAIR)
+        return asked.reached(None, 'none', met=_not_without(wanted), detail=_NO_PAIR, fault=_NO_PAIR)
     speed, unit = in_speed_unit(pair.nyquist_m_s, units)
     limit = None if wanted is None else in_speed_unit(wanted, units)[0]
-    return Finding(
-        'extended-nyquist',
-        label,
-        pair.nyquist_m_s,
-        f'± {with_unit(speed, unit, limit)}',
-        'm/s',
-        wanted,
-        text,
-        at_least(pair.nyquist_m_s, wanted),
-        f'the PRIs are as {pair.m} to {pair.n}',
-        fault=f'speeds unfold only to ± {with_unit(speed, unit, limit)}',
+    shown = f'± {with_unit(speed, unit, limit)}'
+    return asked.reached(
+        *(pair.nyquist_m_s, shown),
+        met=at_least(pair.nyquist_m_s, wanted),
+        detail=f'the PRIs are as {pair.m} to {pair.n}',
+        fault=f'speeds unfold only to {shown}',
         spare=float('inf') if not wanted else (pair.nyquist_m_s - wanted) / wanted,
         spare_text='' if not wanted else f'the extended Nyquist speed, {with_unit(speed - limit, unit)} to spare',
     )
+
+
+def _not_without(wanted):
+    """Return the verdict where there is no value to judge."""
+    return None if wanted is None else False
 
 
 def _deviations(computed):
@@ -159,23 +156,17 @@ def velocity_error(computed, units):
     """
     wanted = computed.plan.document['weather']['error_mps']
     text = '' if wanted is None else f'at most {as_typed(*in_speed_unit(wanted, units))}'
-    worst, label = max(_deviations(computed)), 'standard error of the mean speed'
+    asked = Finding('velocity-error', 'standard error of the mean speed', None, 'no end', 'm/s', wanted, text)
+    worst = max(_deviations(computed))
     if math.isinf(worst):
-        met = None if wanted is None else False
         fault = 'the echoes do not hold together from pulse to pulse'
-        return Finding('velocity-error', label, None, 'no end', 'm/s', wanted, text, met, fault, fault=fault)
+        return asked.reached(None, 'no end', met=_not_without(wanted), detail=fault, fault=fault)
     speed, unit = in_speed_unit(worst, units)
     limit = None if wanted is None else in_speed_unit(wanted, units)[0]
-    return Finding(
-        'velocity-error',
-        label,
-        worst,
-        with_unit(speed, unit, limit),
-        'm/s',
-        wanted,
-        text,
-        at_most(worst, wanted),
-        _coherence(computed),
+    return asked.reached(
+        *(worst, with_unit(speed, unit, limit)),
+        met=at_most(worst, wanted),
+        detail=_coherence(computed),
         fault=f'the standard error of the speed is {with_unit(speed, unit, limit)}',
         spare=float('inf') if not wanted else (wanted - worst) / wanted,
         spare_text='' if not wanted else f'the error of the speed, {with_unit(limit - speed, unit)} to spare',
