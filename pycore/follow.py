@@ -10,6 +10,7 @@ import numpy as np
 
 from pycore import ambiguity, detection, eclipsing, zones
 from pycore.clutter import folded_clutter_to_noise, late_share
+from pycore.cpi import Cpi
 from pycore.detection_map import canceller_residue
 from pycore.ghosts import ghosts
 from pycore.scnr import filter_outputs
@@ -116,22 +117,65 @@ def _part(computed, range_m):
     return next((part for part in parts if range_m <= part.range_m[1]), parts[-1])
 
 
-def _followed(computed, index, range_m, speed_m_s):
+@dataclass(frozen=True, slots=True)
+class Gate:
+    """What one PRF has in the gate of one target.
+
+    Parameters
+    ----------
+    cpi : Cpi
+        Pulses, window and notch of the CPI. [unitless]
+    received, power : float
+        Received share of an echo, and the power that eclipsing leaves of it. [unitless]
+    signal : float
+        The target's one-pulse signal-to-noise ratio, not eclipsed, less what a late echo loses. [unitless]
+    clutter : float array, shape P
+        One-pulse clutter-to-noise ratio of each patch, folded. [unitless]
+    """
+
+    cpi: Cpi
+    received: float
+    power: float
+    signal: float
+    clutter: np.ndarray
+
+
+def gate(computed, index, range_m):
+    """Return what one PRF has in the gate of a target.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    index : int
+        The PRF. [unitless]
+    range_m : float
+        True range of the target. [m]
+
+    Returns
+    -------
+    gate : Gate
+        Target, eclipsing and clutter.
+    """
     plan, part, patches = computed.plan, _part(computed, range_m), computed.echoes.patches
     cpi, opening = part.cpis[index], float(part.first_opening_m[index])
-    reach, blind = float(computed.unambiguous_range_m[index]), float(computed.blind_speed_m_s[index])
+    reach = float(computed.unambiguous_range_m[index])
     pri, pulse = float(plan.pri_s[index]), float(plan.pulse_s[index])
     share = float(eclipsing.received_share(range_m, pri, pulse, plan.recovery_s, plan.guard_s, plan.near))
-    power = float(received_power(share, plan.eclipsing_loss))
-    factor = part.factor[index]
-    ratio = np.array(
-        [
-            float(folded_clutter_to_noise(patch, range_m, reach, opening, scale))
-            for patch, scale in zip(patches, factor, strict=True)
-        ]
-    )
+    ratio = [
+        float(folded_clutter_to_noise(patch, range_m, reach, opening, scale))
+        for patch, scale in zip(patches, part.factor[index], strict=True)
+    ]
     signal = float(one_pulse_signal(part.strength_m4[index], range_m, opening)) * float(late_share(cpi, range_m)) ** 2
-    outputs = filter_outputs(cpi, speed_m_s, signal, patches, ratio, power)
+    return Gate(cpi, share, float(received_power(share, plan.eclipsing_loss)), signal, np.array(ratio))
+
+
+def _followed(computed, index, range_m, speed_m_s):
+    plan, patches = computed.plan, computed.echoes.patches
+    reach, blind = float(computed.unambiguous_range_m[index]), float(computed.blind_speed_m_s[index])
+    here = gate(computed, index, range_m)
+    share, ratio = here.received, here.clutter
+    outputs = filter_outputs(here.cpi, speed_m_s, here.signal, patches, ratio, here.power)
     reasons = _reasons(computed, index, range_m, speed_m_s)
     best = outputs.best if 'notch' not in reasons else -1
     snr, scnr = (float(outputs.target[best]), float(outputs.scnr[best])) if best >= 0 else (0.0, 0.0)
