@@ -5,15 +5,16 @@ it shows; a test holds the results to the findings.
 """
 
 from pycore.errors import InputError
-from pycore.holds_over import POINTS
 from pycore.margins import NOTE, asked_for
 from pycore.plan_document import shown
 from pycore.workings.blind import blind_speed
 from pycore.workings.decode import decode_range, decode_speed
 from pycore.workings.detection import detection
 from pycore.workings.dwell import duty, dwell, range_walk
-from pycore.workings.seen import largest_hole, must_see, unseen_crossing, unseen_inbound, visible
+from pycore.workings.seen import largest_hole, must_see, visible
+from pycore.workings.unseen import unseen_crossing, unseen_inbound
 from pycore.workings.weather import extended_nyquist, nyquist, second_trip, unfolding, velocity_error
+from pycore.worst_over import POINTS
 
 __all__ = ['working', 'workings']
 

@@ -112,3 +112,23 @@ def put_in(*texts):
         Parted by semicolons; what is empty is left out.
     """
     return '; '.join(text for text in texts if text)
+
+
+def interval(ends, scale, unit):
+    """Return an interval in a shown unit.
+
+    Parameters
+    ----------
+    ends : pair of float
+        From and to. [any]
+    scale : float
+        What one shown unit is. [same]
+    unit : str
+        The shown unit. [unitless]
+
+    Returns
+    -------
+    text : str
+        Such as ``'2 to 110 km'``.
+    """
+    return f'{shown(ends[0] / scale)} to {shown(ends[1] / scale, unit)}'

@@ -11,9 +11,10 @@ from pycore import api
 from pycore.computed import Computed
 from pycore.findings import findings, named
 from pycore.findings.rank import rank
-from pycore.holds_over import as_rows, held, judged, on_carrier, with_rain_at
+from pycore.holds_over import as_rows, held, judged
 from pycore.plan import read
 from pycore.wording import SHOWN_UNITS
+from pycore.worst_over import on_carrier, with_rain_at
 
 OPENING = json.loads((Path(__file__).parents[2] / 'webapp/examples/opening.json').read_text('utf-8'))['plan']
 CARRIERS = [2.2, 2.9]
