@@ -3,7 +3,7 @@
 
 const LATE_MS = 150; // the running line appears
 const LONG_MS = 1000; // and the word "computing"
-const PAUSE_MS = 400; // after the last edit of a run: what takes long is worked out then
+const PAUSE_MS = 800; // after the last edit of a run: what takes long is worked out then
 
 export function createAsking({ engine, state, figures, sizes, units, onLate, onAnswer, onFault }) {
   let opened = null; // a link's text, until the engine has read it
