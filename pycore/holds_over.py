@@ -59,12 +59,12 @@ def judged(computed, units):
     Returns
     -------
     findings : list of Finding
-        As :func:`pycore.findings.findings` gives them, where nothing is to be held.
+        As :func:`pycore.findings.findings` gives them, where nothing is to be held or judged.
     """
-    return [one.finding for one in held(computed, units)]
+    return [one.finding for one in held(computed, units, only_judged=True)]
 
 
-def held(computed, units):
+def held(computed, units, only_judged=False):
     """Return each finding with its worst over the interval of carriers.
 
     Parameters
@@ -73,12 +73,13 @@ def held(computed, units):
         What the plan gives. [unitless]
     units : mapping
         Shown units. [unitless]
+    only_judged : bool
+        Whether findings that are not judged are left at the plan's own carrier. [unitless]
 
     Returns
     -------
     held : list of Held
-        Without an interval of carriers, each its own worst. Where only what is judged is to be worked out, what is
-        not judged is its own worst too.
+        Without an interval of carriers, each its own worst.
     """
     over = _carriers(computed.plan)
     own = float(computed.plan.carrier_exact_hz[0]) / 1e9
@@ -86,7 +87,12 @@ def held(computed, units):
     if over is None:
         return [Held(one, one, own) for one in found]
     known = {}
-    return [_held(computed, one, over, own, known, units) for one in found]
+    return [
+        _held(computed, one, over, own, known, units)
+        if one.name.partition('.')[0] in _ON_CARRIER and (one.met is not None or not only_judged)
+        else Held(one, one, own)
+        for one in found
+    ]
 
 
 def _carriers(plan):
@@ -95,9 +101,6 @@ def _carriers(plan):
 
 def _held(computed, finding, over, own, known, units):
     """Find where one finding is worst, and judge it by that."""
-    base = finding.name.partition('.')[0]
-    if base not in _ON_CARRIER or (finding.met is None and not computed.with_echoes):
-        return Held(finding, finding, own)
 
     def at(carrier_ghz):
         if carrier_ghz not in known:

@@ -76,6 +76,13 @@ def test_a_plan_that_holds_over_nothing_has_the_findings_of_its_own_carrier():
     assert as_rows(computed, held(computed, SHOWN_UNITS)) is None
 
 
+def test_on_the_page_only_what_is_judged_is_searched():
+    computed = Computed(read(holding([2.7, 2.9])), with_echoes=False)
+    texts = {one.name: one.text for one in judged(computed, SHOWN_UNITS)}
+    assert 'the worst is' in texts['visible']
+    assert 'the worst is' not in texts['blind-speed']
+
+
 def test_an_interval_that_is_nowhere_worse_is_said_to_be_so():
     document = holding([2.8, 2.8000001])
     document['wanted']['visible_pct'] = 1.0
