@@ -33,8 +33,8 @@ def on_clock(pri_us, clock_mhz, unit='µs'):
     clock = Fraction(str(clock_mhz))
     count = max(1, round(exact * clock))
     rounded = as_number(Fraction(count) / clock)
-    allowed = 0 if unit in FAMILIES['frequency'] else MOST_COUNTS_OFF
-    return rounded, [] if abs(exact * clock - count) <= allowed else [_rounding(exact, unit, rounded, clock)]
+    is_on_it = abs(exact * clock - count) <= MOST_COUNTS_OFF
+    return rounded, [] if is_on_it else [_rounding(exact, unit, rounded, clock)]
 
 
 def _rounding(pri_us, unit, rounded, clock):

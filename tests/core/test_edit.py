@@ -8,6 +8,7 @@ import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
+from pycore.clock import on_clock
 from pycore.edit import apply
 from pycore.errors import InputError
 from pycore.plan import filled, read
@@ -91,6 +92,11 @@ def test_an_interval_off_the_clock_is_rounded_and_one_on_it_is_left_in_peace():
     assert typed('waveform.pri_us.0', '1 kHz') == (1000, [])
 
 
+def test_a_slow_clock_gives_one_count_at_least():
+    assert on_clock(0.2, 1) == (1, ['0.2 µs is off the clock; on the 1 MHz clock 1 µs.'])
+    assert on_clock(1e6 / 1020.408163265, 10, 'Hz') == (980, [])
+
+
 def test_another_clock_rounds_the_intervals_and_says_which():
     edited = apply(plan([980.1, 860.0]), {'key': 'radar.clock_mhz', 'text': '1'})
     assert edited.document['waveform']['pri_us'] == [980, 860]
@@ -131,6 +137,7 @@ def test_a_stepped_value_is_taken_as_it_is():
         ({'key': 'title', 'text': 'x' * 121}, 'title', '120'),
         ({'key': 'waveform.pri_us', 'text': '9 ' * 17}, 'waveform.pri_us', '16'),
         ({'key': 'waveform.pri_us', 'text': ''}, 'waveform.pri_us', 'PRI'),
+        ({'key': 'waveform.pri_us', 'text': '980 0'}, 'waveform.pri_us', 'got 0'),
         ({'key': 'waveform.kind', 'value': 'burst'}, 'waveform.kind', 'dwells or stagger'),
         ({'do': 'add-snow'}, '', 'add-snow'),
         ({'do': None}, '', 'none'),
