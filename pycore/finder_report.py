@@ -195,7 +195,9 @@ def marked(some):
     some : list of Better
         In the same order, ``on_front`` set.
     """
-    return [with_(one, on_front=bool(on)) for one, on in zip(some, front([_judged_by(one) for one in some]), strict=True)]
+    return [
+        with_(one, on_front=bool(on)) for one, on in zip(some, front([_judged_by(one) for one in some]), strict=True)
+    ]
 
 
 def _judged_by(one):
