@@ -272,6 +272,17 @@ def test_rain_starts_as_one_patch_and_goes_up_to_four():
     assert apply(four, {'key': 'rain.2.speed_mps', 'text': '5'}).document['rain'][2]['speed_mps'] == 5
 
 
+def test_the_last_patch_that_is_left_stands_alone_again():
+    two = done(done(plan(), 'add-rain').document, 'add-rain').document
+    assert done(two, 'remove-rain', index=1).document == done(plan(), 'add-rain').document
+
+
+def test_taking_the_weather_away_asks_about_targets_again():
+    weather = apply(plan(), {'key': 'purpose', 'value': 'weather'}).document
+    assert weather['weather']['width_mps'] == 2
+    assert done(weather, 'remove-weather').document == plan()
+
+
 def test_must_see_regions_are_added_inside_the_coverage_and_taken_away():
     start = plan(coverage={'range_km': [50, 60], 'speed_mps': [-20, 20]})
     more = done(start, 'add-must-see').document
