@@ -108,7 +108,9 @@ def follow(computed, range_m, speed_m_s):
     level = detection.set_threshold(computed.plan.target.false_alarm, computed.looks, computed.m)
     probability = float(set_probability(ratio, computed.m, level, computed.plan.target.fluctuation))
     seen = clear >= computed.m
-    return FollowedSet(prfs, clear, seen, probability, _ghosts(computed, prfs, range_m, speed_m_s) if seen else None)
+    sees = [not prf.reasons for prf in prfs]
+    others = ghosts_of(computed, range_m, speed_m_s, sees) if seen else None
+    return FollowedSet(prfs, clear, seen, probability, others)
 
 
 def _part(computed, range_m):
@@ -211,20 +213,45 @@ def _reasons(computed, index, range_m, speed_m_s):
     return answer[index].reasons
 
 
-def _ghosts(computed, prfs, range_m, speed_m_s):
-    """Return what else the PRFs that see the target would take it for."""
+def blur_half_widths(computed):
+    """Return how far from a candidate the true value may lie on each PRF.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+
+    Returns
+    -------
+    range_m, speed_m_s : float arrays, shape N
+        The decoder's blur times a gate, and times a filter. [m, m/s]
+    """
+    plan, blur = computed.plan, float(computed.decode_blur)
+    gate_m = eclipsing.METRES_PER_SECOND_OF_DELAY / plan.bandwidth_hz
+    return blur * gate_m, blur * plan.wavelength_m / (2.0 * plan.pulses * plan.pri_s)
+
+
+def ghosts_of(computed, range_m, speed_m_s, seen):
+    """Return what else the PRFs that see a target would take it for.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    range_m, speed_m_s : float
+        The target. [m, m/s]
+    seen : sequence of bool, length N
+        PRFs that see it. [unitless]
+
+    Returns
+    -------
+    ghosts : tuple of Ghost
+        In the coverage. [m, m/s]
+    """
     plan = computed.plan
-    blur = float(computed.decode_blur)
-    gate = eclipsing.METRES_PER_SECOND_OF_DELAY / plan.bandwidth_hz
-    width = plan.wavelength_m / (2.0 * plan.pulses * plan.pri_s)
-    return ghosts(
-        (range_m, speed_m_s),
-        (plan.range_m, plan.speed_m_s),
-        (computed.unambiguous_range_m, computed.blind_speed_m_s),
-        (blur * gate, blur * width),
-        computed.m,
-        [not prf.reasons for prf in prfs],
-    )
+    periods = computed.unambiguous_range_m, computed.blind_speed_m_s
+    axes = plan.range_m, plan.speed_m_s
+    return ghosts((range_m, speed_m_s), axes, periods, blur_half_widths(computed), computed.m, seen)
 
 
 def _followed_stagger(computed, prfs, range_m, speed_m_s):

@@ -7,9 +7,12 @@ published values and plain grids. Narrow spaces stand as plain ones in the table
 import json
 from pathlib import Path
 
+import numpy as np
 import pytest
 
 from pycore import columns
+from pycore.columns import decoding_words
+from pycore.columns.decoding import Decoded
 from pycore.columns.looks import looks
 from pycore.columns.zone_words import key_sentence
 from pycore.computed import Computed
@@ -95,3 +98,21 @@ def test_the_dwell_says_what_a_set_takes_and_what_is_left(dwell_ms, fill, text):
     }
     caption = columns.picture('dwell', Computed(read(plan)), SHOWN_UNITS)['caption'].replace(THIN_SPACE, ' ')
     assert text in caption
+
+
+@pytest.mark.parametrize(
+    ('m', 'ghosts', 'ruled_out', 'text'),
+    [
+        (1, 0, 0, 'no other range agrees on one PRF.'),
+        (3, 0, 1, 'one other range agrees on three PRFs; the speed rules it out.'),
+        (3, 0, 2, 'two other ranges agree on three PRFs; the speed rules both out.'),
+        (3, 0, 5, 'five other ranges agree on three PRFs; the speed rules all of them out.'),
+        (2, 1, 0, 'one other range agrees on two PRFs, in speed too: a ghost, dark.'),
+        (2, 2, 0, 'two other ranges agree on two PRFs, in speed too: ghosts, dark.'),
+        (2, 1, 3, 'four other ranges agree on two PRFs, one of them in speed too: a ghost, dark.'),
+        (2, 2, 3, 'five other ranges agree on two PRFs, two of them in speed too: ghosts, dark.'),
+    ],
+)
+def test_other_places_of_agreement_are_said_in_every_form(m, ghosts, ruled_out, text):
+    found = Decoded(None, np.zeros((1, 2)), np.zeros((ghosts, 2)), np.zeros((ruled_out, 2)), 0)
+    assert decoding_words.other_ranges(found, m) == text

@@ -424,3 +424,47 @@ def test_linear_axes_have_round_ticks(low, high, expected):
     from pycore.columns.axes import round_ticks
 
     assert round_ticks(low, high)[0] == pytest.approx(expected)
+
+
+GHOSTLY = {
+    'radar': {'carrier_ghz': 10.0, 'pulse_us': 1.0, 'recovery_us': 1.0},
+    'coverage': {'range_km': [5.0, 180.0], 'speed_mps': [-100.0, 500.0]},
+    'waveform': {'pri_us': [51.0, 53.0, 60.0, 63.0, 67.0, 84.0, 89.0, 93.0], 'pulses': 64, 'detect_m': 2},
+    'doppler': {'notch_mps': 6.0},
+}
+
+
+def test_places_of_agreement_are_the_ghosts_those_that_speed_rules_out_and_the_targets_own():
+    from pycore.columns.decoding import decoded
+    from pycore.columns.mark import marked
+
+    computed = Computed(read(GHOSTLY))
+    found = decoded(computed, marked(computed, {'range_km': 90.0, 'speed_mps': 100.0}))
+    assert (found.own[:, 0] <= 90e3).all()
+    assert (found.own[:, 1] >= 90e3).all()
+    # 63 and 84 µs agree again after 252 µs, which is 37.77 km; 90 km is eclipsed on 60 µs.
+    shifts = np.sort(np.concatenate((found.ghosts, found.ruled_out)).mean(axis=1)) - 90e3
+    for expected in (75_548.0, 37_774.0, -75_548.0, -37_774.0):
+        assert np.abs(shifts - expected).min() < 160.0
+    assert len(found.ghosts) + len(found.ruled_out) == len(shifts)
+
+
+def test_every_prf_that_sees_the_target_has_a_candidate_at_it_and_no_other_prf_has_any():
+    from pycore.columns.mark import marked
+
+    computed = Computed(read(GHOSTLY))
+    mark = marked(computed, {'range_km': 76.5, 'speed_mps': 100.0})
+    sees = [not one.reasons for one in mark.followed.prfs]
+    bars = columns.picture('decoding', computed, SHOWN_UNITS, SIZE, mark)['columns']['candidates']
+    assert 0 < sum(sees) < 8
+    for lane, seen in zip(7.5 - np.arange(8), sees, strict=True):
+        here = bars['y'] == lane
+        assert here.any() == seen
+        assert ((bars['left'][here] <= 76.5) & (bars['right'][here] >= 76.5)).any() == seen
+
+
+def test_a_decode_span_short_of_the_coverage_ends_in_the_figure():
+    bars = pictures(GHOSTLY, only=['decoding'])['decoding']['columns']['spans']
+    # The smallest least common multiple of two: 63 and 84 µs, 252 µs, 37.77 km.
+    assert bars['right'][0] == pytest.approx(37.774, abs=0.001)
+    assert bars['right'][1] < bars['right'][0]

@@ -2,9 +2,18 @@
 
 from bokeh.embed import json_item
 
-from webapp.figures import blind_speeds, blind_zones, detection, doppler_filters, dwell, eclipsed_ranges, trade_line
+from webapp.figures import (
+    blind_speeds,
+    blind_zones,
+    decoding,
+    detection,
+    doppler_filters,
+    dwell,
+    eclipsed_ranges,
+    trade_line,
+)
 
-_IN_ORDER = (blind_zones, trade_line, eclipsed_ranges, blind_speeds, doppler_filters, detection, dwell)
+_IN_ORDER = (blind_zones, trade_line, eclipsed_ranges, blind_speeds, decoding, doppler_filters, detection, dwell)
 _MODULES = {module.NAME: module for module in _IN_ORDER}
 
 
