@@ -57,7 +57,7 @@ def _limits(wanted, units):
     if wanted.hole_m_s is not None:
         parts.append(f'{trimmed(in_speed_unit(wanted.hole_m_s, units)[0])} {units["speed"]} wide')
     if len(parts) == 2:
-        return f'nowhere longer and wider than {" by ".join(parts)}'
+        return f'nowhere more than {" and ".join(parts)}'
     return f'nowhere more than {parts[0]}' if parts else ''
 
 

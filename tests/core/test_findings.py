@@ -179,7 +179,7 @@ def test_a_hole_that_is_not_allowed_is_named_in_the_fault():
     found = finding('largest-hole', wanted__hole_mps=2, wanted__hole_km=10)
     assert found.met is False
     assert spoken(found.fault).startswith('one hole is too large') or ' holes are too large' in found.fault
-    assert spoken(found.wanted_text) == 'nowhere longer and wider than 10 km long by 2 m/s wide'
+    assert spoken(found.wanted_text) == 'nowhere more than 10 km long and 2 m/s wide'
 
 
 @pytest.mark.parametrize(
