@@ -48,12 +48,12 @@ def picture(computed, units, size=None, mark=None):
         Columns, ranges, labels, ticks and words.
     """
     x, y = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)
-    count, blind = _counted(computed, size or SIZE)
+    count, blind, with_clutter = _counted(computed, size or SIZE)
     return {
         'title': TITLE,
         **words(computed, x, y),
         'columns': {
-            'map': {'image': classes(count, computed.looks, computed.m), **_frame(x, y)},
+            'map': {'image': classes(count, computed.looks, computed.m, with_clutter), **_frame(x, y)},
             **_regions(computed, x, y),
             'holes': _numbers(computed, x, y, blind),
             'target': ring(mark, x, y),
@@ -74,7 +74,7 @@ def _frame(x, y):
 
 
 def _counted(computed, size):
-    """Return the number of clear PRFs in every cell, and which cells another plan could see and this one does not."""
+    """Return the clear PRFs in every cell, the cells that another plan could see, and the count with clutter."""
     width, height = _cells_for(size)
     seen = computed.sight
     at_range, at_speed = zones.centres(seen.range_m, width), zones.centres(seen.speed_m_s, height)
@@ -82,7 +82,14 @@ def _counted(computed, size):
     could = [
         zones.clear_marks(spans, at) for spans, at in ((seen.floor_ranges, at_range), (seen.floor_speeds, at_speed))
     ]
-    return count, _Blind(count < seen.m, *could, seen.m)
+    return count, _Blind(count < seen.m, *could, seen.m), _with_clutter(computed, at_range, at_speed)
+
+
+def _with_clutter(computed, at_range, at_speed):
+    """Return the number of PRFs that clutter leaves clear as well; none without clutter, or of a stagger."""
+    if computed.is_stagger or not computed.echoes.patches:
+        return None
+    return zones.count_map_of_pieces(computed.sight.ranges, computed.echoes.pieces, at_range, at_speed)
 
 
 def _cells_for(size):

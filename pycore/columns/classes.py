@@ -1,21 +1,27 @@
 """The classes of the map of blind zones: what each cell is, never which colour it has.
 
 Fewer than M clear PRFs is dark (none: hatched at 45 degrees), at least M is light;
-the blind side of the M-of-N edge is drawn as a line.
+the blind side of the M-of-N edge is drawn as a line. What clutter covers of that light
+part is dotted.
 """
 
 from functools import lru_cache
 
 import numpy as np
 
-NONE, NONE_HATCH, TOO_FEW, TOO_FEW_EDGE, JUST_ENOUGH, MORE, ALL = range(7)
-"""Clear on none; its hatch; on too few; their edge; on exactly M; on more; on all N. [unitless]"""
+NONE, NONE_HATCH, TOO_FEW, TOO_FEW_EDGE, JUST_ENOUGH, MORE, ALL, DOT = range(8)
+"""Clear on none; its hatch; on too few; their edge; on exactly M; on more; on all N; under clutter. [unitless]"""
 
-NAMES = ('none', 'none-hatch', 'too-few', 'too-few-edge', 'just-enough', 'more', 'all')
+NAMES = ('none', 'none-hatch', 'too-few', 'too-few-edge', 'just-enough', 'more', 'all', 'dot')
 """The classes' names, in the order of their codes. [unitless]"""
 
 PITCH = 7
 """Distance of the hatch lines along a row. [px]"""
+
+DOT_PITCH = 8
+"""Distance of the dots along a row and between every second row. [px]"""
+
+_DOT = 2
 
 
 @lru_cache
@@ -26,7 +32,7 @@ def _class_of_count(n, m):
     return table.tobytes()
 
 
-def classes(count, n, m):
+def classes(count, n, m, with_clutter=None):
     """Return the class of every cell.
 
     Parameters
@@ -37,6 +43,8 @@ def classes(count, n, m):
         Number of PRFs. [unitless]
     m : int
         Number that must be clear. [unitless]
+    with_clutter : uint8 array, shape (V, R), or None
+        Number of PRFs that are clear of clutter too; none where there is no clutter. [unitless]
 
     Returns
     -------
@@ -55,4 +63,14 @@ def classes(count, n, m):
     code[(code == NONE) & inner & (row[:, None] == column)] = NONE_HATCH
     if m > 1:
         code[(code == TOO_FEW) & ~inner] = TOO_FEW_EDGE
+    if with_clutter is not None:
+        lost = (with_clutter < m) & ~blind
+        code[lost & _dots(count.shape)] = DOT
     return code
+
+
+def _dots(shape):
+    """Return a lattice of dots, every second row of them moved by half a step."""
+    row, column = np.arange(shape[0])[:, None], np.arange(shape[1])
+    moved = column + (row // (DOT_PITCH // 2)) % 2 * (DOT_PITCH // 2)
+    return (row % (DOT_PITCH // 2) < _DOT) & (moved % DOT_PITCH < _DOT)

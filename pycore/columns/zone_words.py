@@ -4,9 +4,10 @@ from dataclasses import dataclass, replace
 
 from pycore.columns.axes import Axis
 from pycore.columns.blind_parts import avoidable
-from pycore.wording import capitalised, count_word, percent
+from pycore.wording import capitalised, count_word, listed, percent, plural
 
 _MOST_IN_SUMMARY = 8
+_NOTHING = 1e-9
 _MOSTLY = 0.8
 """Part of its box from which on a hole is said to be where its box is. [unitless]"""
 
@@ -48,9 +49,10 @@ def words(computed, x, y):
     place = _Place(*seeable, (far - near) * (fast - slow))
     first = _holes_sentence(computed.holes, place)
     return {
-        'caption': f'{first} {key_sentence(computed.looks, computed.m)}',
+        'caption': ' '.join([first, key_sentence(computed.looks, computed.m), *_clutter(computed)]),
         'short': first,
-        'summary': f'{_counts(computed, x, y)} {first}{_listed(computed.holes, place)}',
+        'summary': f'{_counts(computed, x, y)} {first}{_listed(computed.holes, place)}'
+        + ''.join(f' {sentence}' for sentence in _clutter(computed)),
         'table': _table(computed.holes, x, y),
     }
 
@@ -153,6 +155,17 @@ def _shares(computed, n, shares):
     counts = ', '.join(f'by {count_word(i) if i else "none"} {share}' for i, share in enumerate(shares))
     enough = f'at least {count_word(computed.m)} of {count_word(n)}'
     return f'{percent(computed.share)} of it is seen by {enough}: {counts}'
+
+
+def _clutter(computed):
+    """Say what clutter takes of what eclipsing and notch leave."""
+    if computed.is_stagger or not computed.echoes.patches:
+        return []
+    names = dict.fromkeys(patch.name or 'a patch' for patch in computed.echoes.patches)
+    lost = computed.share - computed.echoes.share_with_clutter
+    if lost <= _NOTHING:
+        return [f'{capitalised(listed(names))} {plural(len(names), "covers", "cover")} nothing more.']
+    return [f'Dotted: on {percent(lost)} more {listed(names)} {plural(len(names), "stands", "stand")} above the noise.']
 
 
 def _listed(holes, place):

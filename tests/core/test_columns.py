@@ -468,3 +468,35 @@ def test_a_decode_span_short_of_the_coverage_ends_in_the_figure():
     # The smallest least common multiple of two: 63 and 84 µs, 252 µs, 37.77 km.
     assert bars['right'][0] == pytest.approx(37.774, abs=0.001)
     assert bars['right'][1] < bars['right'][0]
+
+
+RAINY = {**OPENING, 'rain': [{'range_km': [15.0, 45.0], 'cnr_db': 25.0, 'at_km': 20.0, 'speed_mps': -10.0}]}
+
+
+def test_what_clutter_covers_is_dotted_and_the_rest_of_the_map_stays_as_it_is():
+    size = {'width': 400, 'height': 300}
+    dry, wet = (
+        pictures(document, size=size, only=['blind-zones'])['blind-zones']['columns']['map']['image']
+        for document in (OPENING, RAINY)
+    )
+    dotted = wet == classes.DOT
+    assert (wet[~dotted] == dry[~dotted]).all()
+    assert (dry[dotted] >= classes.JUST_ENOUGH).all()
+    # Cells 0.27 km wide: it rains from 15 to 45 km, and nothing folds onto ranges below 129 km.
+    columns_with_dots = np.flatnonzero(dotted.any(axis=0)) * 0.27 + 2.0
+    assert columns_with_dots.min() >= 14.7
+    assert columns_with_dots.max() <= 45.0
+
+
+def test_dots_fill_an_eighth_of_what_clutter_covers():
+    count = np.full((80, 80), 2, dtype=np.uint8)
+    code = classes.classes(count, 2, 1, np.zeros_like(count))
+    assert (code == classes.DOT).mean() == pytest.approx(1 / 8, abs=0.01)
+
+
+def test_the_caption_says_what_clutter_takes_and_only_where_there_is_some():
+    dry, wet = (pictures(document, only=['blind-zones'])['blind-zones'] for document in (OPENING, RAINY))
+    computed = Computed(read(RAINY))
+    lost = 100 * (computed.share - computed.echoes.share_with_clutter)
+    assert f'Dotted: on {lost:.2f}{THIN_SPACE}% more rain stands above the noise.' in wet['caption']
+    assert 'Dotted' not in dry['caption']

@@ -7,11 +7,12 @@ from pathlib import Path
 import pytest
 
 from pycore.columns.classes import NAMES
-from webapp.figures.palette import CLASS_ROLES, PALETTE, SCHEMES
+from pycore.columns.detection import STEPS
+from webapp.figures.palette import CLASS_ROLES, PALETTE, SCHEMES, STEP_ROLES
 from webapp.figures.style import colours
 
 STYLE = Path(__file__).parents[2] / 'webapp' / 'page' / 'style.css'
-DARK_CLASSES = ('none', 'none-hatch', 'too-few', 'too-few-edge')
+DARK_CLASSES = ('none', 'none-hatch', 'too-few', 'too-few-edge', 'dot')
 LIGHT_CLASSES = ('just-enough', 'more', 'all')
 
 
@@ -51,6 +52,15 @@ def test_seen_rises_to_the_page_in_at_most_three_steps(scheme):
     assert levels == sorted(levels, reverse=True)
     assert levels[-1] == 1
     assert all(above / below > 1.08 for above, below in pairwise(levels))
+
+
+@pytest.mark.parametrize('scheme', SCHEMES)
+def test_steps_of_detection_rise_evenly_to_the_page_and_part_most_at_what_is_wanted(scheme):
+    levels = [contrast(colours(STEP_ROLES[name], scheme), colours('paper', scheme)) for name in STEPS]
+    ratios = [above / below for above, below in pairwise(levels)]
+    assert levels[-1] == 1
+    assert min(ratios) > 1.2
+    assert max(ratios) == ratios[2]
 
 
 @pytest.mark.parametrize('scheme', SCHEMES)

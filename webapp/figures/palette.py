@@ -23,9 +23,9 @@ PALETTE = {
     'axis': ('#9aa2ac', '#59626f'),
     'hair': ('#c9ccce', '#3a424d'),
     'band': ('#f0ede4', '#1f252d'),
-    'hardly': ('#333d4d', '#d3cfc4'),
+    'hardly': ('#3a4454', '#d3cfc4'),
     'seldom': ('#657182', '#9aa0a5'),
-    'often': ('#9aa6b2', '#67717c'),
+    'often': ('#8b97a4', '#707a85'),
     'enough': ('#dbe5ea', '#29343f'),
     'asked': ('#dcebf0', '#1d323b'),
 }
@@ -39,6 +39,7 @@ CLASS_ROLES = {
     'just-enough': 'pale',
     'more': 'paler',
     'all': 'paper',
+    'dot': 'ink',
 }
 """The role that each class of the map of blind zones is drawn in. [unitless]"""
 
