@@ -14,8 +14,9 @@ import numpy as np
 from pycore import clutter, clutter_pieces, detection, filters, improvement, notch, target, visibility
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.cpi import cpis
-from pycore.reach import reach, reach_over
+from pycore.reach import enough_over_half, reach_over
 from pycore.response import binomial_weights
+from pycore.speed_samples import best_gain, sampled_speeds
 
 _STAGGER_SPEEDS = 512
 """Speeds at which a stagger's reach is looked at. [unitless]"""
@@ -266,27 +267,61 @@ class Echoes:
     @cached_property
     def reach(self):
         """How far the target is detected with the wanted probability; ``None`` where a canceller gives no output."""
-        plan, computed = self.plan, self.computed
-        wanted, case, part = plan.target.pd_wanted, plan.target.fluctuation, self.parts[-1]
         if self.outputs < 1:
             return None
-        level = detection.set_threshold(plan.target.false_alarm, computed.looks, computed.m, self.outputs)
-        limits = float(np.sort(part.first_opening_m)[computed.m - 1]), 4.0 * plan.range_m[1]
-        if not computed.is_stagger:
-            return reach(
-                part.cpis,
-                part.strength_m4,
-                computed.m,
-                level,
-                case,
-                wanted,
-                part.first_opening_m,
-                plan.range_m[1],
-                plan.speed_m_s,
-            )
+        asked = self.plan.target
+        return reach_over(
+            *self._processed, self._set_m, self._level, asked.fluctuation, asked.pd_wanted, self._limits_m, self.outputs
+        )
+
+    def half_reach(self, range_m):
+        """Return whether the target is detected with the wanted probability at a range over half of the speeds.
+
+        Parameters
+        ----------
+        range_m : float
+            A range. [m]
+
+        Returns
+        -------
+        reached : bool
+            Whether the median of :attr:`reach` is at least that range, without looking for it.
+        """
+        nearest, farthest = self._limits_m
+        if self.outputs < 1 or range_m > farthest:
+            return False
+        _, length, strength = self._processed
+        asked = self.plan.target
+        ratio = strength / max(range_m, nearest) ** 4
+        return enough_over_half(
+            length, ratio, self._set_m, self._level, asked.fluctuation, asked.pd_wanted, self.outputs
+        )
+
+    @property
+    def _set_m(self):
+        return 1 if self.computed.is_stagger else self.computed.m
+
+    @cached_property
+    def _level(self):
+        computed = self.computed
+        return detection.set_threshold(self.plan.target.false_alarm, computed.looks, computed.m, self.outputs)
+
+    @property
+    def _limits_m(self):
+        """The nearest and the farthest range that a reach is looked for at. [m]"""
+        return float(np.sort(self.parts[-1].first_opening_m)[self.computed.m - 1]), 4.0 * self.plan.range_m[1]
+
+    @cached_property
+    def _processed(self):
+        """Speeds, the length that each stands for, and the strength behind the processing on each look."""
+        part = self.parts[-1]
+        if not self.computed.is_stagger:
+            speed, length = sampled_speeds(part.cpis, self.computed.m, self.plan.speed_m_s)
+            gain = np.stack([best_gain(cpi, speed) for cpi in part.cpis], axis=1)
+            return speed, length, gain * part.strength_m4
         speed, length = self._stagger_speeds()
         gain = self.computed.response.response.power(speed) * part.strength_m4[0] * self.outputs
-        return reach_over(speed, length, gain[:, None], 1, level, case, wanted, limits, self.outputs)
+        return speed, length, gain[:, None]
 
     def _stagger_speeds(self):
         """Middles of equal steps of the wanted speeds, those in the notch around zero left out."""

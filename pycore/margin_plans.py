@@ -40,7 +40,12 @@ class Tried:
         if (path, value) not in self._known:
             self._known[path, value] = self._computed(path, value)
         computed = self._known[path, value]
-        return 'refused' if computed is None else named(computed, name, SHOWN_UNITS).met
+        if computed is None:
+            return 'refused'
+        if name == 'detection':
+            # The verdict alone: to look for the range itself would take fifty times as long.
+            return computed.echoes.half_reach(computed.plan.wanted.detect_m)
+        return named(computed, name, SHOWN_UNITS).met
 
     def _computed(self, path, value):
         try:

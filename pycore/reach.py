@@ -108,6 +108,37 @@ def reach_over(speed_m_s, length_m_s, strength_m4, m, threshold, case, wanted, l
     return Reach(*_by_length(range_m, length_m_s), speed_m_s, length_m_s, range_m)
 
 
+def enough_over_half(length_m_s, mean, m, threshold, case, wanted, outputs=1):
+    """Return whether a wanted probability of detection is reached over half of the speeds.
+
+    Parameters
+    ----------
+    length_m_s : float array, shape V
+        Length of the speed axis that each speed stands for. [m/s]
+    mean : float array, shape V × N
+        Signal-to-noise ratio behind the processing. [unitless]
+    m : int
+        Number of CPIs that must detect it. [unitless]
+    threshold : float
+        y of every CPI. [unitless]
+    case : str
+        One of ``swerling.CASES``. [unitless]
+    wanted : float
+        Wanted probability of detection. [unitless]
+    outputs : int
+        Independent outputs of each CPI whose powers are added. [unitless]
+
+    Returns
+    -------
+    enough : bool
+        ``False`` where there are no speeds.
+    """
+    if not len(length_m_s):
+        return False
+    found = set_probability(mean, m, threshold, case, outputs, _STRENGTH_STEP)
+    return bool(length_m_s[found >= wanted].sum() >= 0.5 * length_m_s.sum())
+
+
 def _needed_factor(gain, m, threshold, case, wanted, outputs):
     """Return by what each row of signal-to-noise must be multiplied to reach a probability; inf if by nothing.
 

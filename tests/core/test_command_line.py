@@ -154,7 +154,10 @@ def test_timing_prints_whole_counts(saved, capsys):
 # --- bad input ---------------------------------------------------------------------------------------------------
 
 BAD = {
-    'a key out of its limits': (changed(radar__pulse_us=-1), ['radar.pulse_us', 'from 0.01 to 10', '10 000 µs; got −1']),
+    'a key out of its limits': (
+        changed(radar__pulse_us=-1),
+        ['radar.pulse_us', 'from 0.01 to 10', '10 000 µs; got −1'],
+    ),
     'a pulse longer than a PRI': (changed(radar__pulse_us=900), ['radar.pulse_us', 'shorter than every PRI', '900']),
     'a PRI off the clock': (changed(waveform__pri_us=[980.05]), ['waveform.pri_us.0', '980.05', '980 and 980.1']),
     'an interval backwards': (changed(coverage__range_km=[50, 10]), ['coverage.range_km', 'from 50 to 10']),

@@ -197,3 +197,17 @@ def test_margins_are_in_the_assessment_only_where_they_are_asked_for():
     assert list(asked) == ['dwell', 'duty']
     assert asked == {name: api.margins_of(plan, name)['margins'] for name in asked}
     json.dumps(asked, allow_nan=False)
+
+
+@pytest.mark.parametrize('name', EXAMPLES)
+@pytest.mark.parametrize('wanted', [0.1, 30.0, 50.0, 55.9, 56.1, 60.0, 70.0, 102.2, 102.3, 5000.0])
+def test_the_quick_verdict_on_detection_is_that_of_the_finding(name, wanted):
+    document = {**EXAMPLES[name], 'wanted': {**EXAMPLES[name]['wanted'], 'detect_km': wanted}}
+    computed = Computed(read(document), with_echoes=False)
+    assert computed.echoes.half_reach(wanted * 1e3) is named(computed, 'detection', SHOWN_UNITS).met
+
+
+def test_of_a_canceller_without_outputs_nothing_is_detected():
+    plan = {'waveform': {'pri_us': [1000, 1100], 'kind': 'stagger', 'pulses': 2}, 'wanted': {'detect_km': 5}}
+    computed = Computed(read(plan), with_echoes=False)
+    assert computed.echoes.half_reach(5e3) is named(computed, 'detection', SHOWN_UNITS).met is False
