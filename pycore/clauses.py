@@ -130,7 +130,10 @@ CLAUSES = (
 )
 """Clauses in the order of the paragraph; ``short`` ones stay when it sticks to the top of the window."""
 
-PATCH = '{@.name} from {@.range_km.0|bare} to {@.range_km.1}: {@.cnr_db} above noise at {@.at_km}, moving at {@.speed_mps} ({goes @.speed_mps}).'
+PATCH = (
+    '{@.name} from {@.range_km.0|bare} to {@.range_km.1}: {@.cnr_db} above noise at {@.at_km}, '
+    'moving at {@.speed_mps} ({goes @.speed_mps}).'
+)
 """The sentence of each patch where rain is a list of them; ``@`` is the patch."""
 
 ALSO = (
