@@ -55,6 +55,8 @@ def test_with_a_later_figure_in_view_the_pulse_can_be_changed_and_the_verdict_re
 
 
 def test_when_the_paragraph_sticks_nothing_of_it_is_doubled_and_nothing_moves(opened):
+    for name in ('Fig. 1', 'Fig. 2', 'Fig. 3', 'Fig. 4'):
+        expect(opened.page.get_by_role('figure', name=name).get_by_text('As a table')).to_be_visible()
     height = opened.page.evaluate('document.documentElement.scrollHeight')
     opened.page.get_by_role('figure', name='Fig. 4').scroll_into_view_if_needed()
     expect(opened.page.locator('.plan.stuck')).to_be_visible()
