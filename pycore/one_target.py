@@ -120,9 +120,6 @@ def _received(pri_s, range_m, pulse_s, recovery_s, guard_s, near):
         shares = [received_share(range_m, pri, pulse_s, recovery_s, guard_s, near) for pri in pri_s.tolist()]
         return np.array(shares, dtype=float)
     delay = np.mod(range_m / METRES_PER_SECOND_OF_DELAY, pri_s)
-    heard = np.zeros(pri_s.size)
-    # The echo can run on into the interval after the next pulse.
-    for later in (0.0, 1.0):
-        opens, closes = pulse_s + recovery_s + later * pri_s, pri_s - guard_s + later * pri_s
-        heard += np.maximum(np.minimum(delay + pulse_s, closes) - np.maximum(delay, opens), 0.0)
+    # What of the echo comes after the next pulse has begun is not heard: that pulse is as long as the echo.
+    heard = np.minimum(delay + pulse_s, pri_s - guard_s) - np.maximum(delay, pulse_s + recovery_s)
     return np.clip(heard / pulse_s, 0.0, 1.0)

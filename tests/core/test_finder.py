@@ -95,7 +95,7 @@ CASES = SimpleNamespace(
     late=replace(SMALL, places=(EIGHT_PULSES,) * 4, time_s=9e-6 * 225, decode='none'),
     kept=replace(THREE, m=2, keep=((1, 55),), avoid=((58, 60),), apart_counts=3),
     region=replace(THREE, m=2, must_see=(Region('near', (5e3, 9e3), (100.0, 300.0), 0.9),)),
-    holes=replace(THREE, hole_m=400.0, hole_m_s=20.0, speed_m_s=(0.0, 900.0)),
+    holes=replace(THREE, hole_m=250.0, hole_m_s=8.0, speed_m_s=(0.0, 900.0)),
     unseen=replace(THREE, speed_m_s=(20.0, 600.0), unseen_s=40.0),
     two_kinds=replace(SMALL, places=(EIGHT_PULSES, OTHER_CARRIER, EIGHT_PULSES), pri_counts=(50, 62), apart_counts=0),
 )
