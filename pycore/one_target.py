@@ -11,7 +11,6 @@ import numpy as np
 from pycore.eclipsing import METRES_PER_SECOND_OF_DELAY, clear_ranges, received_share
 from pycore.stagger import notch_clear_speeds
 
-
 AT_REST_M_S = 1e-9
 """A target no faster than this stands still. [m/s]"""
 
