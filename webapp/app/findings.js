@@ -22,6 +22,7 @@ export function createFindings(list, onRemark) {
       const waiting = document.createElement('li');
       waiting.textContent = '…';
       list.replaceChildren(waiting);
+      for (const { node } of items.values()) delete node.dataset.met; // another plan's verdict does not flip
     },
   };
 }
