@@ -65,7 +65,9 @@ def test_findings_after_an_edit_are_exactly_what_the_command_line_prints(live):
     plan = opening_plan(live)
     plan['radar']['pulse_us'] = 1.7
     live.commit(PULSE, '1.7')
-    expect(live.finding('detection')).not_to_have_attribute('data-value', '')  # it takes long, and comes after the others
+    expect(live.finding('detection')).not_to_have_attribute(
+        'data-value', ''
+    )  # it takes long, and comes after the others
 
     assert on_the_page(live) == {name: numbers(value) for name, value in assessed(plan).items()}
 

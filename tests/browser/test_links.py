@@ -49,7 +49,9 @@ def plan_with(**head):
 def test_the_address_follows_an_edit(note):
     note.open().ready().commit('radar.pulse_us', '1.7')
 
-    expect(note.page).to_have_url(f'{note.address}#{link.write({**OPENING, "radar": {**OPENING["radar"], "pulse_us": 1.7}})}')
+    expect(note.page).to_have_url(
+        f'{note.address}#{link.write({**OPENING, "radar": {**OPENING["radar"], "pulse_us": 1.7}})}'
+    )
 
 
 def test_a_link_opened_in_a_fresh_browser_shows_the_same_plan_and_the_same_numbers(note, site, chrome, watched):

@@ -146,7 +146,9 @@ def test_the_dark_page_follows_the_system(note):
 
 
 def test_on_a_phone_nothing_is_wider_than_the_screen_and_a_tap_opens_the_strip(chrome, site, watched, note):
-    page = watched(chrome, (site.address, 'data:', 'blob:'), viewport={'width': 390, 'height': 844}, has_touch=True, is_mobile=True)
+    page = watched(
+        chrome, (site.address, 'data:', 'blob:'), viewport={'width': 390, 'height': 844}, has_touch=True, is_mobile=True
+    )
     phone = type(note)(page, site.address).open().ready()
     assert page.evaluate('document.documentElement.scrollWidth') <= 390
 
