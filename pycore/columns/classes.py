@@ -69,8 +69,9 @@ def classes(count, n, m, with_clutter=None):
     return code
 
 
+@lru_cache(maxsize=4)
 def _dots(shape):
-    """Return a lattice of dots, every second row of them moved by half a step."""
+    """Return a lattice of dots, every second row of them moved by half a step; kept, as a map keeps its size."""
     row, column = np.arange(shape[0])[:, None], np.arange(shape[1])
     moved = column + (row // (DOT_PITCH // 2)) % 2 * (DOT_PITCH // 2)
     return (row % (DOT_PITCH // 2) < _DOT) & (moved % DOT_PITCH < _DOT)
