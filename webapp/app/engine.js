@@ -1,14 +1,14 @@
 // Starts the engine in its worker and asks it. Knows the messages and why a start fails; nothing of Pyodide, plans or figures.
 // What it was asked rejects with an Error that carries `field` or `traceback`; once failed, it rejects all, now and later.
 
-import { partOfPage, hasPart } from './payload.js';
+import { hasPart, inflated, packedPart } from './payload.js';
 import { revived } from './arrays.js';
 
 const PARTS = ['wasm', 'stdlib', 'numpy', 'core'];
 const PATIENCE_MS = 60000; // for one stage: a slow machine needs some 15 s for all of them
 const SWITCHED_OFF = 'WebAssembly is switched off in this browser, and the engine needs it (some security settings do this)';
 
-export function startEngine({ payload = partOfPage, onStage = () => {}, onFail = () => {} } = {}) {
+export function startEngine({ payload = packedPart, onStage = () => {}, onFail = () => {} } = {}) {
   const engine = { worker: null, failure: null, count: 0, waiting: new Map() };
   const ready = new Promise((resolve, reject) => Object.assign(engine, { isReady: resolve, isBroken: reject }));
   ready.catch(() => {}); // a failure is told by onFail, whether or not somebody waits
@@ -34,6 +34,7 @@ export function startEngine({ payload = partOfPage, onStage = () => {}, onFail =
     else if (data.stage) stage(data.stage);
     else if (data.ready) {
       watch.end();
+      performance.mark('engine is ready');
       engine.isReady();
     } else settle(engine, data);
   }
@@ -50,14 +51,15 @@ export function startEngine({ payload = partOfPage, onStage = () => {}, onFail =
     if (typeof WebAssembly === 'undefined') throw new Error(SWITCHED_OFF);
     stage('parts of the engine');
     const names = await partNames();
-    const worker = payload('worker').then((script) => openWorker(script, names.includes('snapshot')));
+    const worker = payload('worker').then((bytes) => inflated('worker', bytes)).then((script) => openWorker(script, names.includes('snapshot')));
     await Promise.all([worker, ...names.map(async (name) => { // all at once, while the worker starts
-      const bytes = await payload(name);
+      const bytes = await payload(name); // packed: unpacking is left to the worker, this thread paints the note
       (await worker).postMessage({ part: name, bytes }, [bytes.buffer]);
     })]);
   }
 
   function openWorker(script, snapshot) {
+    performance.mark('engine starts');
     engine.worker = startWorker(script);
     engine.worker.onmessage = heard;
     engine.worker.onerror = (event) => {

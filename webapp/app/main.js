@@ -11,6 +11,7 @@ import { createHead } from './head.js';
 import { createKeys } from './keys.js';
 import { openedPlan } from './link.js';
 import { createPage } from './page.js';
+import { packedPart } from './payload.js';
 import { createQuantities } from './quantities.js';
 import { flipped } from './quiet.js';
 import { createState } from './state.js';
@@ -34,7 +35,10 @@ const head = createHead({ opening, state, status, address, hands, page, keys, qu
 let findings = opening.answer.findings;
 let waiting = []; // what is to be done when the answer to an edit stands on the page
 
-const engine = startEngine({ onFail: failed });
+// The engine waits until the note is painted: on a busy machine both would be late.
+let painted = null;
+const first = new Promise((resolve) => { painted = resolve; });
+const engine = startEngine({ payload: (name) => first.then(() => packedPart(name)), onFail: failed });
 const asking = createAsking({ engine, state, figures: page.pictures.visible, sizes, units: () => quantities.units, onLate: head.late, onAnswer: answered, onFault: fault });
 
 function answered(answer, request) {
@@ -97,6 +101,7 @@ async function begin() {
   root.dataset.engine = 'starting';
   if (address.opened) state.begin(await readLink(address.opened) ?? opening.answer.plan);
   else await page.paint(opening.answer, 0);
+  painted();
   await engine.ready;
   root.dataset.engine = 'ready';
   page.redraw();

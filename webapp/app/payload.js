@@ -8,9 +8,13 @@ window.PULSEWRIGHT = Object.assign(window.PULSEWRIGHT ?? {}, {
 });
 
 export async function partOfPage(name) {
+  return inflated(name, await packedPart(name));
+}
+
+export async function packedPart(name) {
   if (!arrived(block(name))) await parsed();
   const text = block(name)?.textContent ?? (await delivered(name));
-  return inflated(name, bytesOf(name, text));
+  return bytesOf(name, text);
 }
 
 export async function hasPart(name) {
@@ -61,7 +65,7 @@ function loopedBytes(binary) {
   return bytes;
 }
 
-async function inflated(name, bytes) {
+export async function inflated(name, bytes) {
   if (typeof DecompressionStream === 'undefined') throw new Error('this browser cannot unpack gzip (it needs one of 2023 or later)');
   try {
     const stream = new Blob([bytes]).stream().pipeThrough(new DecompressionStream('gzip'));

@@ -20,6 +20,15 @@ function part(name) {
   return parts.get(name);
 }
 
+async function unpack(name, bytes) {
+  try {
+    const stream = new Blob([bytes]).stream().pipeThrough(new DecompressionStream('gzip'));
+    part(name).arrive(new Uint8Array(await new Response(stream).arrayBuffer()));
+  } catch {
+    fail(new Error(`the part "${name}" of this page is damaged or incomplete`));
+  }
+}
+
 function fail(error) {
   postMessage({ failed: { name: error?.name ?? 'Error', message: String(error?.message ?? error) } });
 }
@@ -107,7 +116,7 @@ function reply({ id, action, args }) {
 
 onmessage = ({ data }) => {
   if (data.start) start(data.start).catch(fail);
-  else if (data.part) part(data.part).arrive(data.bytes);
+  else if (data.part) unpack(data.part, data.bytes);
   else {
     try {
       reply(data);

@@ -41,11 +41,17 @@ def content(source):
         return file.read()
 
 
-def worded(tree):
-    """Return a module whose classes have a word for a docstring: where there is none, dataclass writes one, slowly."""
+def quick(tree):
+    """Return a module of ours whose records are made in half the time: every one of them is made while the page waits.
+
+    Where a class has no word for a docstring, dataclass writes one; and for slots it makes each class twice. The tests,
+    which run outside the browser, keep both.
+    """
     for node in ast.walk(tree):
         if isinstance(node, ast.ClassDef):
             node.body.insert(0, ast.parse('__doc__ = " "').body[0])
+            for call in (mark for mark in node.decorator_list if isinstance(mark, ast.Call)):
+                call.keywords = [keyword for keyword in call.keywords if keyword.arg != 'slots']
     return ast.fix_missing_locations(tree)
 
 
@@ -55,7 +61,7 @@ def compiled(path, data, job):
         return path, data
     text = b'' if path in job['blank'] else data
     tree = ast.parse(text, path, optimize=job['optimize'])
-    tree = tree if job['bare'] else worded(tree)
+    tree = tree if job['bare'] else quick(tree)
     code = compile(tree, path, 'exec', dont_inherit=True, optimize=job['optimize'])
     code = bare(code) if job['bare'] else code
     header = importlib.util.MAGIC_NUMBER + struct.pack('<I', UNCHECKED) + importlib.util.source_hash(data)
