@@ -12,7 +12,7 @@ import numpy as np
 
 from pycore import ambiguity, decoding, dwell, eclipsing, floor, holes, patterns, sight, stagger, unseen, visibility
 from pycore.crossings import clear_speeds
-from pycore.decode_blur import default_blur, gate_counts, motion_counts, range_half_widths
+from pycore.decoding.blur import default_blur, gate_counts, motion_counts, range_half_widths
 from pycore.echoes import Echoes
 from pycore.spans import Spans
 

@@ -12,7 +12,7 @@ import numpy as np
 
 from pycore import ambiguity, decoding, eclipsing, filters, floor, improvement, response, stagger, unseen, windows
 from pycore.clutter import Clutter, clutter_to_noise, pulse_factor
-from pycore.decode_blur import default_blur, gate_counts
+from pycore.decoding.blur import default_blur, gate_counts
 from pycore.detection import false_alarm_per_cpi
 from pycore.dwell import time_on_target, time_used
 from pycore.eclipsing_losses import eclipsing_loss

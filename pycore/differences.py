@@ -2,7 +2,7 @@
 
 from pycore.findings.finding import NOT_ASKED
 from pycore.findings.rank import rank
-from pycore.plan_document import TREE
+from pycore.plan.document import TREE
 from pycore.sentence import key_of
 from pycore.shown import shown_value
 

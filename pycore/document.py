@@ -6,7 +6,7 @@ import re
 from pycore import link
 from pycore.edit import apply
 from pycore.errors import InputError
-from pycore.plan_document import shown
+from pycore.plan.document import shown
 
 _DEEPEST = 40
 _MOST_DIGITS = 400

@@ -10,7 +10,7 @@ from dataclasses import dataclass
 from fractions import Fraction
 
 from pycore.errors import InputError
-from pycore.plan_document import checked_number, limits_text, shown
+from pycore.plan.document import checked_number, limits_text, shown
 from pycore.units import ALONE, FAMILIES, unit_of
 from pycore.wording import MINUS, trimmed
 

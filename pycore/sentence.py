@@ -10,8 +10,8 @@ page; ``tests/core/sentences.json`` holds the two against each other.
 import re
 
 from pycore.clauses import ALSO, CLAUSES, NOT_IN_ALSO, PATCH
-from pycore.plan_keys import BY_PATH, GROUPS, JUDGED, OPTIONAL_RECORDS
-from pycore.plan_paths import key_of, value_at
+from pycore.plan.keys import BY_PATH, GROUPS, JUDGED, OPTIONAL_RECORDS
+from pycore.plan.paths import key_of, value_at
 from pycore.shown import shown_digits, shown_unit, shown_value
 from pycore.wording import SHOWN_UNITS
 

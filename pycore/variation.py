@@ -4,7 +4,7 @@ from fractions import Fraction
 
 from pycore.edit import apply
 from pycore.errors import InputError
-from pycore.plan_document import shown
+from pycore.plan.document import shown
 from pycore.quantity import as_number
 from pycore.sentence import key_of
 

@@ -4,7 +4,7 @@ from dataclasses import replace
 from fractions import Fraction
 
 from pycore.constants import SPEED_OF_LIGHT_M_S
-from pycore.plan_keys import BY_PATH
+from pycore.plan.keys import BY_PATH
 
 POINTS = 65
 """Points that an interval is first looked at in. [unitless]"""

@@ -15,8 +15,8 @@ from concurrent.futures.process import BrokenProcessPool
 
 from pycore.errors import InputError
 from pycore.finder import SLICE_STEPS, Search, run_slice, slices
-from pycore.finder_plan import as_found, limits_of
-from pycore.finder_words import verdict
+from pycore.finder.plan import as_found, limits_of
+from pycore.finder.words import verdict
 
 PROGRESS_EVERY_S = 0.5
 """Time between two lines of progress. [s]"""
@@ -30,7 +30,7 @@ def find(plan, asked, seconds, steps, seed, workers, cluster, most=10, out=sys.s
     plan : dict
         The plan whose limits hold where none is asked. [plan's units]
     asked : mapping
-        Limits, as in :data:`pycore.finder_plan.ASKED`. [unitless]
+        Limits, as in :data:`pycore.finder.plan.ASKED`. [unitless]
     seconds : float or None
         Time allowance. [s]
     steps : int or None

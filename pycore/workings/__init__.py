@@ -6,7 +6,7 @@ it shows; a test holds the results to the findings.
 
 from pycore.errors import InputError
 from pycore.margins import NOTE, asked_for
-from pycore.plan_document import shown
+from pycore.plan.document import shown
 from pycore.workings.blind import blind_speed
 from pycore.workings.decode import decode_range, decode_speed
 from pycore.workings.detection import detection

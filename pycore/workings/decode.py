@@ -4,8 +4,8 @@ from fractions import Fraction
 
 from pycore.congruence import exact_span
 from pycore.constants import SPEED_OF_LIGHT_M_S
-from pycore.decode_blur import gate_counts, motion_counts, range_half_widths
 from pycore.decoding import blind_speeds
+from pycore.decoding.blur import gate_counts, motion_counts, range_half_widths
 from pycore.workings.line import DEFINITION, Line, Working, each, put_in, shown
 
 _NOTE = 'A span is a separation of two hypotheses about one target; two targets can make ghosts nearer than it.'

@@ -13,7 +13,7 @@ import numpy as np
 
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.finder import Search, begun
-from pycore.finder_limits import Cycle, Limits, Place
+from pycore.finder.limits import Cycle, Limits, Place
 from pycore.response import binomial_weights
 
 PLACE = Place(0.03, 1e-6, 17.0, carrier_hz=SPEED_OF_LIGHT_M_S / 0.03)

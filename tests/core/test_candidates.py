@@ -8,7 +8,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from pycore.candidates import agreement, comb, unfolded
-from pycore.decode_trials import coincidence_score, congruence_score, drawn_reports
+from pycore.decoding.trials import coincidence_score, congruence_score, drawn_reports
 from pycore.ghosts import ghosts
 
 GATE_M = 150.0

@@ -10,10 +10,10 @@ from hypothesis import assume, given
 from hypothesis import strategies as st
 
 from pycore.congruence import exact_span
-from pycore.decode_blur import default_blur, gate_counts, motion_counts, range_half_widths, typed_decimal
-from pycore.decode_limits import decodes, last_place, last_place_exactly
-from pycore.decode_sweep import first_confusion
 from pycore.decoding import blind_speeds, range_span, speed_span
+from pycore.decoding.blur import default_blur, gate_counts, motion_counts, range_half_widths, typed_decimal
+from pycore.decoding.limits import decodes, last_place, last_place_exactly
+from pycore.decoding.sweep import first_confusion
 
 HALF = Fraction(1, 2)
 TEN_METRES = 10.0

@@ -12,7 +12,7 @@ from pycore.clock import on_clock
 from pycore.edit import apply
 from pycore.errors import InputError
 from pycore.plan import filled, read
-from pycore.plan_keys import KEYS, OPTIONAL_RECORDS
+from pycore.plan.keys import KEYS, OPTIONAL_RECORDS
 from pycore.sentence import value_at
 from pycore.wording import SHOWN_UNITS
 

@@ -13,7 +13,7 @@ from pycore import api
 from pycore.__main__ import main
 from pycore.commands import find as command
 from pycore.finder import Search
-from pycore.finder_plan import limits_of, with_found
+from pycore.finder.plan import limits_of, with_found
 
 SKERRY = json.loads((Path(__file__).parents[2] / 'webapp' / 'examples' / 'opening.json').read_text('utf-8'))['plan']
 FEW = {'pri_us': (700, 1000), 'step_us': 1}

@@ -12,12 +12,12 @@ from hypothesis import strategies as st
 
 from pycore import finder
 from pycore.constants import SPEED_OF_LIGHT_M_S
-from pycore.decode_limits import decodes
+from pycore.decoding.limits import decodes
 from pycore.errors import InputError
 from pycore.finder import Search, merged, run_slice
-from pycore.finder_front import front
-from pycore.finder_limits import Limits, Place, Region
-from pycore.finder_sight import sight_of
+from pycore.finder.front import front
+from pycore.finder.limits import Limits, Place, Region
+from pycore.finder.sight import sight_of
 from pycore.holes import holes
 from pycore.sight import floor, share, within
 from pycore.unseen import inbound

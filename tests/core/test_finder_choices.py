@@ -7,8 +7,8 @@ import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from pycore.finder_choices import choices
-from pycore.finder_limits import Limits, Place
+from pycore.finder.choices import choices
+from pycore.finder.limits import Limits, Place
 
 
 def limits(pri_counts, place=None, **more):
@@ -51,7 +51,7 @@ def test_a_pri_is_longer_than_its_pulse_and_its_duty_may_be_the_limit_itself():
 
 
 def test_a_stagger_that_must_decode_is_long_enough_for_the_range():
-    from pycore.finder_limits import Cycle
+    from pycore.finder.limits import Cycle
 
     some = choices(limits((1, 1000), decode='exact', decode_m=14_989.6229, stagger=Cycle()), 0)
     assert listed(some)[0] == 1000

@@ -10,8 +10,8 @@ import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from pycore.finder_decode import Decoder
-from pycore.finder_limits import Limits, Place
+from pycore.finder.decode import Decoder
+from pycore.finder.limits import Limits, Place
 
 PLACE = Place(0.03, 1e-6, 17.0, carrier_hz=9.993e9, bandwidth_hz=2e6, pulses=8, fill_pulses=1)
 

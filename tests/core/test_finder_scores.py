@@ -7,12 +7,12 @@ import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from pycore import finder_tables
 from pycore.eclipsing import NearPulse
-from pycore.finder_judge import Judge
-from pycore.finder_limits import Limits, Place, Region
-from pycore.finder_scores import Scorer
-from pycore.finder_sight import sight_of
+from pycore.finder import tables as finder_tables
+from pycore.finder.judge import Judge
+from pycore.finder.limits import Limits, Place, Region
+from pycore.finder.scores import Scorer
+from pycore.finder.sight import sight_of
 from pycore.sight import share, within
 
 EXACT = 1e-9

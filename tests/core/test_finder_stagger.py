@@ -9,7 +9,7 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from pycore.finder import Search, judge_of, merged, run_slice
-from pycore.finder_limits import Cycle, Limits, Place, Region
+from pycore.finder.limits import Cycle, Limits, Place, Region
 from pycore.response import binomial_weights
 from pycore.stagger import staggered
 
@@ -43,7 +43,7 @@ def test_many_cycles_together_have_the_dips_each_has_alone(cycles, delays):
 def test_without_room_for_a_table_the_dips_are_the_same(monkeypatch):
     some = np.array([[1000, 1200, 1080, 1240], [990, 1030, 1220, 1280]])
     tabled = judge_of(limits(delays=3)).dips(some)
-    monkeypatch.setattr('pycore.finder_cycle._MOST_TABLED', 0)
+    monkeypatch.setattr('pycore.finder.cycle._MOST_TABLED', 0)
     assert judge_of(limits(delays=3, spread=1.29)).dips(some) == pytest.approx(tabled, abs=1e-12)
 
 

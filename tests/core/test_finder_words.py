@@ -6,8 +6,8 @@ import pytest
 
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.finder import Search
-from pycore.finder_limits import Cycle, Limits, Place, Region
-from pycore.finder_words import obstacles, verdict
+from pycore.finder.limits import Cycle, Limits, Place, Region
+from pycore.finder.words import obstacles, verdict
 
 APPROACH = Region('final approach', (4e3, 30e3), (40.0, 110.0), 1.0)
 PLACE = Place(SPEED_OF_LIGHT_M_S / 2.8e9, 1e-6, 6.0, 2.8e9, 1e6, 9, 1)

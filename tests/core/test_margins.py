@@ -12,12 +12,12 @@ from pycore import api
 from pycore.computed import Computed
 from pycore.errors import InputError
 from pycore.findings import findings, named
-from pycore.margin_inputs import MATTERS, Input, inputs_of
-from pycore.margin_plans import Tried, moved
-from pycore.margin_steps import outward
 from pycore.margins import margins
+from pycore.margins.inputs import MATTERS, Input, inputs_of
+from pycore.margins.plans import Tried, moved
+from pycore.margins.steps import outward
 from pycore.plan import read
-from pycore.plan_keys import BY_PATH
+from pycore.plan.keys import BY_PATH
 from pycore.wording import SHOWN_UNITS
 
 EXAMPLES = {

@@ -8,7 +8,7 @@ from hypothesis import strategies as st
 
 from pycore import quantity
 from pycore.errors import InputError
-from pycore.plan_keys import BY_PATH, KEYS
+from pycore.plan.keys import BY_PATH, KEYS
 
 CARRIER, PULSE, PRI = BY_PATH['radar.carrier_ghz'], BY_PATH['radar.pulse_us'], BY_PATH['waveform.pri_us']
 SPEED, RANGE, NOTCH = BY_PATH['coverage.speed_mps'], BY_PATH['coverage.range_km'], BY_PATH['doppler.notch_mps']

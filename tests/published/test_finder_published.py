@@ -10,7 +10,7 @@ Processing, 2nd ed., McGraw-Hill 2014, p. 397, fig. 5.30: the set.
 import pytest
 
 from pycore.finder import Search, run_slice
-from pycore.finder_limits import Cycle, Limits, Place
+from pycore.finder.limits import Cycle, Limits, Place
 from pycore.response import binomial_weights
 
 # [DH02]: 10 GHz rounded to 0.03 m, pulse 1 us, ten cells blanked, clutter to ±17 m/s, 3 of 8, PRIs in whole us; every

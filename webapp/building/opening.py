@@ -61,8 +61,9 @@ def opening():
         answer, items (one Bokeh document for each figure) and their order, keys, grammar, units, examples, version,
         checksum.
     """
-    from pycore import __version__, api, plan_keys
+    from pycore import __version__, api
     from pycore.columns import FIGURES, order
+    from pycore.plan import keys as plan_keys
     from webapp import figures
 
     plans = examples()
@@ -93,7 +94,9 @@ def grammar():
     grammar : dict
         The core's own templates and lists, nothing of the page's.
     """
-    from pycore import clauses, link, link_items, plan_keys, shown
+    from pycore import clauses, link, shown
+    from pycore.link import items as link_items
+    from pycore.plan import keys as plan_keys
 
     return {
         'clauses': clauses.CLAUSES,

@@ -1,0 +1,57 @@
+"""Keys that findings are judged by."""
+
+from pycore.plan.keys.key import JUDGED, flag, interval, number, under
+
+# A table reads best as one: name and label, what it does, unit and limits.
+# fmt: off
+KEYS = under(
+    JUDGED,
+    number('wanted.visible_pct', 'want-visible', 'Coverage seen, at least',
+        'Share of the coverage that must be seen.',
+        '%', 'percent', (0.0, 100.0), start=95.0, nullable=True),
+    number('wanted.hole_mps', 'want-hole-speed', 'Hole width, at most',
+        'A hole is too large when it is wider than this and longer than the length allowed.',
+        'm/s', 'speed', (0.0, 20_000.0), start=5.0, nullable=True),
+    number('wanted.hole_km', 'want-hole-range', 'Hole length, at most',
+        'A hole is too large when it is longer than this and wider than the width allowed.',
+        'km', 'range', (0.0, 100_000.0), start=2.0, nullable=True),
+    number('wanted.unseen_s', 'want-unseen', 'Time out of sight, at most',
+        'Longest time that a target may stay out of sight.',
+        's', 'seconds', (0.0, 1e6), start=30.0, nullable=True),
+    number('wanted.blind_speed_mps', 'want-blind-speed', 'First blind speed, at least',
+        'Up to this speed none above the notch may be blind.',
+        'm/s', 'speed', (0.0, 20_000.0), start=250.0, nullable=True),
+    flag('wanted.decode_range', 'want-decode-range', 'Range decodes over the coverage',
+        'Whether range must decode without ambiguity out to the farthest range.'),
+    flag('wanted.decode_speed', 'want-decode-speed', 'Speed decodes over the coverage',
+        'Whether speed must decode without ambiguity over all wanted speeds.'),
+    number('wanted.detect_km', 'want-detect', 'Detection range, at least',
+        'Range out to which the target must be detected.',
+        'km', 'range', (0.0, 100_000.0), start=60.0, nullable=True),
+    number('wanted.range_walk_gates', 'want-range-walk', 'Range walk, at most',
+        'Gates that the fastest target may cross within one CPI.',
+        'gates', 'gates', (0.0, 1e6), start=0.5, nullable=True, step=0.1),
+    number('radar.duty_limit_pct', 'duty-limit', 'Duty, at most',
+        'Largest part of the time for which the transmitter may send.',
+        '%', 'percent', (0.0, 100.0), default=10, nullable=True),
+    interval('holds_over.carrier_ghz', 'over-carrier', 'Holds over carriers',
+        'Each finding is judged by its worst value over these carriers.',
+        'GHz', 'frequency', (0.003, 300.0), start=[2.7, 2.9], nullable=True, step=0.01),
+    interval('holds_over.rain_mps', 'over-rain', 'Holds over rain speeds',
+        'Each finding is judged by its worst value over these mean speeds of the rain.',
+        'm/s', 'speed', (-200.0, 200.0), start=[-15.0, 15.0], nullable=True),
+    number('weather.width_mps', 'weather-width', 'Spectrum width',
+        'Standard deviation of the radial speeds of the precipitation that is measured.',
+        'm/s', 'speed', (0.01, 100.0), default=2, step=0.1),
+    number('weather.snr_db', 'weather-snr', 'Signal-to-noise of weather',
+        'Signal-to-noise ratio of the precipitation that is measured.',
+        'dB', 'level', (-200.0, 200.0), default=20),
+    number('weather.wanted_mps', 'weather-wanted', 'Extended Nyquist speed, at least',
+        'Speeds of either sign up to this must be told apart.',
+        'm/s', 'speed', (0.0, 20_000.0), default=40, nullable=True),
+    number('weather.error_mps', 'weather-error', 'Velocity error, at most',
+        'Standard error that the mean speed may have.',
+        'm/s', 'speed', (0.001, 1000.0), default=1, nullable=True, step=0.1),
+)
+# fmt: on
+"""In the order of the page and of a link."""
