@@ -19,7 +19,7 @@ from pycore.findings import verdict
 from pycore.follow import follow
 from pycore.holds_over import judged
 from pycore.margins import margins_shown
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.timing import columns, timing_table
 from pycore.variation import steps, varied
 from pycore.wording import SHOWN_UNITS

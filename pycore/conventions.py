@@ -16,7 +16,7 @@ from pycore.decoding.blur import default_blur, gate_counts
 from pycore.detection import false_alarm_per_cpi
 from pycore.dwell import time_on_target, time_used
 from pycore.eclipsing_losses import eclipsing_loss
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.swerling import at_least
 from pycore.target import one_pulse_signal, reference_strength
 from pycore.visibility import visible_share

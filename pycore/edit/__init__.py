@@ -15,9 +15,9 @@ from pycore.clock import on_clock
 from pycore.edit.actions import ACTIONS
 from pycore.edit.pris import remove_pri, rounded_pris, switched_kind, taken_pris
 from pycore.errors import InputError
-from pycore.plan import filled, read
 from pycore.plan.document import checked_number, shown
 from pycore.plan.paths import known_key, put, value_at
+from pycore.plan.reading import filled, read
 from pycore.quantity import as_number, read_number, typed, typed_list
 from pycore.shown import shown_unit
 from pycore.wording import SHOWN_UNITS

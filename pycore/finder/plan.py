@@ -9,9 +9,9 @@ from fractions import Fraction
 
 from pycore.errors import InputError
 from pycore.finder.limits import Cycle, Limits, Place, Region
-from pycore.plan import read
 from pycore.plan.document import shown
 from pycore.plan.keys import BY_PATH, MOST_PRIS
+from pycore.plan.reading import read
 from pycore.quantity import as_number
 from pycore.response import binomial_weights
 

@@ -4,10 +4,10 @@ from pycore.clock import on_clock
 from pycore.errors import InputError
 from pycore.link.items import read_value
 from pycore.link.names import BY_SHORT, LISTS, RECORDS, REMARK, SEE
-from pycore.plan import read
 from pycore.plan.document import filled, shown
 from pycore.plan.keys import BY_PATH, KEYS
 from pycore.plan.paths import value_at
+from pycore.plan.reading import read
 
 _STAND_IN_PRI_US = 1000
 

@@ -3,7 +3,7 @@
 from pycore.computed import Computed
 from pycore.errors import InputError
 from pycore.findings import named
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS
 
 

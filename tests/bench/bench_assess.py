@@ -13,7 +13,7 @@ from scipy import ndimage
 from pycore import api
 from pycore.computed import Computed
 from pycore.eclipsing import received_share
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.zones import centres, count_map
 from webapp.building.places import ROOT
 

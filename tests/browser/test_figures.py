@@ -13,7 +13,7 @@ from playwright.sync_api import expect
 from pycore import columns
 from pycore.columns.mark import marked
 from pycore.computed import Computed
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS
 from webapp import figures
 from webapp.engine.bridge import packed

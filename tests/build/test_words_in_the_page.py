@@ -8,8 +8,8 @@ from pathlib import Path
 import pytest
 
 from pycore import link, sentence
-from pycore.plan import filled
 from pycore.plan import keys as plan_keys
+from pycore.plan.reading import filled
 from pycore.wording import SHOWN_UNITS
 from webapp.building.opening import grammar, units
 

@@ -10,7 +10,7 @@ from hypothesis import HealthCheck, given, settings
 from hypothesis import strategies as st
 
 from pycore import api, link
-from pycore.plan import filled
+from pycore.plan.reading import filled
 
 EXAMPLES = {
     path.stem: json.loads(path.read_text('utf-8'))['plan']

@@ -16,7 +16,7 @@ from pycore.columns.decoding import Decoded
 from pycore.columns.looks import looks
 from pycore.columns.zone_words import key_sentence
 from pycore.computed import Computed
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS, THIN_SPACE
 
 CASES = json.loads((Path(__file__).parent / 'captions.json').read_text(encoding='utf-8'))

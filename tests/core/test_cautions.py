@@ -10,7 +10,7 @@ import pytest
 from pycore import api
 from pycore.cautions import ALWAYS, called_for, cautions
 from pycore.computed import Computed
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS
 
 OPENING = json.loads((Path(__file__).parents[2] / 'webapp/examples/opening.json').read_text('utf-8'))['plan']

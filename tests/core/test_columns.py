@@ -15,7 +15,7 @@ from pycore.columns.received import received_corners
 from pycore.computed import Computed
 from pycore.eclipsing import received_share
 from pycore.patterns import sweep
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.spans import Spans
 from pycore.wording import SHOWN_UNITS, THIN_SPACE
 

@@ -9,7 +9,7 @@ from hypothesis import strategies as st
 from pycore import link
 from pycore.document import understood
 from pycore.errors import InputError
-from pycore.plan import filled, read
+from pycore.plan.reading import filled, read
 
 PLAN = {'waveform': {'pri_us': [980.0, 860.0], 'pulses': 9}, 'title': 'Ähre'}
 

@@ -11,8 +11,8 @@ from hypothesis import strategies as st
 from pycore.clock import on_clock
 from pycore.edit import apply
 from pycore.errors import InputError
-from pycore.plan import filled, read
 from pycore.plan.keys import KEYS, OPTIONAL_RECORDS
+from pycore.plan.reading import filled, read
 from pycore.sentence import value_at
 from pycore.wording import SHOWN_UNITS
 

@@ -13,7 +13,7 @@ from hypothesis import strategies as st
 from pycore.computed import Computed
 from pycore.findings import findings, named, verdict
 from pycore.findings.finding import SIGNS, Finding, at_least, at_most
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.wording import MINUS, SHOWN_UNITS, THIN_SPACE, against, percent, plural, significant, with_unit
 
 OPENING = json.loads((Path(__file__).parents[2] / 'webapp/examples/opening.json').read_text('utf-8'))['plan']

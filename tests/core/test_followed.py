@@ -11,7 +11,7 @@ from pycore.columns import followed
 from pycore.columns.mark import marked
 from pycore.computed import Computed
 from pycore.errors import InputError
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS, THIN_SPACE
 
 PLAN = {

@@ -12,7 +12,7 @@ from pycore.computed import Computed
 from pycore.findings import findings, named
 from pycore.findings.rank import rank
 from pycore.holds_over import as_rows, held, judged
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS
 from pycore.worst_over import on_carrier, with_rain_at
 

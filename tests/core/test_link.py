@@ -14,8 +14,8 @@ from pycore import link
 from pycore.errors import InputError
 from pycore.link.items import number_text
 from pycore.link.text import deflated
-from pycore.plan import filled, read
 from pycore.plan.keys import KEYS, OPTIONAL_RECORDS
+from pycore.plan.reading import filled, read
 
 HERE = Path(__file__).parent
 OPENING = json.loads((HERE.parents[1] / 'webapp/examples/opening.json').read_text('utf-8'))['plan']

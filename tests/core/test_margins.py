@@ -16,8 +16,8 @@ from pycore.margins import margins
 from pycore.margins.inputs import MATTERS, Input, inputs_of
 from pycore.margins.plans import Tried, moved
 from pycore.margins.steps import outward
-from pycore.plan import read
 from pycore.plan.keys import BY_PATH
+from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS
 
 EXAMPLES = {

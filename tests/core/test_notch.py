@@ -8,7 +8,7 @@ import pytest
 from pycore.computed import Computed
 from pycore.filters import lobe_edge
 from pycore.notch import platform_spread, suggested_notch
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.windows import window
 
 

@@ -12,9 +12,9 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from pycore.errors import InputError
-from pycore.plan import filled, read
 from pycore.plan.document import shown
 from pycore.plan.keys import KEYS
+from pycore.plan.reading import filled, read
 
 OPENING = json.loads((Path(__file__).parents[2] / 'webapp/examples/opening.json').read_text('utf-8'))['plan']
 EXAMPLES = sorted((Path(__file__).parents[2] / 'webapp/examples').glob('*.json'))

@@ -6,9 +6,9 @@ from pathlib import Path
 import pytest
 
 from pycore import link
-from pycore.plan import filled, read
 from pycore.plan import keys as plan_keys
 from pycore.plan.keys import GROUPS, KEYS, OPTIONAL_RECORDS
+from pycore.plan.reading import filled, read
 from pycore.units import FAMILIES
 
 OPENING = json.loads((Path(__file__).parents[2] / 'webapp/examples/opening.json').read_text('utf-8'))['plan']

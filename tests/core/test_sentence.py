@@ -8,8 +8,8 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from pycore import quantity, sentence
-from pycore.plan import filled
 from pycore.plan.keys import GROUPS, JUDGED, KEYS
+from pycore.plan.reading import filled
 from pycore.shown import shown_unit, shown_value
 from pycore.wording import SHOWN_UNITS
 

@@ -12,7 +12,7 @@ from pycore.columns.mark import marked
 from pycore.computed import Computed
 from pycore.covered import covered_half_width, leakage
 from pycore.cpi import cpis
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS
 
 ONE_PART_IN_A_THOUSAND = 1e-3

@@ -4,7 +4,7 @@ from fractions import Fraction
 
 import pytest
 
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.timing import columns, in_counts, timing_table
 
 

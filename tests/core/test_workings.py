@@ -12,7 +12,7 @@ from pycore import api
 from pycore.computed import Computed
 from pycore.errors import InputError
 from pycore.findings import findings
-from pycore.plan import read
+from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS
 from pycore.workings import working
 
