@@ -20,7 +20,7 @@ export function createLooks({ state, keys, quantities, engineState }) {
     const key = keys.of(path);
     const value = valueAt(state.now.plan, path);
     const refusal = state.now.refused.find((edit) => edit.key === path);
-    const pair = state.now.refused.some((edit) => isPair(path, edit.field) && isPair(edit.key, edit.field));
+    const pair = state.now.refused.some((edit) => otherEnd(edit.key) === path && isWithin(key, edit.text));
     const pending = pendingShown(path, key);
     return {
       shown: pending ?? said ?? alone(path, key, value),
@@ -35,11 +35,16 @@ export function createLooks({ state, keys, quantities, engineState }) {
     };
   }
 
+  // An end of an interval that is possible by itself was refused because of the other one.
+  function isWithin(key, text) {
+    const value = quantities.plain(text);
+    return key?.kind === 'interval' && value >= key.lowest && value <= key.highest;
+  }
+
   // One line for each refused number: the core's sentence, and what everything below still shows.
   function refusals() {
-    return state.now.refused.map(({ key: path, field, message: rule }) => {
+    return state.now.refused.map(({ key: path, message }) => {
       const key = keys.of(path);
-      const message = isPair(path, field) ? `${rule} Type the other end.` : rule;
       return { key: path, label: key?.label ?? path, message, still: quantities.shown(key, valueAt(state.now.plan, path)) };
     });
   }
@@ -47,7 +52,6 @@ export function createLooks({ state, keys, quantities, engineState }) {
   return { look, refusals };
 }
 
-// The core names the interval, not one of its ends, where the two do not agree.
-function isPair(path, field) {
-  return path.startsWith(`${field}.`);
+function otherEnd(path) {
+  return path.replace(/\.[01]$/, (end) => (end === '.0' ? '.1' : '.0'));
 }

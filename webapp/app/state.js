@@ -18,7 +18,7 @@ export function createState(plan) {
     begin: (first) => { state.plan = first; changed('begin'); },
     open: (next, name) => { open(state, next, name); changed('open'); },
     settle: (request, answer) => settle(state, request, answer, changed),
-    // How many edits up to this one were committed: what was refused was not.
+    // How many edits up to this one were committed: what was refused was not, and what makes it possible commits both as one.
     committed: (count) => count - [...state.lost].filter((lost) => lost <= count).length,
     request: () => ({ plan: state.plan, edits: [...state.pending, ...state.refused], epoch: state.epoch, count: state.count }),
   };
@@ -66,13 +66,13 @@ function takeBack(state, changed) {
 function settle(state, request, answer, changed) {
   if (request.epoch !== state.epoch) return false;
   const came = (edit) => edit.count > request.count;
-  const refusals = answer.refused.map(({ edit, key, message }) => ({ ...sentFor(request, edit), field: key, message }));
+  const refusals = answer.refused.map(({ edit, message }) => ({ ...sentFor(request, edit), message }));
   const replaced = new Set(state.pending.filter(came).map((edit) => edit.key));
   state.plan = answer.plan;
   state.pending = state.pending.filter(came);
   // A refused step is told and forgotten; a refused text stays where it was typed.
   state.refused = refusals.filter((edit) => edit.text !== undefined && edit.key && !replaced.has(edit.key));
-  forgetRefused(state, request, refusals);
+  forgetRefused(state, refusals);
   changed('answer');
   return true;
 }
@@ -82,9 +82,8 @@ function sentFor({ edits }, { key, text, value }) {
 }
 
 // What was refused has changed nothing, so there is nothing to undo.
-function forgetRefused(state, request, refusals) {
+function forgetRefused(state, refusals) {
   const counts = new Set(refusals.map((edit) => edit.count));
-  for (const { count } of request.edits) state.lost.delete(count);
   for (const count of counts) state.lost.add(count);
   state.past = state.past.filter((step) => !counts.has(step.at));
 }
