@@ -80,8 +80,8 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     """
     units = {**SHOWN_UNITS, **(units or {})}
     start = None if opened is None else link.read_link(opened)
-    document, said, refused = _edited(plan if start is None else start.document, edits, units)
-    computed = Computed(read(document), with_echoes=deep)
+    edited, said, refused = _edited(plan if start is None else start.document, edits, units)
+    computed = Computed(edited, with_echoes=deep)
     found = judged(computed, units)
     mark = marked(computed, target)
     return {
@@ -100,16 +100,16 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
 
 def _edited(document, edits, units):
     """Apply edits one after another; a refused one is kept with its reason and changes nothing."""
-    said, refused = [], []
+    plan, said, refused = None, [], []
     for one in edits:
         try:
             result = edit.apply(document, one, units)
         except InputError as error:
             refused.append({'edit': one, 'key': error.field, 'message': error.message})
         else:
-            document = result.document
+            plan, document = result.plan, result.document
             said.extend(result.said)
-    return document, said, refused
+    return plan or read(document), said, refused
 
 
 def _as_opened(start):

@@ -14,7 +14,6 @@ EDGE_TOLERANCE = 1e-9
 """Edges closer than this part of their axis are one edge. [unitless]"""
 
 _BITS_AT_ONCE = 4
-_MOST_BITS_IN_GROUPS = 13
 
 # In 64 bits, though a browser's engine counts in 32 unless told otherwise: sixteen PRFs and their floors need 33.
 _BIT = 1 << np.arange(32, dtype=np.int64)
@@ -179,24 +178,10 @@ def _each_group(table, n, sign):
     for the usual eight PRFs. Every step takes the lowest bits to the top, so that after
     the last one they are all in their places again.
     """
-    if n > _MOST_BITS_IN_GROUPS:
-        return _each_bit(table, n, sign)
     shape = np.shape(table)
     for bits in _groups(n):
         table = _bit_matrix(bits, sign) @ table.reshape(*shape[:-1], -1, 1 << bits).swapaxes(-1, -2)
     return table.reshape(shape)
-
-
-def _each_bit(table, n, sign):
-    """Apply [[1, sign], [0, 1]] along every bit, one after the other.
-
-    Large tables go bit by bit: a product of matrices would be shared out to threads that wait for each other.
-    """
-    table = np.array(table, dtype=float)
-    for bit in range(n):
-        pairs = table.reshape(*table.shape[:-1], -1, 2, 1 << bit)
-        pairs[..., 0, :] += sign * pairs[..., 1, :]
-    return table
 
 
 @lru_cache

@@ -7,7 +7,6 @@ it, or is refused as a whole; a refused edit of a key names that key, so that
 what was typed stays where it was typed.
 """
 
-import copy
 from dataclasses import dataclass, field
 from fractions import Fraction
 
@@ -18,6 +17,7 @@ from pycore.errors import InputError
 from pycore.plan.document import checked_number, shown
 from pycore.plan.paths import known_key, put, value_at
 from pycore.plan.reading import filled, read
+from pycore.plan.records import Plan
 from pycore.quantity import as_number, read_number, typed, typed_list
 from pycore.shown import shown_unit
 from pycore.wording import SHOWN_UNITS
@@ -33,14 +33,19 @@ class Edited:
 
     Parameters
     ----------
-    document : dict
-        The new plan, filled. [plan's units]
+    plan : Plan
+        The new plan, read and checked. [SI]
     said : list of str
         Sentences such as a rounding to the clock. [unitless]
     """
 
-    document: dict
+    plan: Plan
     said: list = field(default_factory=list)
+
+    @property
+    def document(self):
+        """The new plan in its own units, every default filled in."""
+        return self.plan.document
 
 
 def apply(document, edit, units=SHOWN_UNITS):
@@ -65,14 +70,14 @@ def apply(document, edit, units=SHOWN_UNITS):
     InputError
         Where the edit cannot be taken; the plan before stays as it is.
     """
-    plan = copy.deepcopy(filled(document))
+    plan = filled(document)
     if 'do' in edit:
         said = _action(edit)(plan, edit, units)
-        return Edited(read(plan).document, said)
+        return Edited(read(plan), said)
     path = str(edit.get('key'))
     try:
         said = _typed(plan, path, str(edit['text']), units) if 'text' in edit else _set(plan, path, edit.get('value'))
-        return Edited(read(plan).document, said)
+        return Edited(read(plan), said)
     except InputError as error:
         raise InputError(path[:_LONGEST_FIELD], error.message) from None
 
