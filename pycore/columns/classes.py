@@ -18,7 +18,7 @@ NAMES = ('none', 'none-hatch', 'too-few', 'too-few-edge', 'just-enough', 'more',
 PITCH = 7
 """Distance of the hatch lines along a row. [px]"""
 
-DOT_PITCH = 8
+DOT_PITCH = 12
 """Distance of the dots along a row and between every second row. [px]"""
 
 _DOT = 2

@@ -165,3 +165,14 @@ def test_in_print_the_note_stands_without_what_is_interactive(opened):
     expect(opened.page.get_by_role('navigation', name='Actions')).to_be_hidden()
     expect(opened.page.get_by_text('not met; no reason given')).to_be_visible()
     expect(opened.page.get_by_role('region', name='Cautions')).to_be_visible()
+
+
+def test_a_refused_number_gives_its_reason_in_sight_when_the_paragraph_has_been_scrolled_past(opened):
+    opened.ready()
+    opened.page.evaluate('window.scrollTo(0, document.body.scrollHeight)')
+    expect(opened.page.locator('#plan.stuck')).to_be_visible()
+    opened.number('radar.pulse_us').click()
+    opened.page.keyboard.type('abc')
+    opened.page.keyboard.press('Enter')
+
+    expect(opened.page.get_by_role('group', name='Numbers that were refused')).to_be_in_viewport()

@@ -491,10 +491,10 @@ def test_what_clutter_covers_is_dotted_and_the_rest_of_the_map_stays_as_it_is():
     assert columns_with_dots.max() <= 45.0
 
 
-def test_dots_fill_an_eighth_of_what_clutter_covers():
+def test_dots_fill_an_eighteenth_of_what_clutter_covers():
     count = np.full((80, 80), 2, dtype=np.uint8)
     code = classes.classes(count, 2, 1, np.zeros_like(count))
-    assert (code == classes.DOT).mean() == pytest.approx(1 / 8, abs=0.01)
+    assert (code == classes.DOT).mean() == pytest.approx(1 / 18, abs=0.01)
 
 
 def test_the_caption_says_what_clutter_takes_and_only_where_there_is_some():

@@ -75,7 +75,7 @@ export function createPage({ opening, keys, quantities, state, hands, ask }) {
 
   table.onToggle(redraw);
   copyAsSentence(at('plan'));
-  stickWhenPassed({ place: at('plan-place'), plan: at('plan'), verdict: at('verdict'), verdictPlace: at('verdict-place') });
+  stickWhenPassed({ place: at('plan-place'), plan: at('plan'), verdict: at('verdict'), verdictPlace: at('verdict-place'), refused: at('refused') });
 
   return {
     redraw,
