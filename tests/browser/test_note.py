@@ -135,7 +135,9 @@ def test_the_title_is_edited_where_it_stands(opened):
 
 
 def test_the_cautions_are_always_there(opened):
-    expect(opened.page.get_by_role('region', name='Cautions').get_by_role('listitem')).to_have_count(3)
+    cautions = opened.page.get_by_role('region', name='Cautions')
+    for words in ('planning figures from idealised models', 'licence', 'Radiated power can injure'):
+        expect(cautions).to_contain_text(words)
 
 
 def test_the_dark_page_follows_the_system(note):
@@ -176,3 +178,13 @@ def test_a_refused_number_gives_its_reason_in_sight_when_the_paragraph_has_been_
     opened.page.keyboard.press('Enter')
 
     expect(opened.page.get_by_role('group', name='Numbers that were refused')).to_be_in_viewport()
+
+
+def test_a_plan_carries_its_own_cautions_beside_the_three_that_always_stand(opened):
+    opened.ready()
+    cautions = opened.page.get_by_role('region', name='Cautions').get_by_role('listitem')
+
+    expect(cautions).to_have_count(4)
+    expect(cautions.first).to_contain_text('the notch is narrower than the Doppler filters reject')
+    opened.commit('doppler.notch_mps', '16')
+    expect(cautions).to_have_count(3)

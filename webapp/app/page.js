@@ -10,6 +10,7 @@ import { createPictures } from './pictures.js';
 import { createRefused } from './refused.js';
 import { createSentence } from './sentence.js';
 import { shownByKey, spoken } from './spoken.js';
+import { createCautions } from './cautions.js';
 import { stickWhenPassed } from './sticky.js';
 import { createTitle } from './title.js';
 import { createVerdict } from './verdict.js';
@@ -75,6 +76,7 @@ export function createPage({ opening, keys, quantities, state, hands, ask }) {
 
   table.onToggle(redraw);
   copyAsSentence(at('plan'));
+  const cautions = createCautions(at('cautions'));
   stickWhenPassed({ place: at('plan-place'), plan: at('plan'), verdict: at('verdict'), verdictPlace: at('verdict-place'), refused: at('refused') });
 
   return {
@@ -96,6 +98,7 @@ export function createPage({ opening, keys, quantities, state, hands, ask }) {
       painted = count;
       verdict.update(answer.verdict);
       findings.update(answer.findings);
+      cautions.update(answer.cautions);
       painting = painting.then(() => pictures.show(answer.figures, count)).then(() => pictures.mark(painted));
       return painting.then(nextFrame);
     },
