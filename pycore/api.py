@@ -16,7 +16,7 @@ from pycore.conventions import conventions
 from pycore.differences import differing_inputs, judged_changes, verdicts_differ
 from pycore.errors import InputError
 from pycore.findings import verdict
-from pycore.follow import follow
+from pycore.follow import follow, strip
 from pycore.holds_over import judged
 from pycore.margins import margins_shown
 from pycore.plan.reading import read
@@ -197,9 +197,11 @@ def follow_target(plan, range_km, speed_mps):
     Returns
     -------
     followed : dict
-        ``prfs`` (one for each PRI), ``clear``, ``seen``, ``probability``, ``ghosts``.
+        ``prfs`` (one for each PRI), ``clear``, ``seen``, ``probability``, ``ghosts``, and ``every_pri``: what each
+        PRI from half the plan's shortest to twice its longest would make of it, as lists.
     """
-    found = follow(Computed(read(plan)), float(range_km) * 1e3, float(speed_mps))
+    computed = Computed(read(plan))
+    found = follow(computed, float(range_km) * 1e3, float(speed_mps))
     return {
         'range_km': range_km,
         'speed_mps': speed_mps,
@@ -217,6 +219,19 @@ def follow_target(plan, range_km, speed_mps):
             }
             for ghost in found.ghosts
         ],
+        'every_pri': _every_pri(strip(computed, float(range_km) * 1e3, float(speed_mps))),
+    }
+
+
+def _every_pri(each):
+    return {
+        'pri_us': (each.pri_s * 1e6).tolist(),
+        'received_share': each.received.tolist(),
+        'clear': each.clear.tolist(),
+        'to_edge_km': (each.to_edge_m / 1e3).tolist(),
+        'to_edge_mps': each.to_edge_m_s.tolist(),
+        'until_blind_s': [_finite(time) for time in each.until_blind_s.tolist()],
+        'longest': each.longest,
     }
 
 

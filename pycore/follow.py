@@ -13,10 +13,13 @@ from pycore.clutter import folded_clutter_to_noise, late_share
 from pycore.cpi import Cpi
 from pycore.detection_map import canceller_residue
 from pycore.ghosts import ghosts
+from pycore.one_target import every_pri
 from pycore.scnr import filter_outputs
 from pycore.swerling import cpi_probability, set_probability
 from pycore.target import one_pulse_signal, received_power
 
+STRIP_PRIS = 400
+"""Most PRIs of the strip for one target. [unitless]"""
 _HEARD = 1e-12
 """A patch counts as being at the target's gate above this power ratio. [unitless]"""
 
@@ -81,6 +84,32 @@ class FollowedSet:
     seen: bool
     probability: float
     ghosts: tuple | None
+
+
+def strip(computed, range_m, speed_m_s):
+    """Return what every PRI around the plan's own would make of one target.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    range_m : float
+        True range. [m]
+    speed_m_s : float
+        True radial speed, positive closing. [m/s]
+
+    Returns
+    -------
+    each : EveryPri
+        For whole clock counts from half the shortest PRI to twice the longest, at most ``STRIP_PRIS`` of them, with
+        the pulse, carrier and notch of the first PRF; none that is not longer than the pulse.
+    """
+    plan, first = computed.plan, computed.echoes.parts[-1].cpis[0]
+    low, high = min(plan.pri_counts) // 2 + 1, 2 * max(plan.pri_counts)
+    counts = np.unique(np.linspace(low, high, STRIP_PRIS).round())
+    pri_s = counts / plan.clock_hz
+    longer = pri_s[pri_s > first.pulse_s]
+    return every_pri(longer, range_m, speed_m_s, first, plan.recovery_s, plan.guard_s, plan.received_min, plan.near)
 
 
 def follow(computed, range_m, speed_m_s):

@@ -101,3 +101,13 @@ def test_a_target_that_is_none_is_refused_by_name(target, field):
     with pytest.raises(InputError) as refused:
         api.note(plan=PLAN, target=target)
     assert refused.value.field == field
+
+
+def test_the_strip_agrees_with_the_plan_where_it_meets_its_own_pris():
+    found = api.follow_target({'waveform': {'pri_us': [980]}}, 84.2, 56.0)
+    each = found['every_pri']
+    nearest = min(range(len(each['pri_us'])), key=lambda place: abs(each['pri_us'][place] - 980))
+    assert each['clear'][nearest] == found['seen']
+    assert each['received_share'][nearest] == pytest.approx(found['prfs'][0]['received_share'], abs=1e-9)
+    assert each['clear'][each['longest']]
+    assert len(each['pri_us']) == len(each['until_blind_s'])

@@ -7,7 +7,7 @@ from hypothesis import strategies as st
 
 from pycore.eclipsing import NearPulse, received_share
 from pycore.finder.limits import Place
-from pycore.finder.one_target import AT_REST_M_S, every_pri
+from pycore.one_target import AT_REST_M_S, every_pri
 
 MICROMETRE = 1e-6
 PLACE = Place(0.03, 1e-6, 17.0)
