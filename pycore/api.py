@@ -4,10 +4,8 @@ The command line, the worker in the browser and notebooks all go through these.
 No mathematics lives here.
 """
 
-import math
-
 from pycore import edit, link
-from pycore.assessment import assessment
+from pycore.assessment import assessment, finite
 from pycore.cautions import cautions
 from pycore.columns import followed, picture
 from pycore.columns.mark import marked
@@ -230,7 +228,7 @@ def _every_pri(each):
         'clear': each.clear.tolist(),
         'to_edge_km': (each.to_edge_m / 1e3).tolist(),
         'to_edge_mps': each.to_edge_m_s.tolist(),
-        'until_blind_s': [_finite(time) for time in each.until_blind_s.tolist()],
+        'until_blind_s': [finite(time) for time in each.until_blind_s.tolist()],
         'longest': each.longest,
     }
 
@@ -269,15 +267,11 @@ def _followed(one):
         'received_share': one.received,
         'in_notch': one.in_notch,
         'clutter_db': one.clutter_db,
-        'snr_db': _finite(one.snr_db),
-        'scnr_db': _finite(one.scnr_db),
+        'snr_db': finite(one.snr_db),
+        'scnr_db': finite(one.scnr_db),
         'probability': one.probability,
         'reasons': list(one.reasons),
     }
-
-
-def _finite(value):
-    return value if math.isfinite(value) else None
 
 
 def margins_of(plan, finding):

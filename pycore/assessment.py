@@ -140,11 +140,11 @@ def _holes(found):
 
 
 def _unseen(computed):
-    inbound, crossing = computed.inbound, _finite(computed.crossing_s)
-    ends = [_finite(end) for end in inbound.range_m]
+    inbound, crossing = computed.inbound, finite(computed.crossing_s)
+    ends = [finite(end) for end in inbound.range_m]
     return {
-        'inbound_s': _finite(inbound.time_s),
-        'at_mps': _finite(inbound.at_m_s),
+        'inbound_s': finite(inbound.time_s),
+        'at_mps': finite(inbound.at_m_s),
         'range_km': None if None in ends else [end / 1e3 for end in ends],
         'never': bool(inbound.never),
         'crossing_s': crossing,
@@ -152,8 +152,19 @@ def _unseen(computed):
     }
 
 
-def _finite(value):
-    """Return a float as it is, ``None`` for what has no value or no end."""
+def finite(value):
+    """Return a float as it is, ``None`` for what has no value or no end.
+
+    Parameters
+    ----------
+    value : float or None
+        Any number of an answer. [any]
+
+    Returns
+    -------
+    value : float or None
+        Ready for JSON.
+    """
     return None if value is None or not math.isfinite(value) else float(value)
 
 

@@ -370,7 +370,7 @@ class Computed:
         """Mean duty over the set, fill pulses included."""
         plan = self.plan
         sent = np.ones(plan.n) if self.is_stagger else plan.pulses + plan.fill_pulses
-        return float((sent * self.duty * plan.pri_s).sum() / (sent * plan.pri_s).sum())
+        return dwell.mean_duty(self.duty * plan.pri_s, plan.pri_s, sent)
 
     @cached_property
     def range_walk_gates(self):
