@@ -18,7 +18,19 @@ import shutil  # noqa: E402
 import subprocess  # noqa: E402
 from pathlib import Path  # noqa: E402
 
-from webapp.building import browser, bytecode, environment, join, licences, opening, page, payload, runtime, serve  # noqa: E402, E501
+from webapp.building import (  # noqa: E402, E501
+    browser,
+    bytecode,
+    environment,
+    join,
+    licences,
+    opening,
+    page,
+    payload,
+    runtime,
+    serve,
+    sheets,
+)
 from webapp.building.places import DIST, ROOT, WEBAPP  # noqa: E402
 from webapp.building.pyodide import worker_module  # noqa: E402
 from webapp.building.stop import Stop, no_space  # noqa: E402
@@ -41,8 +53,8 @@ def build(given=None, kind='build', snapshot=True):
 
     # the page, with what it shows before the engine is there
     contents = page.Contents(
-        template=(WEBAPP / 'page' / 'index.html').read_text(encoding='utf-8'),
-        style=(WEBAPP / 'page' / 'style.css').read_text(encoding='utf-8'),
+        template=sheets.template(WEBAPP / 'page'),
+        style=sheets.style(WEBAPP / 'page' / 'styles'),
         opening=opening.opening_json(python),
         licences=licences.licences(python, parts_of_others),
         library=library,

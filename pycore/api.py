@@ -8,7 +8,7 @@ from pycore import edit, link
 from pycore.assessment import assessment, finite
 from pycore.cautions import cautions
 from pycore.columns import followed, picture
-from pycore.columns.mark import marked
+from pycore.columns.view import seen
 from pycore.computed import Computed
 from pycore.conventions import conventions
 from pycore.differences import differing_inputs, judged_changes, verdicts_differ
@@ -48,7 +48,7 @@ def assess(plan, margins=False):
     return assessment(Computed(read(plan)), margins)
 
 
-def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, deep=False, target=None):
+def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, deep=False, view=None):
     """Return all that a page shows of a plan, after the edits that were made to it.
 
     Parameters
@@ -67,8 +67,9 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         Units that the reader prefers, by ``range``, ``speed``, ``pri``. [unitless]
     deep : bool
         Whether findings that take long are worked out where nothing is judged by them. [unitless]
-    target : mapping or None
-        ``range_km`` and ``speed_mps`` of the target that is followed; all figures mark it. [km, m/s]
+    view : mapping or None
+        What the reader has chosen to look at: ``target``, with ``range_km`` and ``speed_mps``, is followed and marked
+        in all figures. [km, m/s]
 
     Returns
     -------
@@ -81,7 +82,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     edited, said, refused = _edited(plan if start is None else start.document, edits, units)
     computed = Computed(edited, with_echoes=deep)
     found = judged(computed, units)
-    mark = marked(computed, target)
+    looked = seen(computed, view)
     return {
         'plan': computed.plan.document,
         'link': link.written(computed.plan.document),
@@ -91,8 +92,8 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         'verdict': verdict(found),
         'findings': [_shown(finding) for finding in found],
         'cautions': cautions(computed, units),
-        'figures': {name: picture(name, computed, units, (size or {}).get(name), mark) for name in figures},
-        'target': None if mark is None else followed.words(mark, units),
+        'figures': {name: picture(name, computed, units, (size or {}).get(name), looked) for name in figures},
+        'target': None if looked.mark is None else followed.words(looked.mark, units),
     }
 
 

@@ -10,6 +10,7 @@ from pycore.columns import (
     eclipsed_ranges,
     trade_line,
 )
+from pycore.columns.view import WHOLE
 
 _IN_ORDER = (blind_zones, trade_line, eclipsed_ranges, blind_speeds, decoding, doppler_filters, detection, dwell)
 _MODULES = {module.NAME: module for module in _IN_ORDER}
@@ -37,7 +38,7 @@ def order(kind):
     return tuple(swap.get(name, name) for name in FIGURES)
 
 
-def picture(name, computed, units, size=None, mark=None):
+def picture(name, computed, units, size=None, view=WHOLE):
     """Return one figure of a plan.
 
     Parameters
@@ -50,8 +51,8 @@ def picture(name, computed, units, size=None, mark=None):
         Units that the reader prefers, by ``range``, ``speed``, ``pri``. [unitless]
     size : mapping or None
         Width and height of its plot. [px]
-    mark : Mark or None
-        The target that is followed, which every figure marks. [m, m/s]
+    view : View
+        What the reader has chosen to look at. [unitless]
 
     Returns
     -------
@@ -59,4 +60,4 @@ def picture(name, computed, units, size=None, mark=None):
         ``title``; ``caption``, ``short`` (one line), ``summary`` (for a screen reader), ``table`` (``head``, ``rows``);
         ``columns`` by source; ``ranges``, ``labels``, ``units`` and fixed ``ticks`` by axis.
     """
-    return _MODULES[name].picture(computed, units, size, mark)
+    return _MODULES[name].picture(computed, units, size, view)

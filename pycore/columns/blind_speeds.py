@@ -13,6 +13,7 @@ from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import looks
 from pycore.columns.mark import across
+from pycore.columns.view import WHOLE
 from pycore.columns.zone_sentences import zones_sentence
 from pycore.wording import THIN_SPACE, listed, percent, significant
 
@@ -21,7 +22,7 @@ NAME, TITLE = 'blind-speeds', 'Blind speeds'
 _NO_BARS = {'y': np.zeros(0), 'left': np.zeros(0), 'right': np.zeros(0)}
 
 
-def picture(computed, units, size=None, mark=None):
+def picture(computed, units, size=None, view=WHOLE):
     """Return the figure of blind speeds.
 
     Parameters
@@ -32,8 +33,8 @@ def picture(computed, units, size=None, mark=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Width of the plot, for the curve of a stagger. [px]
-    mark : Mark or None
-        The target that is followed. [m, m/s]
+    view : View
+        What the reader has chosen to look at. [unitless]
 
     Returns
     -------
@@ -42,7 +43,7 @@ def picture(computed, units, size=None, mark=None):
     """
     axis = speed_axis(computed.plan.speed_m_s, units)
     answer = _of_stagger(computed, axis) if computed.is_stagger else _of_dwells(computed, axis, units)
-    answer['columns']['target'] = across(mark and mark.speed_m_s, axis, answer['ranges']['y'])
+    answer['columns']['target'] = across(view.mark and view.mark.speed_m_s, axis, answer['ranges']['y'])
     return answer
 
 

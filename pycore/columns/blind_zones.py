@@ -12,6 +12,7 @@ from pycore.columns.axes import range_axis, speed_axis
 from pycore.columns.classes import classes
 from pycore.columns.mark import ring
 from pycore.columns.named import names_at
+from pycore.columns.view import WHOLE
 from pycore.columns.zone_words import words
 
 NAME, TITLE = 'blind-zones', 'Blind zones'
@@ -28,7 +29,7 @@ _DISC = 17
 _WAYS = ((12.0, -12.0), (-12.0, -12.0), (12.0, 12.0), (-12.0, 12.0))
 
 
-def picture(computed, units, size=None, mark=None):
+def picture(computed, units, size=None, view=WHOLE):
     """Return the figure of blind zones.
 
     Parameters
@@ -39,8 +40,8 @@ def picture(computed, units, size=None, mark=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Width and height of the plot. [px]
-    mark : Mark or None
-        The target that is followed. [m, m/s]
+    view : View
+        What the reader has chosen to look at. [unitless]
 
     Returns
     -------
@@ -56,7 +57,7 @@ def picture(computed, units, size=None, mark=None):
             'map': {'image': classes(count, computed.looks, computed.m, with_clutter), **_frame(x, y)},
             **_regions(computed, x, y),
             'holes': _numbers(computed, x, y, blind),
-            'target': ring(mark, x, y),
+            'target': ring(view.mark, x, y),
         },
         'ranges': {'x': x.ends, 'y': y.ends},
         'labels': {'x': x.label, 'y': y.label},

@@ -17,6 +17,7 @@ from pycore.columns.decoding_words import span_text, words
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.mark import across
 from pycore.columns.named import names_at
+from pycore.columns.view import WHOLE
 from pycore.follow import blur_half_widths, ghosts_of
 
 NAME, TITLE = 'decoding', 'Decoding'
@@ -68,7 +69,7 @@ class Decoded:
     at_own: int
 
 
-def picture(computed, units, size=None, mark=None):
+def picture(computed, units, size=None, view=WHOLE):
     """Return the figure of decoding.
 
     Parameters
@@ -79,8 +80,8 @@ def picture(computed, units, size=None, mark=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Not used: nothing here depends on the size. [px]
-    mark : Mark or None
-        The target that is followed. [m, m/s]
+    view : View
+        What the reader has chosen to look at. [unitless]
 
     Returns
     -------
@@ -89,16 +90,17 @@ def picture(computed, units, size=None, mark=None):
     """
     plan, axis = computed.plan, range_axis(computed.plan.range_m, units)
     names = [interval_name(pri, units) for pri in plan.pri_s.tolist()]
-    found = None if computed.is_stagger else decoded(computed, mark)
+    found = None if computed.is_stagger else decoded(computed, view.mark)
     n = 0 if computed.is_stagger else plan.n
     lane_ends = _ALONE if computed.is_stagger else (_SPANS_LOW, lane_range(n, n > 1)[1])
+    lowest = lane_ends[0] if computed.is_stagger else 0.0
     return {
         'title': TITLE,
         **words(computed, found, axis, units, names),
         'columns': {
             **_lanes(computed, found, axis, n),
             **_spans(computed, axis),
-            'target': across(mark and mark.range_m, axis, (lane_ends[0] if computed.is_stagger else 0.0, lane_ends[1])),
+            'target': across(view.mark and view.mark.range_m, axis, (lowest, lane_ends[1])),
         },
         'ranges': {'x': axis.ends, 'y': list(lane_ends)},
         'labels': {'x': axis.label, 'y': ''},

@@ -15,6 +15,7 @@ from pycore.columns.axes import range_axis, round_ticks, speed_axis
 from pycore.columns.detection_words import words
 from pycore.columns.mark import ring
 from pycore.columns.named import names_at
+from pycore.columns.view import WHOLE
 from pycore.wording import trimmed
 
 NAME, TITLE = 'detection', 'Detection'
@@ -62,7 +63,7 @@ def steps(wanted):
     return np.array([0.1 * wanted, 0.5 * wanted, wanted, (1.0 + wanted) / 2.0])
 
 
-def picture(computed, units, size=None, mark=None):
+def picture(computed, units, size=None, view=WHOLE):
     """Return the figure of detection.
 
     Parameters
@@ -73,8 +74,8 @@ def picture(computed, units, size=None, mark=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Width and height of the plot. [px]
-    mark : Mark or None
-        The target that is followed. [m, m/s]
+    view : View
+        What the reader has chosen to look at. [unitless]
 
     Returns
     -------
@@ -89,12 +90,12 @@ def picture(computed, units, size=None, mark=None):
     found = probabilities(computed, size or SIZE)
     return {
         'title': TITLE,
-        **words(computed, x, y, found, mark),
+        **words(computed, x, y, found, view.mark),
         'columns': {
             'map': {'image': _classes(found, wanted), **_frame(x, y)},
             **_strip_of(computed, x, strip, wanted),
             'frame': _frames(x, y, strip),
-            'target': ring(mark, x, y),
+            'target': ring(view.mark, x, y),
         },
         'ranges': {'x': x.ends, 'y': [strip.low, top]},
         'labels': {'x': x.label, 'y': y.label},

@@ -15,6 +15,7 @@ from pycore.columns.filter_lanes import lanes
 from pycore.columns.filter_words import words
 from pycore.columns.mark import upright
 from pycore.columns.named import names_at
+from pycore.columns.view import WHOLE
 
 NAME, TITLE = 'doppler-filters', 'Doppler filters'
 
@@ -45,7 +46,7 @@ class _Scale:
         return self.foot(lane) + _HIGH * (level_db - _LOWEST_DB) / (self.top_db - _LOWEST_DB)
 
 
-def picture(computed, units, size=None, mark=None):
+def picture(computed, units, size=None, view=WHOLE):
     """Return the figure of the Doppler filters.
 
     Parameters
@@ -56,8 +57,8 @@ def picture(computed, units, size=None, mark=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Width and height of the plot. [px]
-    mark : Mark or None
-        The target that is followed. [m, m/s]
+    view : View
+        What the reader has chosen to look at. [unitless]
 
     Returns
     -------
@@ -65,7 +66,7 @@ def picture(computed, units, size=None, mark=None):
         Columns, ranges, labels, ticks and words.
     """
     size = size or SIZE
-    heard = lanes(computed, mark)
+    heard = lanes(computed, view.mark)
     name = 'radial speed' if computed.is_stagger else 'apparent speed'
     axis = speed_axis(
         (min(lane.speed_m_s[0] for lane in heard), max(lane.speed_m_s[-1] for lane in heard)), units, name
@@ -74,7 +75,7 @@ def picture(computed, units, size=None, mark=None):
     scale = _Scale(len(heard), _top(heard))
     return {
         'title': TITLE,
-        **words(computed, heard, axis, names, mark),
+        **words(computed, heard, axis, names, view.mark),
         'columns': {
             **_grounds(heard, axis, scale),
             **_clutter(computed, heard, axis, scale),

@@ -12,6 +12,7 @@ import numpy as np
 from pycore.columns.axes import Axis, interval_name
 from pycore.columns.dwell_words import words
 from pycore.columns.named import names_at
+from pycore.columns.view import WHOLE
 from pycore.dwell import sets_that_fit, timeline
 
 NAME, TITLE = 'dwell', 'Dwell'
@@ -29,7 +30,7 @@ _PX_PER_PULSE, _PX_PER_LETTER = 3.0, 7.0
 _MOST_AGAIN = 40
 
 
-def picture(computed, units, size=None, mark=None):
+def picture(computed, units, size=None, view=WHOLE):
     """Return the figure of the dwell.
 
     Parameters
@@ -40,8 +41,8 @@ def picture(computed, units, size=None, mark=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Width of the plot. [px]
-    mark : Mark or None
-        The target that is followed. [m, m/s]
+    view : View
+        What the reader has chosen to look at. [unitless]
 
     Returns
     -------
@@ -56,13 +57,13 @@ def picture(computed, units, size=None, mark=None):
     px_per_s = (size or {}).get('width', WIDTH_PX) / axis.limits[1]
     return {
         'title': TITLE,
-        **words(computed, cpis, axis, names, mark),
+        **words(computed, cpis, axis, names, view.mark),
         'columns': {
             **_bars(cpis, axis, given),
             'pulses': _pulses(computed, axis, px_per_s),
             'names': _names(cpis, axis, names, px_per_s),
             **_end(axis, given),
-            'target': _seeing(cpis, axis, mark),
+            'target': _seeing(cpis, axis, view.mark),
         },
         'ranges': {'x': [-_MARGIN * axis.ends[1], (1.0 + _MARGIN) * axis.ends[1]], 'y': [0.0, 1.0]},
         'labels': {'x': axis.label, 'y': ''},

@@ -12,6 +12,7 @@ from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import cycle_looks, looks
 from pycore.columns.mark import across
 from pycore.columns.received import received_corners
+from pycore.columns.view import WHOLE
 from pycore.columns.zone_sentences import zones_sentence
 from pycore.wording import count_word, percent, significant
 
@@ -23,7 +24,7 @@ MOST_WITH_SHARE = 6
 _SHARE_FROM, _SHARE_HIGH = -0.47, 0.2
 
 
-def picture(computed, units, size=None, mark=None):
+def picture(computed, units, size=None, view=WHOLE):
     """Return the figure of eclipsed ranges.
 
     Parameters
@@ -34,8 +35,8 @@ def picture(computed, units, size=None, mark=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Not used: nothing here depends on the size. [px]
-    mark : Mark or None
-        The target that is followed. [m, m/s]
+    view : View
+        What the reader has chosen to look at. [unitless]
 
     Returns
     -------
@@ -53,7 +54,7 @@ def picture(computed, units, size=None, mark=None):
         **_words(computed, axis, names, eclipsed, unseen),
         'columns': {
             **_columns(computed, axis, eclipsed, unseen, counted is not None),
-            'target': across(mark and mark.range_m, axis, lanes),
+            'target': across(view.mark and view.mark.range_m, axis, lanes),
         },
         'ranges': {'x': axis.ends, 'y': lanes},
         'labels': {'x': axis.label, 'y': ''},

@@ -14,6 +14,7 @@ from pycore.columns.axes import decade_ticks, interval_name, range_axis, speed_a
 from pycore.columns.mark import ring
 from pycore.columns.named import names_at
 from pycore.columns.trade_words import words
+from pycore.columns.view import WHOLE
 
 NAME, TITLE = 'trade-line', 'Trade line'
 
@@ -21,7 +22,7 @@ _ROOM = 2.2
 """Factor between the outermost mark and the end of the axis. [unitless]"""
 
 
-def picture(computed, units, size=None, mark=None):
+def picture(computed, units, size=None, view=WHOLE):
     """Return the figure of the trade between unambiguous range and first blind speed.
 
     Parameters
@@ -32,8 +33,8 @@ def picture(computed, units, size=None, mark=None):
         Units that the reader prefers. [unitless]
     size : mapping or None
         Not used: nothing here depends on the size. [px]
-    mark : Mark or None
-        The target that is followed. [m, m/s]
+    view : View
+        What the reader has chosen to look at. [unitless]
 
     Returns
     -------
@@ -52,7 +53,7 @@ def picture(computed, units, size=None, mark=None):
             **_bands(computed.plan, x, y),
             **_asked(computed.plan, x, y),
             **_prfs(computed, x, y, names),
-            'target': _target(mark, x, y),
+            'target': _target(view.mark, x, y),
         },
         'ranges': {'x': x.ends, 'y': y.ends},
         'labels': {'x': x.label, 'y': f'{y.label}, twice the Nyquist speed'},

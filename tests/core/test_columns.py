@@ -12,6 +12,7 @@ from pycore.columns import blind_zones, classes
 from pycore.columns.axes import decade_ticks, interval_name, range_axis, speed_axis
 from pycore.columns.blind_parts import avoidable, gaps
 from pycore.columns.received import received_corners
+from pycore.columns.view import View
 from pycore.computed import Computed
 from pycore.eclipsing import received_share
 from pycore.patterns import sweep
@@ -458,7 +459,7 @@ def test_every_prf_that_sees_the_target_has_a_candidate_at_it_and_no_other_prf_h
     computed = Computed(read(GHOSTLY))
     mark = marked(computed, {'range_km': 76.5, 'speed_mps': 100.0})
     sees = [not one.reasons for one in mark.followed.prfs]
-    bars = columns.picture('decoding', computed, SHOWN_UNITS, SIZE, mark)['columns']['candidates']
+    bars = columns.picture('decoding', computed, SHOWN_UNITS, SIZE, View(mark))['columns']['candidates']
     assert 0 < sum(sees) < 8
     for lane, seen in zip(7.5 - np.arange(8), sees, strict=True):
         here = bars['y'] == lane

@@ -9,6 +9,7 @@ from hypothesis import strategies as st
 from pycore import api, columns
 from pycore.columns import followed
 from pycore.columns.mark import marked
+from pycore.columns.view import View
 from pycore.computed import Computed
 from pycore.errors import InputError
 from pycore.plan.reading import read
@@ -76,7 +77,7 @@ def test_every_figure_marks_the_target_and_none_without_one(name, document):
     computed = Computed(read(document))
     mark = marked(computed, {'range_km': 60.0, 'speed_mps': 80.0})
     size = {'width': 60, 'height': 40}
-    with_it, without = (columns.picture(name, computed, SHOWN_UNITS, size, one) for one in (mark, None))
+    with_it, without = (columns.picture(name, computed, SHOWN_UNITS, size, View(one)) for one in (mark, None))
     assert len(with_it['columns']['target']['x']) >= 1
     assert len(without['columns']['target']['x']) == 0
     shapes = ({source: set(data) for source, data in one['columns'].items()} for one in (with_it, without))
@@ -85,7 +86,7 @@ def test_every_figure_marks_the_target_and_none_without_one(name, document):
 
 def test_the_note_follows_a_target_only_where_one_is_given():
     assert api.note(plan=PLAN)['target'] is None
-    assert api.note(plan=PLAN, target={'range_km': 60, 'speed_mps': 80})['target']['range_km'] == 60
+    assert api.note(plan=PLAN, view={'target': {'range_km': 60, 'speed_mps': 80}})['target']['range_km'] == 60
 
 
 @pytest.mark.parametrize(
@@ -99,7 +100,7 @@ def test_the_note_follows_a_target_only_where_one_is_given():
 )
 def test_a_target_that_is_none_is_refused_by_name(target, field):
     with pytest.raises(InputError) as refused:
-        api.note(plan=PLAN, target=target)
+        api.note(plan=PLAN, view={'target': target})
     assert refused.value.field == field
 
 

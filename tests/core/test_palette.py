@@ -11,7 +11,7 @@ from pycore.columns.detection import STEPS
 from webapp.figures.palette import CLASS_ROLES, PALETTE, SCHEMES, STEP_ROLES
 from webapp.figures.style import colours
 
-STYLE = Path(__file__).parents[2] / 'webapp' / 'page' / 'style.css'
+STYLE = Path(__file__).parents[2] / 'webapp' / 'page' / 'styles' / 'base.css'
 DARK_CLASSES = ('none', 'none-hatch', 'too-few', 'too-few-edge', 'dot')
 LIGHT_CLASSES = ('just-enough', 'more', 'all')
 

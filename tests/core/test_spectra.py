@@ -9,6 +9,7 @@ from pycore import columns, spectra
 from pycore.bank import centres, clutter_gain, target_gain
 from pycore.columns.filter_lanes import lanes
 from pycore.columns.mark import marked
+from pycore.columns.view import seen
 from pycore.computed import Computed
 from pycore.covered import covered_half_width, leakage
 from pycore.cpi import cpis
@@ -77,7 +78,7 @@ def test_rain_at_another_gate_is_not_heard():
     size = {'width': 600, 'height': 300}
     near, far = (
         columns.picture(
-            'doppler-filters', computed, SHOWN_UNITS, size, marked(computed, {'range_km': r, 'speed_mps': 80})
+            'doppler-filters', computed, SHOWN_UNITS, size, seen(computed, {'target': {'range_km': r, 'speed_mps': 80}})
         )
         for r in (30.0, 100.0)
     )
