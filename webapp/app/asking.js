@@ -5,7 +5,7 @@ const LATE_MS = 150; // the running line appears
 const LONG_MS = 1000; // and the word "computing"
 const PAUSE_MS = 800; // after the last edit of a run: what takes long is worked out then
 
-export function createAsking({ engine, state, figures, sizes, units, onLate, onAnswer, onFault }) {
+export function createAsking({ engine, state, view, figures, sizes, units, onLate, onAnswer, onFault }) {
   let opened = null; // a link's text, until the engine has read it
   let waits = 0;
   let timers = [];
@@ -20,7 +20,7 @@ export function createAsking({ engine, state, figures, sizes, units, onLate, onA
   function ask(deep = false) {
     clearTimeout(pause);
     const request = { ...state.request(), opened };
-    const args = { edits: request.edits.map(plain), figures: figures(), size: sizes(), units: units(), deep };
+    const args = { edits: request.edits.map(plain), figures: figures(), size: sizes(), units: units(), view: view.now, deep };
     if (waits === 0) timers = [setTimeout(late, LATE_MS, 'late'), setTimeout(late, LONG_MS, 'long')];
     waits += 1;
     engine.newest('note', opened === null ? { ...args, plan: request.plan } : { ...args, opened })

@@ -20,6 +20,7 @@ import { followScheme } from './scheme.js';
 import { createStrip } from './strip.js';
 import { createTravel } from './travel.js';
 import { listenToTyping } from './typing.js';
+import { createView } from './view.js';
 
 const root = document.documentElement;
 const opening = JSON.parse(document.getElementById('opening').textContent);
@@ -27,6 +28,7 @@ const keys = createKeys(opening.keys);
 const quantities = createQuantities(opening.grammar, { range: 'km', speed: 'm/s', pri: 'us' });
 const status = createStatus(document.getElementById('status'));
 const state = createState(opening.answer.plan);
+const view = createView();
 const address = createAddress(openLink);
 const hands = createHands({ state, keys, quantities, status, families: opening.units.families, redraw: () => page.redraw(), onAnswered: (count, act) => waiting.push({ count, act }), focus: (path, typing) => page.focus(path, typing) });
 const page = createPage({ opening, keys, quantities, state, hands, ask: () => asking.ask() });
@@ -39,7 +41,7 @@ let waiting = []; // what is to be done when the answer to an edit stands on the
 let painted = null;
 const first = new Promise((resolve) => { painted = resolve; });
 const engine = startEngine({ payload: (name) => first.then(() => packedPart(name)), onFail: failed });
-const asking = createAsking({ engine, state, figures: page.pictures.visible, sizes, units: () => quantities.units, onLate: head.late, onAnswer: answered, onFault: fault });
+const asking = createAsking({ engine, state, view, figures: page.pictures.visible, sizes, units: () => quantities.units, onLate: head.late, onAnswer: answered, onFault: fault });
 
 function answered(answer, request) {
   status.sayWhenQuiet(flipped(request.opened ? [] : findings, answer.findings));
@@ -89,6 +91,8 @@ state.watch((cause) => {
   if (cause === 'travel') asking.open(null);
   if (cause !== 'answer') asking.ask();
 });
+
+view.watch(() => asking.ask());
 
 const wasDragged = listenToDragging(document.body, hands);
 const strip = createStrip(document.getElementById('strip'), hands);
