@@ -76,14 +76,14 @@ class Judge:
             self._whole[kind] = self.block(kind, some.counts(np.arange(len(some)))) if fits else None
         return self._whole[kind]
 
-    def drawn_block(self, kind, rng, around):
+    def drawn_block(self, kind, chance, around):
         """Return some of the candidates for a place: drawn over all of them, and those around a PRI.
 
         Parameters
         ----------
         kind : int
             Place. [unitless]
-        rng : numpy.random.Generator
+        chance : Chance
             What draws. [unitless]
         around : int
             PRI. [clock counts]
@@ -99,16 +99,16 @@ class Judge:
         some, reach = self.choices[kind], _MOST_AT_ONCE // 4
         at = some.below(around)
         near = some.counts(np.arange(max(at - reach, 0), min(at + reach, len(some))))
-        return self.block(kind, np.union1d(self.drawn_counts(kind, rng), near))
+        return self.block(kind, np.union1d(self.drawn_counts(kind, chance), near))
 
-    def drawn_counts(self, kind, rng):
+    def drawn_counts(self, kind, chance):
         """Return candidates for a place without tables: all of them, or some drawn over all of them.
 
         Parameters
         ----------
         kind : int
             Place. [unitless]
-        rng : numpy.random.Generator
+        chance : Chance
             What draws. [unitless]
 
         Returns
@@ -121,7 +121,7 @@ class Judge:
             return some.counts(np.arange(len(some)))
         # One from each of equal parts, so that no part of the interval is left out.
         part = len(some) / (_MOST_AT_ONCE // 2)
-        drawn = ((np.arange(_MOST_AT_ONCE // 2) + rng.random(_MOST_AT_ONCE // 2)) * part).astype(np.int64)
+        drawn = ((np.arange(_MOST_AT_ONCE // 2) + chance.parts(_MOST_AT_ONCE // 2)) * part).astype(np.int64)
         return some.counts(np.unique(drawn.clip(0, len(some) - 1)))
 
     def block(self, kind, counts):

@@ -11,6 +11,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from pycore.finder.blocks import Block, Weighed
+from pycore.finder.chance import Chance
 from pycore.finder.found import Ledger
 from pycore.finder.shortfalls import DIGITS
 
@@ -194,7 +195,7 @@ class Descent:
     def __init__(self, judge, seed, number):
         self.judge, self.ledger = judge, Ledger()
         self._record = Recorder(judge, self.ledger)
-        self._rng = np.random.Generator(np.random.PCG64(np.random.SeedSequence(seed, spawn_key=(number,))))
+        self._chance = Chance(seed, number)
         kept = dict(judge.limits.keep)
         self._kept = kept
         self._free = [place for place in range(judge.limits.n) if place not in kept]
@@ -239,22 +240,22 @@ class Descent:
         """Draw a PRI for one place that goes with those that are there; None where none does."""
         held = [(self.judge.kinds[other], count) for other, count in sorted(pris.items())]
         kind = self.judge.kinds[place]
-        some = self.judge.drawn_counts(kind, self._rng)
+        some = self.judge.drawn_counts(kind, self._chance)
         may = self.judge.legal(held, kind, some)
         if strict and self.judge.decoder.judges and may.any():
             may &= self.judge.decoder.sieve(held, kind, some)
         left = np.flatnonzero(may)
-        return int(some[left[self._rng.integers(left.size)]]) if left.size else None
+        return int(some[left[self._chance.below(left.size)]]) if left.size else None
 
     def _shuffled(self, places):
-        return self._rng.permutation(places).tolist()
+        return self._chance.shuffled(places)
 
     def _improve(self, place):
         """Take the best PRI for one place, if it gains."""
         kind = self.judge.kinds[place]
         held = [(self.judge.kinds[q], pri) for q, pri in enumerate(self._pris) if q != place]
         around = self._pris[place]
-        block = self.judge.drawn_block(kind, self._rng, around)
+        block = self.judge.drawn_block(kind, self._chance, around)
         if place in self._kept:
             block = self.judge.block(kind, np.array([around]))
         weighed = self.judge.weigh(held, block)
@@ -280,7 +281,7 @@ class Descent:
 
     def _kick(self, pris):
         """Draw a few places anew."""
-        many = min(2 + int(self._rng.integers(2)), len(self._free))
+        many = min(2 + self._chance.below(2), len(self._free))
         drawn = self._shuffled(self._free)[:many]
         left = {place: pri for place, pri in enumerate(pris) if place not in drawn}
         for place in drawn:

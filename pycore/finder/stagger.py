@@ -5,6 +5,7 @@ from itertools import combinations
 import numpy as np
 
 from pycore.eclipsing import METRES_PER_SECOND_OF_DELAY
+from pycore.finder.chance import Chance
 from pycore.finder.cycle import StaggerJudge
 from pycore.finder.decode import pulses_of
 from pycore.finder.found import Ledger
@@ -42,7 +43,7 @@ class StaggerDescent:
 
     def __init__(self, judge, seed, number):
         self.judge, self.ledger = judge, Ledger()
-        self._rng = np.random.Generator(np.random.PCG64(np.random.SeedSequence(seed, spawn_key=(number,))))
+        self._chance = Chance(seed, number)
         self._kept = dict(judge.limits.keep)
         self._pris, self._depth, self._queue = None, np.inf, []
         self._base, self._kicks = None, 0
@@ -69,12 +70,13 @@ class StaggerDescent:
         some, limits = self.judge.choices[0], self.judge.limits
         least, most = self.judge.cycle.mean_counts
         low, high = some.counts(np.array([0, len(some) - 1])).tolist()
-        mean = self._rng.uniform(max(least, low), max(min(most, high), max(least, low)))
+        first, last = max(least, low), max(min(most, high), max(least, low))
+        mean = first + (last - first) * self._chance.part()
         side = np.sqrt(self.judge.cycle.spread)
         ends = some.below(int(max(low, mean / side))), some.below(int(min(high, mean * side))) + 1
-        pris = some.counts(
-            self._rng.integers(ends[0], max(min(ends[1], len(some)), ends[0] + 1), limits.n).clip(0, len(some) - 1)
-        )
+        many = max(min(ends[1], len(some)), ends[0] + 1) - ends[0]
+        drawn = ends[0] + (self._chance.parts(limits.n) * many).astype(np.int64)
+        pris = some.counts(drawn.clip(0, len(some) - 1))
         pris[list(self._kept)] = list(self._kept.values())
         self._start(self._levelled(pris))
         self._base, self._kicks = None, 0
@@ -86,9 +88,9 @@ class StaggerDescent:
             missing = max(least * pris.size - pris.sum(), 0) + min(most * pris.size - pris.sum(), 0)
             if abs(missing) < 1e-6:
                 break
-            place = int(self._rng.integers(pris.size))
+            place = self._chance.below(pris.size)
             if place not in self._kept:
-                part = missing if self._rng.random() < 0.5 else missing * self._rng.random()
+                part = missing if self._chance.part() < 0.5 else missing * self._chance.part()
                 at = some.below(int(round(pris[place] + part)))
                 pris[place] = some.counts(np.array([min(at, len(some) - 1)]))[0]
         return pris
@@ -104,7 +106,7 @@ class StaggerDescent:
             self._queue = self._shuffled()
 
     def _shuffled(self):
-        return [self._moves[i] for i in self._rng.permutation(len(self._moves)).tolist()]
+        return self._chance.shuffled(self._moves)
 
     def _improve(self, move):
         """Try all that one move can do, and take the best if it gains."""
@@ -128,7 +130,7 @@ class StaggerDescent:
             lengths = some.counts(np.arange(len(some)))
         else:
             part = len(some) / (_AT_ONCE // 2)
-            drawn = ((np.arange(_AT_ONCE // 2) + self._rng.random(_AT_ONCE // 2)) * part).astype(np.int64)
+            drawn = ((np.arange(_AT_ONCE // 2) + self._chance.parts(_AT_ONCE // 2)) * part).astype(np.int64)
             at = some.below(own)
             near = np.arange(max(at - _AT_ONCE // 4, 0), min(at + _AT_ONCE // 4, len(some)))
             lengths = some.counts(np.union1d(drawn.clip(0, len(some) - 1), near))
@@ -160,8 +162,8 @@ class StaggerDescent:
         free = [place for place in range(kicked.size) if place not in self._kept]
         for _ in range(2):
             if len(free) > 1:
-                one, other = self._rng.permutation(free)[:2]
-                shift = self._rng.integers(-20, 21) * self.judge.choices[0].step
+                one, other = self._chance.shuffled(free)[:2]
+                shift = (self._chance.below(41) - 20) * self.judge.choices[0].step
                 kicked[one], kicked[other] = kicked[one] + shift, kicked[other] - shift
         if self.judge.legal(kicked[None])[0]:
             self._start(kicked)
