@@ -165,7 +165,8 @@ def _clutter(computed):
     lost = computed.share - computed.echoes.share_with_clutter
     if lost <= _NOTHING:
         return [f'{capitalised(listed(names))} {plural(len(names), "covers", "cover")} nothing more.']
-    return [f'Dotted: on {percent(lost)} more {listed(names)} {plural(len(names), "stands", "stand")} above the noise.']
+    stand = f'where {listed(names)} {plural(len(names), "stands", "stand")} above the noise'
+    return [f'Dotted: another {percent(lost)} {stand}.']
 
 
 def _listed(holes, place):

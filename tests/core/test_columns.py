@@ -502,5 +502,5 @@ def test_the_caption_says_what_clutter_takes_and_only_where_there_is_some():
     dry, wet = (pictures(document, only=['blind-zones'])['blind-zones'] for document in (OPENING, RAINY))
     computed = Computed(read(RAINY))
     lost = 100 * (computed.share - computed.echoes.share_with_clutter)
-    assert f'Dotted: on {lost:.2f}{THIN_SPACE}% more rain stands above the noise.' in wet['caption']
+    assert f'Dotted: another {lost:.2f}{THIN_SPACE}% where rain stands above the noise.' in wet['caption']
     assert 'Dotted' not in dry['caption']

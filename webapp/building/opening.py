@@ -12,7 +12,21 @@ from webapp.building.cached import made
 from webapp.building.places import ROOT, WEBAPP, content_key
 from webapp.building.stop import Stop
 
-EXAMPLE = 'opening'  # webapp/examples/opening.json is the plan that the page opens with
+EXAMPLES = (
+    'opening',
+    'one-clear-prf',
+    'long-range',
+    'coastal',
+    'two-carriers',
+    'four-pulse-stagger',
+    'three-delay-stagger',
+    'heavy-rain',
+    'two-prf-weather',
+    'counter-drone',
+    'eight-prfs',
+    'high-prf',
+    'sixteen-prfs',
+)  # webapp/examples, from simple to special, as the page lists them; it opens with the first
 
 
 def opening_json(python):
@@ -67,7 +81,7 @@ def opening():
     from webapp import figures
 
     plans = examples()
-    answer = api.note(plan=plans[EXAMPLE]['plan'], figures=list(FIGURES), deep=True)
+    answer = api.note(plan=plans[EXAMPLES[0]]['plan'], figures=list(FIGURES), deep=True)
     pictures = answer['figures']
     items = {name: figures.build(name, picture) for name, picture in pictures.items()}
     for picture in pictures.values():
@@ -130,16 +144,16 @@ def units():
 
 
 def examples():
-    """Return the worked examples, the opening one first.
+    """Return the worked examples in the order of the page.
 
     Returns
     -------
     examples : dict of str to dict
         By file name, as they are written.
     """
-    paths = sorted((WEBAPP / 'examples').glob('*.json'), key=lambda path: (path.stem != EXAMPLE, path.stem))
+    folder = WEBAPP / 'examples'
 
-    return {path.stem: json.loads(path.read_text(encoding='utf-8')) for path in paths}
+    return {name: json.loads((folder / f'{name}.json').read_text(encoding='utf-8')) for name in EXAMPLES}
 
 
 def shown(example, api):
