@@ -7,7 +7,8 @@ No mathematics lives here.
 from pycore import edit, link
 from pycore.assessment import assessment, finite
 from pycore.cautions import cautions
-from pycore.columns import followed, picture
+from pycore.columns import followed, marking, picture
+from pycore.columns.here import here_words
 from pycore.columns.view import seen
 from pycore.computed import Computed
 from pycore.conventions import conventions
@@ -17,7 +18,10 @@ from pycore.findings import verdict
 from pycore.follow import follow, strip
 from pycore.holds_over import judged
 from pycore.margins import margins_shown
+from pycore.plan.keys.followed import FOLLOWED
 from pycore.plan.reading import read
+from pycore.quantity import read_number
+from pycore.shown import shown_unit
 from pycore.timing import columns, timing_table
 from pycore.variation import steps, varied
 from pycore.wording import SHOWN_UNITS
@@ -79,13 +83,15 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     """
     units = {**SHOWN_UNITS, **(units or {})}
     start = None if opened is None else link.read_link(opened)
+    if start is not None:
+        view = {**(view or {}), 'target': start.target}
     edited, said, refused = _edited(plan if start is None else start.document, edits, units)
     computed = Computed(edited, with_echoes=deep)
     found = judged(computed, units)
     looked = seen(computed, view)
     return {
         'plan': computed.plan.document,
-        'link': link.written(computed.plan.document),
+        'link': _link(computed, looked),
         'opened': None if start is None else _as_opened(start),
         'said': said,
         'refused': refused,
@@ -95,6 +101,97 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         'figures': {name: picture(name, computed, units, (size or {}).get(name), looked) for name in figures},
         'target': None if looked.mark is None else followed.words(looked.mark, units),
     }
+
+
+def look(plan, figures=(), marked=(), size=None, units=None, view=None):
+    """Return what a page shows anew where the plan stays and only the way of looking at it changes.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+    figures : sequence of str
+        Names of the figures that are looked at in another way. [unitless]
+    marked : sequence of str
+        Names of those in which only the followed target moves. [unitless]
+    size, units, view : mapping or None
+        As for :func:`note`. [cells, unitless, km and m/s]
+
+    Returns
+    -------
+    looked : dict
+        ``link``, ``figures`` (of the marked ones only what moves), ``target``.
+    """
+    units = {**SHOWN_UNITS, **(units or {})}
+    computed = Computed(read(plan))
+    looked = seen(computed, view)
+    sizes = size or {}
+    return {
+        'link': _link(computed, looked),
+        'figures': {
+            **{name: picture(name, computed, units, sizes.get(name), looked) for name in figures},
+            **{name: marking(name, computed, units, sizes.get(name), looked) for name in marked if name not in figures},
+        },
+        'target': None if looked.mark is None else followed.words(looked.mark, units),
+    }
+
+
+def here(plan, figure, x=None, y=None, units=None):
+    """Return in one line what is at one point of a figure: for the map of blind zones, why it is blind.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+    figure : str
+        Name of the figure. [unitless]
+    x, y : float or None
+        The point; ``None`` on an axis that does not hold there. [units on the axes]
+    units : mapping or None
+        Units that the reader prefers. [unitless]
+
+    Returns
+    -------
+    here : dict
+        ``text``, empty where there is nothing to say.
+    """
+    return {'text': here_words(Computed(read(plan)), figure, x, y, {**SHOWN_UNITS, **(units or {})})}
+
+
+def typed_target(name, text, current=None, units=None):
+    """Return what was typed for the followed target.
+
+    Parameters
+    ----------
+    name : str
+        ``range_km`` or ``speed_mps``. [unitless]
+    text : str
+        What was typed. [unitless]
+    current : float or None
+        Present value, which ``+20%`` changes. [km or m/s]
+    units : mapping or None
+        Units that the reader prefers: a number without a unit is meant in them. [unitless]
+
+    Returns
+    -------
+    typed : dict
+        ``value``. [km or m/s]
+
+    Raises
+    ------
+    InputError
+        Where it is no such number.
+    """
+    key = FOLLOWED[name]
+    unit = shown_unit(key, {**SHOWN_UNITS, **(units or {})})
+    return {'value': read_number(text, key, f'followed.{name}', unit, current)}
+
+
+def _link(computed, looked):
+    """Write the link, which carries the followed target."""
+    mark = looked.mark
+    view = {} if mark is None else {'target': link.target_text(mark.target)}
+    return link.written(computed.plan.document, view=view)
 
 
 def _edited(document, edits, units):
@@ -112,7 +209,7 @@ def _edited(document, edits, units):
 
 
 def _as_opened(start):
-    return {name: getattr(start, name) for name in ('cut', 'edited', 'said', 'refused', 'view')}
+    return {name: getattr(start, name) for name in ('cut', 'edited', 'said', 'refused', 'view', 'target')}
 
 
 def _shown(finding):
@@ -317,6 +414,9 @@ ACTIONS = {
     'note': note,
     'compare': compare,
     'vary': vary,
+    'look': look,
+    'here': here,
+    'typed-target': typed_target,
     'follow': follow_target,
     'timing': timing,
     'margins': margins_of,

@@ -129,12 +129,15 @@ def follow(computed, range_m, speed_m_s):
     followed : FollowedSet
         PRF by PRF, and over all.
     """
-    prfs = tuple(_followed(computed, index, range_m, speed_m_s) for index in range(computed.plan.n))
+    level = detection.set_threshold(computed.plan.target.false_alarm, computed.looks, computed.m)
+    prfs = tuple(
+        _followed(computed, index, range_m, speed_m_s, level, one.reasons)
+        for index, one in enumerate(why(computed, range_m, speed_m_s))
+    )
     if computed.is_stagger:
         return _followed_stagger(computed, prfs, range_m, speed_m_s)
     clear = sum(not prf.reasons for prf in prfs)
     ratio = np.array([10.0 ** (prf.scnr_db / 10.0) for prf in prfs])
-    level = detection.set_threshold(computed.plan.target.false_alarm, computed.looks, computed.m)
     probability = float(set_probability(ratio, computed.m, level, computed.plan.target.fluctuation))
     seen = clear >= computed.m
     sees = [not prf.reasons for prf in prfs]
@@ -201,16 +204,14 @@ def gate(computed, index, range_m):
     return Gate(cpi, share, float(received_power(share, plan.eclipsing_loss)), signal, np.array(ratio))
 
 
-def _followed(computed, index, range_m, speed_m_s):
+def _followed(computed, index, range_m, speed_m_s, level, reasons):
     plan, patches = computed.plan, computed.echoes.patches
     reach, blind = float(computed.unambiguous_range_m[index]), float(computed.blind_speed_m_s[index])
     here = gate(computed, index, range_m)
     share, ratio = here.received, here.clutter
     outputs = filter_outputs(here.cpi, speed_m_s, here.signal, patches, ratio, here.power)
-    reasons = _reasons(computed, index, range_m, speed_m_s)
     best = outputs.best if 'notch' not in reasons else -1
     snr, scnr = (float(outputs.target[best]), float(outputs.scnr[best])) if best >= 0 else (0.0, 0.0)
-    level = detection.set_threshold(plan.target.false_alarm, computed.looks, computed.m)
     names = [patch.name or f'patch {place + 1}' for place, patch in enumerate(patches)]
     return Followed(
         float(ambiguity.fold_range(range_m, reach)),
@@ -230,16 +231,30 @@ def _decibels(ratio):
     return 10.0 * float(np.log10(ratio)) if ratio > 0 else -np.inf
 
 
-def _reasons(computed, index, range_m, speed_m_s):
-    """Say why one PRF does not see the target: eclipsed, in the notch, or under clutter."""
+def why(computed, range_m, speed_m_s):
+    """Return for each PRF why it sees a target or not: eclipsed, in the notch, or under clutter.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    range_m : float
+        True range. [m]
+    speed_m_s : float
+        True radial speed, positive closing. [m/s]
+
+    Returns
+    -------
+    why : tuple of Why
+        One for each PRI; inside the coverage or beyond it.
+    """
     plan = computed.plan
     region = (min(range_m, plan.range_m[0]), max(range_m, plan.range_m[1]))
     speeds = (min(speed_m_s, plan.speed_m_s[0]), max(speed_m_s, plan.speed_m_s[1]))
     ranges, clear = computed.prf_spans(region, speeds)
     piece = computed.echoes.piece_at(range_m) if computed.echoes.patches and not computed.is_stagger else None
     covered = None if piece is None else piece.speeds
-    answer = zones.why(ranges, clear, plan.n, region, speeds, range_m, speed_m_s, covered)
-    return answer[index].reasons
+    return zones.why(ranges, clear, plan.n, region, speeds, range_m, speed_m_s, covered)
 
 
 def blur_half_widths(computed):

@@ -10,6 +10,9 @@ from pycore.columns import (
     eclipsed_ranges,
     trade_line,
 )
+from pycore.columns.axes import range_axis, speed_axis
+from pycore.columns.mark import ring
+from pycore.columns.places import MEASURES, ZOOMED
 from pycore.columns.view import WHOLE
 
 _IN_ORDER = (blind_zones, trade_line, eclipsed_ranges, blind_speeds, decoding, doppler_filters, detection, dwell)
@@ -58,6 +61,39 @@ def picture(name, computed, units, size=None, view=WHOLE):
     -------
     picture : dict
         ``title``; ``caption``, ``short`` (one line), ``summary`` (for a screen reader), ``table`` (``head``, ``rows``);
-        ``columns`` by source; ``ranges``, ``labels``, ``units`` and fixed ``ticks`` by axis.
+        ``columns`` by source; ``ranges``, ``labels``, ``units`` and fixed ``ticks`` by axis; what its axes measure
+        of a target; whether only a part is shown (``None`` where it cannot be).
     """
-    return _MODULES[name].picture(computed, units, size, view)
+    return {
+        **_MODULES[name].picture(computed, units, size, view),
+        'measures': MEASURES.get(name, {}),
+        'zoomed': None if name not in ZOOMED else name in view.zoom,
+    }
+
+
+def marking(name, computed, units, size=None, view=WHOLE):
+    """Return what of a figure changes where only the followed target does.
+
+    Parameters
+    ----------
+    name : str
+        One of ``FIGURES``. [unitless]
+    computed : Computed
+        What the plan gives. [SI]
+    units : mapping
+        Units that the reader prefers. [unitless]
+    size : mapping or None
+        Width and height of its plot. [px]
+    view : View
+        What the reader has chosen to look at. [unitless]
+
+    Returns
+    -------
+    picture : dict
+        Of a map only the columns of the ring, as the map stays; of the others the whole figure, which costs little.
+    """
+    if name not in ZOOMED:
+        return picture(name, computed, units, size, view)
+    x, y = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)
+    sentence = {'marked': detection.marked(view.mark)} if name == detection.NAME else {}
+    return {'columns': {'target': ring(view.mark, x, y)}, **sentence}

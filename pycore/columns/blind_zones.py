@@ -12,7 +12,7 @@ from pycore.columns.axes import range_axis, speed_axis
 from pycore.columns.classes import classes
 from pycore.columns.mark import ring
 from pycore.columns.named import names_at
-from pycore.columns.view import WHOLE
+from pycore.columns.view import WHOLE, shown_part
 from pycore.columns.zone_words import words
 
 NAME, TITLE = 'blind-zones', 'Blind zones'
@@ -48,20 +48,23 @@ def picture(computed, units, size=None, view=WHOLE):
     picture : dict
         Columns, ranges, labels, ticks and words.
     """
-    x, y = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)
-    count, blind, with_clutter = _counted(computed, size or SIZE)
+    whole = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)
+    x, y = part = view.part(NAME, *whole)
+    count, blind, with_clutter = _counted(computed, part, size or SIZE)
+    numbers, boxes = _numbers(computed, x, y, blind)
     return {
         'title': TITLE,
-        **words(computed, x, y),
+        **words(computed, *whole, shown_part(*whole, part)),
         'columns': {
             'map': {'image': classes(count, computed.looks, computed.m, with_clutter), **_frame(x, y)},
             **_regions(computed, x, y),
-            'holes': _numbers(computed, x, y, blind),
+            'holes': numbers,
             'target': ring(view.mark, x, y),
         },
         'ranges': {'x': x.ends, 'y': y.ends},
         'labels': {'x': x.label, 'y': y.label},
         'units': {'x': x.unit, 'y': y.unit},
+        'holes': boxes,
         'ticks': {},
     }
 
@@ -74,11 +77,11 @@ def _frame(x, y):
     }
 
 
-def _counted(computed, size):
+def _counted(computed, part, size):
     """Return the clear PRFs in every cell, the cells that another plan could see, and the count with clutter."""
     width, height = _cells_for(size)
     seen = computed.sight
-    at_range, at_speed = zones.centres(seen.range_m, width), zones.centres(seen.speed_m_s, height)
+    at_range, at_speed = (zones.centres(axis.limits, cells) for axis, cells in zip(part, (width, height), strict=True))
     count = zones.count_map(seen.ranges, seen.speeds, at_range, at_speed)
     could = [
         zones.clear_marks(spans, at) for spans, at in ((seen.floor_ranges, at_range), (seen.floor_speeds, at_speed))
@@ -133,14 +136,32 @@ def _regions(computed, x, y):
 
 
 def _numbers(computed, x, y, blind):
-    """Return where the holes' numbers stand: inside each hole, towards the right end of one that fills the range."""
+    """Return where the holes' numbers stand, inside each or towards the right end of a long one, and their ends."""
     height, width = blind.blind.shape
-    spots = [_spot(hole, x, y, blind) for hole in computed.holes.listed[:MOST_NUMBERED]]
+    numbered = _in_part(computed.holes.listed, x, y)
+    spots = [_spot(hole, x, y, blind) for _, hole in numbered]
     at = np.array([(column, row) for column, row, _ in spots]).reshape(-1, 2)
     beside = _beside(at, [small for *_, small in spots], (width, height))
-    text = [str(i + 1) for i in range(len(spots))]
+    text = [str(number) for number, _ in numbered]
     at = _centre(at[:, 0], x.ends, width), _centre(at[:, 1], y.ends, height)
-    return names_at(*at, text, ['center'] * len(spots), *beside.T)
+    boxes = [
+        {'x': [end / 1e3 for end in hole.range_m], 'y': list(hole.speed_m_s), 'number': number}
+        for number, hole in numbered
+    ]
+    return names_at(*at, text, ['center'] * len(spots), *beside.T), boxes
+
+
+def _in_part(holes, x, y):
+    """Return the holes that show, with their numbers in the whole list; only so many carry one."""
+    shown = [
+        (place + 1, hole)
+        for place, hole in enumerate(holes)
+        if hole.range_m[0] < x.limits[1]
+        and hole.range_m[1] > x.limits[0]
+        and hole.speed_m_s[0] < y.limits[1]
+        and hole.speed_m_s[1] > y.limits[0]
+    ]
+    return shown[:MOST_NUMBERED]
 
 
 def _beside(at, small, size):

@@ -12,10 +12,10 @@ import numpy as np
 
 from pycore import detected, zones
 from pycore.columns.axes import range_axis, round_ticks, speed_axis
-from pycore.columns.detection_words import words
+from pycore.columns.detection_words import marked, words
 from pycore.columns.mark import ring
 from pycore.columns.named import names_at
-from pycore.columns.view import WHOLE
+from pycore.columns.view import WHOLE, shown_part
 from pycore.wording import trimmed
 
 NAME, TITLE = 'detection', 'Detection'
@@ -82,15 +82,17 @@ def picture(computed, units, size=None, view=WHOLE):
     picture : dict
         Columns, ranges, labels, ticks and words.
     """
-    x, y = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)
+    whole = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)
+    x, y = part = view.part(NAME, *whole)
     bottom, top = y.ends
     span = top - bottom
     strip = _Strip(bottom - (_GAP + _STRIP) / _MAP * span, bottom - _GAP / _MAP * span)
     wanted = computed.plan.target.pd_wanted
-    found = probabilities(computed, size or SIZE)
+    found = probabilities(computed, size or SIZE, part)
     return {
         'title': TITLE,
-        **words(computed, x, y, found, view.mark),
+        **words(computed, *whole, found, shown_part(*whole, part)),
+        'marked': marked(view.mark),
         'columns': {
             'map': {'image': _classes(found, wanted), **_frame(x, y)},
             **_strip_of(computed, x, strip, wanted),
@@ -105,7 +107,7 @@ def picture(computed, units, size=None, view=WHOLE):
     }
 
 
-def probabilities(computed, size):
+def probabilities(computed, size, part):
     """Return the probability in every cell of a map that fits a plot.
 
     Parameters
@@ -114,6 +116,8 @@ def probabilities(computed, size):
         What the plan gives. [SI]
     size : mapping
         Width and height of the whole plot. [px]
+    part : pair of Axis
+        Ranges and radial speeds of the map. [m, m/s]
 
     Returns
     -------
@@ -123,8 +127,8 @@ def probabilities(computed, size):
     width, height = max(size['width'], 16.0), max(_MAP * size['height'], 16.0)
     most = _CELLS / max(computed.looks, 1) * (_CLUTTERED if computed.echoes.patches else 1.0)
     cell = max(np.sqrt(width * height / most), _SMALLEST_PX)
-    at_range = zones.centres(computed.plan.range_m, max(int(width / cell), 8))
-    at_speed = zones.centres(computed.plan.speed_m_s, max(int(height / cell), 8))
+    at_range = zones.centres(part[0].limits, max(int(width / cell), 8))
+    at_speed = zones.centres(part[1].limits, max(int(height / cell), 8))
     return detected.probability_over(computed, at_range, at_speed).T
 
 

@@ -7,7 +7,7 @@ from pycore.wording import capitalised, percent, significant, trimmed
 _LEAST = 0.0005
 
 
-def words(computed, x, y, found, mark=None):
+def words(computed, x, y, found, also=()):
     """Return caption, short caption, summary and table of detection.
 
     Parameters
@@ -17,9 +17,9 @@ def words(computed, x, y, found, mark=None):
     x, y : Axis
         Of range and of radial speed. [m, m/s]
     found : float array, shape V × R
-        Probability in every cell of the map. [unitless]
-    mark : Mark or None
-        The target that is followed. [m, m/s]
+        Probability in every cell that is shown of the map. [unitless]
+    also : sequence of str
+        Sentences that end the caption: which part of the map is shown. [unitless]
 
     Returns
     -------
@@ -27,11 +27,11 @@ def words(computed, x, y, found, mark=None):
         caption, short, summary, table.
     """
     first = _reached(computed, x)
-    rest = [_curves(computed), _key(computed), *_marked(mark)]
+    rest = [_curves(computed), _key(computed), *also]
     return {
         'caption': ' '.join([first, *rest]),
         'short': first,
-        'summary': f'{_shares(computed, x, y, found)} {first}',
+        'summary': ' '.join([_shares(computed, x, y, found, bool(also)), first, *also]),
         'table': _table(computed, x),
     }
 
@@ -70,21 +70,32 @@ def _key(computed):
     return f'In the map {what} count too; plain and the tone next to it are at least {_wanted(computed)}.'
 
 
-def _marked(mark):
-    """Say how probable the followed target is."""
+def marked(mark):
+    """Say how probable it is to detect the followed target.
+
+    Parameters
+    ----------
+    mark : Mark or None
+        The target. [m, m/s]
+
+    Returns
+    -------
+    sentence : str
+        Empty where none is followed.
+    """
     if mark is None:
-        return []
+        return ''
     chance = mark.followed.probability
-    return [f'The target, ringed, has {significant(chance) if chance >= _LEAST else f"below {_LEAST}"}.']
+    return f'The target, ringed, has {significant(chance) if chance >= _LEAST else f"below {_LEAST}"}.'
 
 
-def _shares(computed, x, y, found):
+def _shares(computed, x, y, found, cut):
     """Say how much of the map reaches what is wanted, for someone who does not see it."""
     enough = float(np.mean(found >= computed.plan.target.pd_wanted))
     part = f'About {percent(enough)}' if 0.0 < enough < 1.0 else 'All' if enough else 'No part'
     return capitalised(
         f'map of the probability of detection over range, {x.span()}, and radial speed, {y.span()}, with curves along '
-        f'the range under it. {part} of it has at least the wanted probability.'
+        f'the range under it. {part} of {"what is shown" if cut else "it"} has at least the wanted probability.'
     )
 
 

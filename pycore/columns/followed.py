@@ -27,15 +27,17 @@ def words(mark, units):
     Returns
     -------
     target : dict
-        ``range_km`` and ``speed_mps``; ``text``, two or three sentences; ``seen``; ``head`` and ``rows`` of the table.
+        ``range_km`` and ``speed_mps``; ``text``, two or three sentences, and ``rest``, the same
+        after range and speed; ``seen``; ``head`` and ``rows`` of the table.
     """
     plan = mark.computed.plan
     x, y = range_axis(plan.range_m, units), speed_axis(plan.speed_m_s, units)
     parts = _parts(mark.computed)
+    rest = ' '.join([_verdict(mark), *_outside(mark, x, y), _detected(mark), *_ghosts(mark, x, y)])
     return {
-        'range_km': mark.range_m / 1e3,
-        'speed_mps': mark.speed_m_s,
-        'text': ' '.join([_verdict(mark, x, y), *_outside(mark, x, y), _detected(mark), *_ghosts(mark, x, y)]),
+        **mark.target,
+        'text': f'A target at {place(mark, x, y)}, {rest}',
+        'rest': rest,
         'seen': mark.followed.seen,
         'head': [part.format(x=x.unit, y=y.unit) for part in parts],
         'rows': [
@@ -86,9 +88,9 @@ def moving(speed_m_s, axis):
     return f'{"closing" if speed_m_s > 0 else "receding"} at {axis.text(abs(speed_m_s))}'
 
 
-def _verdict(mark, x, y):
+def _verdict(mark):
     computed, found = mark.computed, mark.followed
-    lead = f'A target at {place(mark, x, y)}, is {"seen" if found.seen else "not seen"}'
+    lead = f'is {"seen" if found.seen else "not seen"}'
     if computed.is_stagger:
         return f'{lead} by the stagger.'
     if computed.plan.n == 1:

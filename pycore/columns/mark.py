@@ -26,6 +26,7 @@ class Mark:
         self.computed = computed
         self.range_m = float(range_m)
         self.speed_m_s = float(speed_m_s)
+        self.target = {'range_km': round(range_m / 1e3, 12), 'speed_mps': speed_m_s}
 
     @cached_property
     def followed(self):

@@ -1,8 +1,11 @@
 """What a reader has chosen to look at: it changes figures and their words, never a finding."""
 
-from dataclasses import dataclass
+import math
+from collections.abc import Mapping
+from dataclasses import dataclass, field, replace
 
 from pycore.columns.mark import Mark, marked
+from pycore.errors import InputError
 
 
 @dataclass(frozen=True, slots=True)
@@ -13,9 +16,31 @@ class View:
     ----------
     mark : Mark or None
         The target that is followed, which every figure marks. [m, m/s]
+    zoom : mapping
+        For each figure of which only a part is shown: its ends in range and in radial speed. [m, m/s]
     """
 
     mark: Mark | None = None
+    zoom: Mapping = field(default_factory=dict)
+
+    def part(self, name, x, y):
+        """Return the axes that one figure is drawn on.
+
+        Parameters
+        ----------
+        name : str
+            The figure. [unitless]
+        x, y : Axis
+            Of range and radial speed, over the whole coverage. [m, m/s]
+
+        Returns
+        -------
+        x, y : Axis
+            The same, or cut to the part that is looked at.
+        """
+        if name not in self.zoom:
+            return x, y
+        return tuple(replace(axis, limits=ends) for axis, ends in zip((x, y), self.zoom[name], strict=True))
 
 
 WHOLE = View()
@@ -30,7 +55,8 @@ def seen(computed, chosen):
     computed : Computed
         What the plan gives. [SI]
     chosen : mapping or None
-        ``target``: ``range_km`` and ``speed_mps`` of the target that is followed. [km, m/s]
+        ``target``: ``range_km`` and ``speed_mps`` of the target that is followed; ``zoom``: for each figure of which
+        a part is looked at, its ends ``x`` and ``y``. [km, m/s]
 
     Returns
     -------
@@ -42,4 +68,48 @@ def seen(computed, chosen):
     InputError
         Where what is chosen cannot be.
     """
-    return View(mark=marked(computed, (chosen or {}).get('target')))
+    chosen = chosen or {}
+    return View(mark=marked(computed, chosen.get('target')), zoom=_zoomed(computed.plan, chosen.get('zoom') or {}))
+
+
+def _zoomed(plan, zoom):
+    """Return the parts in SI, each cut to the coverage; what an edit has left outside it is forgotten."""
+    parts = {
+        name: (_cut(name, ends, 'x', 1e3, plan.range_m), _cut(name, ends, 'y', 1.0, plan.speed_m_s))
+        for name, ends in zoom.items()
+        if ends is not None
+    }
+    return {name: part for name, part in parts.items() if all(part)}
+
+
+def _cut(name, ends, side, si, limits):
+    low, high = (_finite(f'zoom.{name}.{side}', end) * si for end in ends[side])
+    low, high = max(low, limits[0]), min(high, limits[1])
+    return (low, high) if low < high else None
+
+
+def _finite(field_name, value):
+    if isinstance(value, bool) or not isinstance(value, int | float) or not math.isfinite(value):
+        raise InputError(field_name, f'{field_name} must be two numbers; got {value!r}.')
+    return value
+
+
+def shown_part(x, y, part):
+    """Say which part of a map is shown, where that is not all of it.
+
+    Parameters
+    ----------
+    x, y : Axis
+        Of the whole coverage. [m, m/s]
+    part : pair of Axis
+        Those that are drawn. [m, m/s]
+
+    Returns
+    -------
+    sentences : list of str
+        One or none.
+    """
+    if part == (x, y):
+        return []
+    here = (axis.interval(*cut.limits) for axis, cut in zip((x, y), part, strict=True))
+    return [f'The map shows {" and ".join(here)} of it.']

@@ -29,7 +29,7 @@ class _Place:
     area: float
 
 
-def words(computed, x, y):
+def words(computed, x, y, also=()):
     """Return caption, short caption, summary and table of the blind zones.
 
     Parameters
@@ -38,6 +38,8 @@ def words(computed, x, y):
         What the plan gives. [SI]
     x, y : Axis
         Of range and of radial speed. [m, m/s]
+    also : sequence of str
+        Sentences that end the caption. [unitless]
 
     Returns
     -------
@@ -49,10 +51,10 @@ def words(computed, x, y):
     place = _Place(*seeable, (far - near) * (fast - slow))
     first = _holes_sentence(computed.holes, place)
     return {
-        'caption': ' '.join([first, key_sentence(computed.looks, computed.m), *_clutter(computed)]),
+        'caption': ' '.join([first, key_sentence(computed.looks, computed.m), *_clutter(computed), *also]),
         'short': first,
         'summary': f'{_counts(computed, x, y)} {first}{_listed(computed.holes, place)}'
-        + ''.join(f' {sentence}' for sentence in _clutter(computed)),
+        + ''.join(f' {sentence}' for sentence in [*_clutter(computed), *also]),
         'table': _table(computed.holes, x, y),
     }
 

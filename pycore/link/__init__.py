@@ -13,15 +13,28 @@ list carry its number (``must1-range``).
 import zlib
 from dataclasses import dataclass, field
 
+from pycore.errors import InputError
 from pycore.link.items import value_text
 from pycore.link.names import LISTS, RECORDS, REMARK, SEE, TEXTS
 from pycore.link.reading import plan_of
 from pycore.link.text import LONGEST, checksum, deflated, fragment_of, inflated
+from pycore.link.view import target_of, target_text
 from pycore.plan.document import filled, shown
 from pycore.plan.keys import KEYS
 from pycore.plan.paths import value_at
 
-__all__ = ['LISTS', 'RECORDS', 'Opened', 'checksum', 'fragment_of', 'read_link', 'write', 'written']
+__all__ = [
+    'LISTS',
+    'RECORDS',
+    'Opened',
+    'checksum',
+    'fragment_of',
+    'read_link',
+    'target_of',
+    'target_text',
+    'write',
+    'written',
+]
 
 VERSION = '1'
 """Number of the link's format; the defaults belong to it and never change under it."""
@@ -52,6 +65,8 @@ class Opened:
         Items that could not be used: ``key``, ``text``, ``message``. [unitless]
     view : dict of str
         Items that say how the plan is shown, still encoded. [unitless]
+    target : dict or None
+        The target that is followed: ``range_km`` and ``speed_mps``. [km, m/s]
     """
 
     document: dict
@@ -60,6 +75,7 @@ class Opened:
     said: list = field(default_factory=list)
     refused: list = field(default_factory=list)
     view: dict = field(default_factory=dict)
+    target: dict | None = None
 
     def refuse(self, key, text, message):
         """Name an item that cannot be used.
@@ -192,7 +208,17 @@ def read_link(text):
         items.pop()
     opened.document, said = plan_of(items, opened.refuse)
     opened.said.extend(said)
+    _follow(opened)
     return opened
+
+
+def _follow(opened):
+    """Take the target that the link follows, or name it as refused."""
+    text = opened.view.get('target')
+    try:
+        opened.target = None if text is None else target_of(text)
+    except InputError as error:
+        opened.refuse(error.field, text, error.message)
 
 
 def _may_be_short(item):
