@@ -1,6 +1,7 @@
 """Detection: what false alarms ask for, and how much signal that needs."""
 
 import math
+from functools import lru_cache
 
 import numpy as np
 
@@ -30,6 +31,7 @@ def false_alarm_per_cpi(overall, n, m):
     return math.exp(0.5 * (low + high))
 
 
+@lru_cache(maxsize=64)
 def set_threshold(overall, n, m, outputs=1):
     """Return the threshold of every CPI for an overall false-alarm probability.
 

@@ -6,6 +6,7 @@ are taken coarsely, to about a thousandth; everything else is as exact as in
 """
 
 import math
+from functools import lru_cache
 
 import numpy as np
 
@@ -91,6 +92,7 @@ def probability_map(scnr, m, threshold, case):
     return np.concatenate(parts).reshape(scnr.shape[1:])
 
 
+@lru_cache(maxsize=16)
 def _tables(threshold, shape):
     """Return steady probabilities against the logarithm of signal-to-noise, and (shift, weight) of strengths."""
     lowest = round(-_PER_E_FOLD * math.log(1e4) / shape)

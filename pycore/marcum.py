@@ -36,17 +36,43 @@ def detection_probability(signal_to_noise, threshold, outputs=1):
     probability : float array, shape S
         To about 1e-12 of its value; the false-alarm probability where there is no signal.
     """
+    return _passes(signal_to_noise, threshold, [outputs])[..., 0]
+
+
+def detection_and_slope(signal_to_noise, threshold, outputs=1):
+    """Return the same, and how fast it rises with the signal-to-noise ratio.
+
+    Parameters
+    ----------
+    signal_to_noise : float or array, shape S
+        Sum of the signal-to-noise ratios of all outputs, at least 0. [unitless]
+    threshold : float
+        y, against the noise power of one output. [unitless]
+    outputs : int
+        Independent outputs whose powers are added. [unitless]
+
+    Returns
+    -------
+    probability, slope : float arrays, shape S
+        dQ_m/dx = Q_{m+1} - Q_m, from the series' terms (derived here).
+    """
+    passes = _passes(signal_to_noise, threshold, [outputs, outputs + 1])
+    return passes[..., 0], passes[..., 1] - passes[..., 0]
+
+
+def _passes(signal_to_noise, threshold, outputs):
+    """Return the probability for each number of outputs, shape S × numbers."""
     signal = np.asarray(signal_to_noise, dtype=float)
     flat = np.minimum(signal.ravel(), (math.sqrt(threshold) + _CERTAIN) ** 2)
     if not flat.size:
-        return np.zeros(signal.shape)
+        return np.zeros((*signal.shape, len(outputs)))
     most = flat.max()
     counts = np.arange(math.ceil(most + 12.0 * math.sqrt(most) + 40.0))
-    passed = poisson_below(threshold, outputs + counts)
+    passed = np.stack([poisson_below(threshold, number + counts) for number in outputs], axis=1)
     log_factorial = np.array([math.lgamma(count + 1.0) for count in counts])
     step = max(_TERMS_AT_ONCE // len(counts), 1)
     parts = [_mixed(flat[i : i + step], counts, log_factorial, passed) for i in range(0, flat.size, step)]
-    return np.minimum(np.concatenate(parts), 1.0).reshape(signal.shape)
+    return np.minimum(np.concatenate(parts), 1.0).reshape(*signal.shape, len(outputs))
 
 
 def _mixed(signal, counts, log_factorial, passed):

@@ -9,10 +9,13 @@ from dataclasses import dataclass
 
 import numpy as np
 
+from pycore.needed import needed_factor_log
+from pycore.rough_need import rough_factor_log
 from pycore.speed_samples import best_gain, sampled_speeds
-from pycore.swerling import set_probability
 
-_STRENGTH_STEP = 0.2
+_SHARED = ('swerling1', 'swerling3')
+_DOUBT = 0.004  # of the logarithm of the needed factor, at first
+_NEAREST_M = 1e-3
 
 
 @dataclass(frozen=True, slots=True)
@@ -23,20 +26,20 @@ class Reach:
     ----------
     best, median, worst : float
         Over the wanted speeds, by length of speed; nan where it is not reached. [m]
+    places : tuple of three int
+        Where these three lie among the speeds looked at; empty where no speed is outside the floor. [unitless]
     speed_m_s : float array, shape V
         Speeds looked at. [m/s]
     length_m_s : float array, shape V
         Length of the speed axis that each stands for. [m/s]
-    range_m : float array, shape V
-        Range at each speed; nan where it is not reached. [m]
     """
 
     best: float
     median: float
     worst: float
+    places: tuple[int, ...]
     speed_m_s: np.ndarray
     length_m_s: np.ndarray
-    range_m: np.ndarray
 
 
 def reach(cpis, strength_m4, m, threshold, case, wanted, first_opening_m, range_max_m, speed_m_s):
@@ -101,11 +104,57 @@ def reach_over(speed_m_s, length_m_s, strength_m4, m, threshold, case, wanted, l
     -------
     reach : Reach
         Not reached where even the nearest range has too little; the farthest range where that still has enough.
+
+    Notes
+    -----
+    Where the needed factor is slow to find it is found roughly at all speeds, and exactly at those that could have
+    one of the three ranks: within three times the spread of the errors that were met, their mean taken off all.
     """
-    factor = _needed_factor(strength_m4, m, threshold, case, wanted, outputs)
-    range_m = np.minimum(factor**-0.25, limits_m[1])
+    law = m, threshold, case, wanted
+    if strength_m4.shape[1] == 1 or case not in _SHARED:
+        factor_log = needed_factor_log(strength_m4, *law, outputs)
+        return _ranked(speed_m_s, length_m_s, factor_log, limits_m)
+    factor_log = rough_factor_log(strength_m4, *law)
+    known, doubt = np.isinf(factor_log), _DOUBT
+    while True:
+        found = _ranked(speed_m_s, length_m_s, factor_log, limits_m)
+        rows = np.flatnonzero(_near_a_rank(found, factor_log, limits_m, doubt) & ~known)
+        if not rows.size:
+            return found
+        exact = needed_factor_log(strength_m4[rows], *law)
+        off = exact - factor_log[rows]
+        known[rows], doubt = True, max(doubt, 3.0 * float(np.ptp(off)))
+        factor_log[~known] += off.mean()
+        factor_log[rows] = exact
+
+
+def _near_a_rank(found, factor_log, limits_m, doubt):
+    """Return which speeds could yet take the place of the best, the median or the worst."""
+    most, least = (-4.0 * math.log(max(end, _NEAREST_M)) for end in limits_m)
+    # What is beyond a limit for certain has its value already.
+    between = (factor_log > least - doubt) & (factor_log < most + doubt)
+    near = np.zeros(len(factor_log), dtype=bool)
+    for rank in factor_log[list(found.places)].tolist():
+        near |= (factor_log >= rank - doubt) & (factor_log <= rank + doubt)
+    return between & near
+
+
+def _ranked(speed_m_s, length_m_s, factor_log, limits_m):
+    """Return the reach from the factor that each speed needs."""
+    range_m = np.minimum(np.exp(-0.25 * factor_log), limits_m[1])
     range_m = np.where(range_m >= limits_m[0], range_m, np.nan)
-    return Reach(*_by_length(range_m, length_m_s), speed_m_s, length_m_s, range_m)
+    places = _by_length(range_m, length_m_s)
+    ends = (float(range_m[place]) for place in places) if places else (math.nan,) * 3
+    return Reach(*ends, places, speed_m_s, length_m_s)
+
+
+def _by_length(range_m, length_m_s):
+    """Return the places of the best, the median and the worst by length of speed; what is not reached comes last."""
+    if not len(range_m):
+        return ()
+    order = np.argsort(-np.nan_to_num(range_m, nan=-1.0), kind='stable')
+    so_far = np.cumsum(length_m_s[order])
+    return int(order[0]), int(order[np.searchsorted(so_far, 0.5 * so_far[-1])]), int(order[-1])
 
 
 def enough_over_half(length_m_s, mean, m, threshold, case, wanted, outputs=1):
@@ -135,63 +184,5 @@ def enough_over_half(length_m_s, mean, m, threshold, case, wanted, outputs=1):
     """
     if not len(length_m_s):
         return False
-    found = set_probability(mean, m, threshold, case, outputs, _STRENGTH_STEP)
-    return bool(length_m_s[found >= wanted].sum() >= 0.5 * length_m_s.sum())
-
-
-def _needed_factor(gain, m, threshold, case, wanted, outputs):
-    """Return by what each row of signal-to-noise must be multiplied to reach a probability; inf if by nothing.
-
-    Between two brackets (all N as strong as the strongest; only M left, as weak as the M-th), the secant in
-    ln(-ln P) against the logarithm of the factor.
-    """
-    factor = np.full(len(gain), np.inf)
-    rows = np.flatnonzero((gain > 0.0).sum(axis=1) >= m)
-    if not rows.size:
-        return factor
-    some = gain[rows]
-    ranked = np.sort(some, axis=1)
-    goal = math.log(-math.log(wanted))
-    low = _equal_need(gain.shape[1], m, threshold, case, wanted, outputs) - np.log(ranked[:, -1]) - 1e-6
-    high = _equal_need(m, m, threshold, case, wanted, outputs) - np.log(ranked[:, -m]) + 1e-6
-    left, right = (_depth(some, end, m, threshold, case, outputs) - goal for end in (low, high))
-    was_below = np.full(len(some), 2)  # neither side yet
-    for _ in range(60):
-        at = np.clip(low + (high - low) * left / np.where(left > right, left - right, 1.0), low, high)
-        value = _depth(some, at, m, threshold, case, outputs) - goal
-        if np.all((np.abs(value) < 1e-8) | (high - low < 1e-9)):
-            break
-        below = value > 0.0
-        again = below == was_below  # the end that stays twice is believed half as much (the Illinois rule)
-        right = np.where(below, np.where(again, 0.5 * right, right), value)
-        left = np.where(below, value, np.where(again, 0.5 * left, left))
-        low, high, was_below = np.where(below, at, low), np.where(below, high, at), below
-    factor[rows] = np.exp(at)
-    return factor
-
-
-def _equal_need(n, m, threshold, case, wanted, outputs):
-    """Return the logarithm of the signal-to-noise ratio that each of N equal CPIs needs."""
-    low, high = math.log(1e-9), math.log(1e18)
-    for _ in range(45):
-        middle = 0.5 * (low + high)
-        found = set_probability(np.full(n, math.exp(middle)), m, threshold, case, outputs, _STRENGTH_STEP)
-        low, high = (low, middle) if found > wanted else (middle, high)
-    return 0.5 * (low + high)
-
-
-def _depth(gain, factor_log, m, threshold, case, outputs):
-    """Return ln(-ln P), which falls about evenly with the logarithm of the factor."""
-    mean = gain * np.exp(factor_log)[:, None]
-    found = set_probability(mean, m, threshold, case, outputs, _STRENGTH_STEP)
-    return np.log(-np.log(np.clip(found, 1e-300, 1.0 - 1e-16)))
-
-
-def _by_length(range_m, length_m_s):
-    """Return the best, the median and the worst range by length of speed; what is not reached comes last."""
-    if not len(range_m):
-        return math.nan, math.nan, math.nan
-    order = np.argsort(-np.nan_to_num(range_m, nan=-1.0), kind='stable')
-    so_far = np.cumsum(length_m_s[order])
-    middle = order[np.searchsorted(so_far, 0.5 * so_far[-1])]
-    return float(range_m[order[0]]), float(range_m[middle]), float(range_m[order[-1]])
+    found = reach_over(length_m_s, length_m_s, mean, m, threshold, case, wanted, (0.0, math.inf), outputs)
+    return found.median >= 1.0

@@ -12,7 +12,7 @@ from functools import lru_cache
 
 import numpy as np
 
-from pycore.marcum import detection_probability
+from pycore.marcum import detection_and_slope
 
 CASES = ('steady', 'swerling1', 'swerling2', 'swerling3', 'swerling4')
 """Names of the fluctuation cases."""
@@ -22,7 +22,7 @@ FINE_STEP = 0.1
 COARSE_STEP = 0.4
 """The same for a map that is looked at: right to about 1e-3. [unitless]"""
 
-_NODES = 2400
+_NODES = 1200
 _AT_ONCE = 60_000
 _SHAPE = {'swerling1': 1, 'swerling2': 1, 'swerling3': 2, 'swerling4': 2}
 
@@ -45,9 +45,8 @@ class SteadyCurve:
 
     def __init__(self, threshold, outputs=1):
         root, self._step = np.linspace(0.0, math.sqrt(threshold) + 7.0, _NODES + 1, retstep=True)
-        value = detection_probability(root**2, threshold, outputs)
-        # d/dx Q_m = Q_{m+1} - Q_m, from the series' terms; x = root²
-        slope = 2.0 * root * (detection_probability(root**2, threshold, outputs + 1) - value) * self._step
+        value, slope = detection_and_slope(root**2, threshold, outputs)
+        slope *= 2.0 * root * self._step  # against the root, in steps
         rise = np.diff(value)
         square = 3.0 * rise - 2.0 * slope[:-1] - slope[1:]
         cube = slope[:-1] + slope[1:] - 2.0 * rise
@@ -126,12 +125,16 @@ def at_least(probability, m):
         Of the Poisson binomial distribution; only sums of products, so that small values keep their digits.
     """
     events = np.moveaxis(np.asarray(probability, dtype=float), -1, 0)
-    so_far = [np.ones(events.shape[1:])] + [np.zeros(events.shape[1:])] * m
+    so_far = [np.ones(events.shape[1:])]  # probabilities of none, one, two, ... so far; the last one of M or more
     for count, happens in enumerate(events):
         fails = 1.0 - happens
-        so_far[m] = so_far[m] + so_far[m - 1] * happens
-        for k in range(min(count + 1, m - 1), 0, -1):
-            so_far[k] = so_far[k] * fails + so_far[k - 1] * happens
+        if count < m:
+            so_far.append(so_far[-1] * happens)
+        else:
+            so_far[m] += so_far[m - 1] * happens
+        for k in range(min(count, m - 1), 0, -1):
+            so_far[k] *= fails
+            so_far[k] += so_far[k - 1] * happens
         so_far[0] = so_far[0] * fails
     return so_far[m]
 
@@ -200,6 +203,7 @@ def _averaged(mean, m, curve, strength, weight):
     step = max(_AT_ONCE // (strength.size * cells.shape[1]), 1)
     average = np.empty(len(cells))
     for first in range(0, len(cells), step):
-        some = cells[first : first + step]
-        average[first : first + step] = weight @ at_least(curve(strength[:, None, None] * some), m)
+        some = cells[first : first + step].T[:, None, :]
+        passed = curve(strength[:, None] * some)  # N × strengths × cells: each CPI's values lie together
+        average[first : first + step] = weight @ at_least(np.moveaxis(passed, 0, -1), m)
     return average.reshape(mean.shape[:-1])

@@ -219,9 +219,6 @@ def curves_of(computed, range_m):
     reach = computed.echoes.reach
     if reach is None or not len(reach.speed_m_s):
         return {}
-    far = np.nan_to_num(reach.range_m, nan=-1.0)
-    order = np.argsort(-far, kind='stable')
-    so_far = np.cumsum(reach.length_m_s[order])
-    chosen = order[[0, int(np.searchsorted(so_far, 0.5 * so_far[-1])), -1]]
+    chosen = list(reach.places)
     found = detected.probability_along(computed, range_m, reach.speed_m_s[chosen])
     return dict(zip(('best', 'median', 'worst'), found.T, strict=True))

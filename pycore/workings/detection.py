@@ -119,8 +119,7 @@ def _need(computed):
 def _check(computed, found):
     """Put the median range back in: the probability there is the one that is wanted."""
     echoes, target, part = computed.echoes, computed.plan.target, computed.echoes.parts[-1]
-    place = int(np.flatnonzero(found.range_m == found.median)[0])
-    speed = float(found.speed_m_s[place])
+    speed = float(found.speed_m_s[found.places[1]])
     if computed.is_stagger:
         gain = np.array([float(computed.response.response.power(speed)) * echoes.outputs])
     else:

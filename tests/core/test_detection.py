@@ -9,10 +9,11 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 from scipy import integrate, special, stats
 
-from pycore import detection, detection_map, reach, speed_samples, swerling, target
+from pycore import bank, detection, detection_map, reach, speed_samples, swerling, target
 from pycore.clutter import Clutter
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.cpi import cpis
+from pycore.needed import needed_factor_log
 
 HUNDREDTH_DB = 0.01
 FLUCTUATING = swerling.CASES[1:]
@@ -177,8 +178,9 @@ def test_at_the_reach_the_probability_is_the_wanted_one(case):
     pair, strength = two_cpis(), target.reference_strength(10.0, 60e3, [1e-6] * 2, [LAMBDA] * 2)
     level = detection.set_threshold(1e-6, 2, 1)
     far = reach.reach(pair, strength, 1, level, case, 0.8, np.full(2, 225.0), 110e3, (0.0, 50.0))
-    gain = np.stack([speed_samples.best_gain(cpi, far.speed_m_s) for cpi in pair], axis=1)
-    found = swerling.set_probability(gain * strength / far.range_m[:, None] ** 4, 1, level, case)
+    speed, range_m = far.speed_m_s[list(far.places)], np.array([far.best, far.median, far.worst])
+    gain = np.stack([speed_samples.best_gain(cpi, speed) for cpi in pair], axis=1)
+    found = swerling.set_probability(gain * strength / range_m[:, None] ** 4, 1, level, case)
     assert found == pytest.approx(0.8, abs=1e-6)
     assert far.worst <= far.median <= far.best
 
@@ -187,8 +189,10 @@ def test_a_speed_that_all_prfs_notch_is_not_reached():
     pair, level = two_cpis(), detection.set_threshold(1e-6, 2, 1)
     strength = target.reference_strength(10.0, 60e3, [1e-6] * 2, [LAMBDA] * 2)
     far = reach.reach(pair, strength, 1, level, 'swerling1', 0.8, np.full(2, 225.0), 110e3, (0.0, 300.0))
-    unseen = far.speed_m_s[np.isnan(far.range_m)]
+    gain = np.stack([speed_samples.best_gain(cpi, far.speed_m_s) for cpi in pair], axis=1)
+    unseen = far.speed_m_s[np.isinf(needed_factor_log(gain, 1, level, 'swerling1', 0.8))]
     assert math.isnan(far.worst)
+    assert far.speed_m_s[far.places[2]] in unseen
     assert 56.25 < unseen.min() < unseen[unseen < 100].max() < 60.63
     assert far.length_m_s.sum() == pytest.approx(294.0)
 
@@ -205,7 +209,48 @@ def test_a_stronger_target_reaches_farther_by_the_fourth_root():
     pair, level = two_cpis(), detection.set_threshold(1e-6, 2, 1)
     arguments = 1, level, 'swerling3', 0.8, np.zeros(2), 1e6, (10.0, 40.0)
     one, ten = (reach.reach(pair, np.full(2, k), *arguments) for k in (1e20, 1e21))
-    assert ten.range_m / one.range_m == pytest.approx(10**0.25, rel=1e-8)
+    for rank in ('best', 'median', 'worst'):
+        assert getattr(ten, rank) / getattr(one, rank) == pytest.approx(10**0.25, rel=1e-8)
+
+
+DETECTIONS = {
+    'case': st.sampled_from(swerling.CASES),
+    'wanted': st.sampled_from((0.05, 0.3, 0.5, 0.8, 0.9, 0.99)),
+    'false_alarm': st.sampled_from((1e-3, 1e-6, 1e-10)),
+    'strength_db': st.floats(140.0, 260.0),
+    'pri_us': st.lists(st.integers(590, 970), min_size=1, max_size=6, unique=True),
+    'm': st.integers(1, 6),
+}
+
+
+@settings(max_examples=40, deadline=None)
+@given(**DETECTIONS)
+def test_best_median_and_worst_are_those_of_every_speed_worked_out(case, wanted, false_alarm, strength_db, pri_us, m):
+    m = min(m, len(pri_us))
+    some = cpis([pri * 1e-7 for pri in pri_us], 0.0312, 6e-6, 1e6, 12.0, 12, 4, 'chebyshev', 50.0)
+    speed, length = speed_samples.sampled_speeds(some, m, (-100.0, 200.0))
+    strength = np.stack([speed_samples.best_gain(cpi, speed) for cpi in some], axis=1) * 10 ** (strength_db / 10)
+    law = m, detection.set_threshold(false_alarm, len(some), m), case, wanted
+    far = reach.reach_over(speed, length, strength, *law, (900.0, 480e3))
+    every = np.minimum(np.exp(-0.25 * needed_factor_log(strength, *law)), 480e3)
+    ranked = sorted(zip(np.where(every < 900.0, 0.0, every), length, strict=True), reverse=True)
+    share = np.cumsum([part for _, part in ranked]) / length.sum()
+    median = ranked[int(np.argmax(share >= 0.5 * (1.0 - 1e-12)))][0]
+    found = np.nan_to_num([far.best, far.median, far.worst])
+    assert found == pytest.approx([ranked[0][0], median, ranked[-1][0]], rel=1e-7)
+
+
+@pytest.mark.parametrize('window', ['rectangular', 'hann', 'blackman', 'chebyshev', 'taylor'])
+@pytest.mark.parametrize('pulses', [1, 2, 3, 9, 64])
+@pytest.mark.parametrize('sidelobe_db', [5.0, 40.0])
+@pytest.mark.parametrize('notch_m_s', [0.0, 6.0, 40.0])
+def test_the_best_filter_is_the_best_of_all_filters(window, pulses, sidelobe_db, notch_m_s):
+    cpi = cpis([980e-6], LAMBDA, 1e-6, 1e6, notch_m_s, pulses, 1, window, sidelobe_db)[0]
+    half_a_filter = cpi.blind_speed_m_s / pulses / 2.0
+    speed = np.concatenate((np.linspace(-90.0, 90.0, 151), np.arange(-5, 6) * half_a_filter))
+    usable = bank.outside_notch(cpi, bank.centres(cpi))
+    every = np.where(usable, bank.target_gain(cpi, speed), 0.0).max(axis=1) * bank.outside_notch(cpi, speed)
+    assert speed_samples.best_gain(cpi, speed) == pytest.approx(every, rel=1e-9, abs=1e-12)
 
 
 @pytest.mark.parametrize('case', swerling.CASES)
