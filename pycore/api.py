@@ -18,6 +18,7 @@ from pycore.findings import verdict
 from pycore.follow import follow, strip
 from pycore.holds_over import judged
 from pycore.margins import margins_shown
+from pycore.margins.slices import margins_in_words
 from pycore.plan.keys.followed import FOLLOWED
 from pycore.plan.reading import read
 from pycore.quantity import read_number
@@ -391,6 +392,30 @@ def margins_of(plan, finding):
     return margins_shown(read(plan), finding)
 
 
+def margins_told(plan, finding, so_far=None, tries=1, units=None):
+    """Return the margins of a finding in words, or how far this slice of the work has come.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+    finding : str
+        Name of the finding. [unitless]
+    so_far : mapping or None
+        What the slice before gave under that name; ``None`` to begin. [unitless]
+    tries : int
+        Most verdicts that this slice works out. [unitless]
+    units : mapping or None
+        Units that the reader prefers. [unitless]
+
+    Returns
+    -------
+    margins : dict
+        ``done``; until then ``so_far`` and ``part``; at the end ``sentence``, ``head``, ``rows``, ``notes``.
+    """
+    return margins_in_words(read(plan), finding, so_far, tries, {**SHOWN_UNITS, **(units or {})})
+
+
 def workings_of(plan, finding):
     """Return how one finding of a plan comes about.
 
@@ -420,6 +445,7 @@ ACTIONS = {
     'follow': follow_target,
     'timing': timing,
     'margins': margins_of,
+    'margins_in_words': margins_told,
     'workings': workings_of,
     'conventions': conventions,
 }

@@ -5,7 +5,7 @@ it shows; a test holds the results to the findings.
 """
 
 from pycore.errors import InputError
-from pycore.margins import NOTE, asked_for
+from pycore.margins import asked_for
 from pycore.plan.document import shown
 from pycore.workings.blind import blind_speed
 from pycore.workings.decode import decode_range, decode_speed
@@ -83,11 +83,9 @@ def workings(computed, name):
     InputError
         Where the plan has no such finding.
     """
-    found = asked_for(computed, name)
+    asked_for(computed, name)
     worked = working(computed, name)
     notes = [*worked.notes]
-    if found.met is not None:
-        notes.append(f'Margins: {NOTE}')
     if computed.plan.holds_over is not None:
         notes.append(_HELD)
     return {'finding': name, 'lines': [line.row for line in worked.lines], 'value': worked.value, 'notes': notes}

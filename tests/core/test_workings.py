@@ -129,12 +129,6 @@ def test_the_handbook_limits_of_a_stagger_are_called_approximations():
     assert any('approximations' in note for note in answer['notes'])
 
 
-def test_a_flip_that_can_be_missed_is_said_wherever_a_finding_is_judged():
-    said = api.workings_of(OPENING, 'visible')['notes']
-    assert any('narrower than a step can be missed' in note for note in said)
-    assert not any('missed' in note for note in api.workings_of(OPENING, 'largest-hole')['notes'])
-
-
 def test_a_plan_that_holds_over_an_interval_says_how_that_is_searched():
     held = {**OPENING, 'holds_over': {'carrier_ghz': [2.7, 2.9]}}
     assert any('65 points' in note for note in api.workings_of(held, 'visible')['notes'])

@@ -34,7 +34,7 @@ export function createAsking({ engine, state, view, figures, sizes, units, onLat
   function take(request, answer, deep) {
     if (!state.settle(request, answer)) return;
     if (request.opened === opened) opened = null;
-    onAnswer(answer, request);
+    onAnswer(answer, { ...request, deep });
     clearTimeout(pause);
     if (!deep) pause = setTimeout(ask, PAUSE_MS, true);
   }

@@ -1,18 +1,20 @@
 // The findings, in the core's order: sign and word, sentence, number, what was wanted, and the engineer's own remark.
-// Knows how a finding looks; the core wrote its words. `onRemark(name, text)` hears what is written under one.
+// Knows how a finding looks; the core wrote its words. `onRemark(name, text)` hears what is written under one,
+// `onOpen(name, shows)` that one was opened, and with null that it was closed.
 
 import { setText } from './number.js';
 import { remarkLine } from './remarks.js';
+import { createWorkings } from './workings.js';
 
 const SIGNS = { true: ['✓', 'met'], false: ['✗', 'not met'], accepted: ['✗', 'accepted'], none: ['○', 'for information'] };
 const FLIP_SHOWN_MS = 2000;
 
-export function createFindings(list, onRemark) {
+export function createFindings(list, onRemark, onOpen) {
   const items = new Map();
   return {
     update(findings) {
       const shown = findings.map((finding) => {
-        if (!items.has(finding.name)) items.set(finding.name, item(finding.name, onRemark));
+        if (!items.has(finding.name)) items.set(finding.name, item(finding, onRemark, onOpen));
         return fill(items.get(finding.name), finding);
       });
       if (shown.length !== list.children.length || shown.some((node, i) => node !== list.children[i])) list.replaceChildren(...shown);
@@ -32,7 +34,7 @@ export function metOf({ met, accepted }) {
   return accepted ? 'accepted' : String(met);
 }
 
-function item(name, onRemark) {
+function item({ name, label }, onRemark, onOpen) {
   const node = document.createElement('li');
   node.className = 'finding';
   node.dataset.finding = name;
@@ -51,10 +53,28 @@ function item(name, onRemark) {
     detail: part('span', 'finding-detail', text),
     value: part('b', '', number),
     wanted: part('span', 'finding-wanted', number),
+    how: part('button', 'quiet finding-how', number),
     remark: remarkLine(name, onRemark),
   };
   node.append(parts.remark.node);
+  disclose(node, parts.how, { name, label, onOpen });
   return { node, parts, timer: 0 };
+}
+
+// How it comes about is built when it is first opened; closed, a finding costs nothing.
+function disclose(node, button, { name, label, onOpen }) {
+  let workings = null;
+  Object.assign(button, { type: 'button', textContent: 'How it comes about' });
+  button.setAttribute('aria-label', `How it comes about: ${label}`);
+  button.setAttribute('aria-expanded', 'false');
+  button.addEventListener('click', () => {
+    const open = button.getAttribute('aria-expanded') !== 'true';
+    button.setAttribute('aria-expanded', String(open));
+    workings ??= createWorkings(label);
+    if (open) node.append(workings.node);
+    else workings.node.remove();
+    onOpen(name, open ? workings : null);
+  });
 }
 
 function fill(entry, finding) {

@@ -10,6 +10,7 @@ import { createHands } from './hands.js';
 import { createHead } from './head.js';
 import { createKeys } from './keys.js';
 import { openedPlan } from './link.js';
+import { createOpenedFindings } from './opened-findings.js';
 import { createPage } from './page.js';
 import { packedPart } from './payload.js';
 import { createQuantities } from './quantities.js';
@@ -31,7 +32,7 @@ const state = createState(opening.answer.plan);
 const view = createView();
 const address = createAddress(openLink);
 const hands = createHands({ state, keys, quantities, status, families: opening.units.families, redraw: () => page.redraw(), onAnswered: (count, act) => waiting.push({ count, act }), focus: (path, typing) => page.focus(path, typing) });
-const page = createPage({ opening, keys, quantities, state, hands, ask: () => asking.ask() });
+const page = createPage({ opening, keys, quantities, state, hands, ask: () => asking.ask(), onOpen: (name, shows) => (shows ? opened.open(name, shows) : opened.close(name)) });
 const travel = createTravel({ state, status, page, buttons: { undo: document.getElementById('undo'), redo: document.getElementById('redo') } });
 const head = createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening: () => asking.isOpening(), openExample });
 let findings = opening.answer.findings;
@@ -43,6 +44,8 @@ const first = new Promise((resolve) => { painted = resolve; });
 const engine = startEngine({ payload: (name) => first.then(() => packedPart(name)), onFail: failed });
 const asking = createAsking({ engine, state, view, figures: page.pictures.visible, sizes, units: () => quantities.units, onLate: head.late, onAnswer: answered, onFault: fault });
 
+const opened = createOpenedFindings({ engine, plan: () => state.now.plan, units: () => quantities.units, isBusy: () => state.now.pending.length > 0 || asking.isOpening() });
+
 function answered(answer, request) {
   status.sayWhenQuiet(flipped(request.opened ? [] : findings, answer.findings));
   findings = answer.findings;
@@ -53,6 +56,7 @@ function answered(answer, request) {
   if (request.opened !== null) head.opened(answer);
   head.answered(answer);
   address.show(answer.link);
+  if (request.deep) opened.refresh();
   const shown = state.committed(request.count);
   page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(shown, Number(root.dataset.shown)); });
 }
@@ -88,6 +92,7 @@ state.watch((cause) => {
   page.redraw();
   travel.update();
   head.update();
+  if (cause !== 'answer') opened.wait();
   if (cause === 'travel') asking.open(null);
   if (cause !== 'answer') asking.ask();
 });

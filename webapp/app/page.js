@@ -18,13 +18,13 @@ import { createVerdict } from './verdict.js';
 const at = (id) => document.getElementById(id);
 const engineState = () => document.documentElement.dataset.engine;
 
-export function createPage({ opening, keys, quantities, state, hands, ask }) {
+export function createPage({ opening, keys, quantities, state, hands, ask, onOpen }) {
   const numberFor = createNumbers();
   const looks = createLooks({ state, keys, quantities, engineState });
   const sentence = createSentence({ grammar: opening.grammar, keys, quantities });
   const paragraph = createParagraph({ node: at('paragraph'), numberFor, act: (action) => hands.act(action) });
   const verdict = createVerdict(at('verdict'));
-  const findings = createFindings(at('findings'), (name, text) => hands.act('remark', { finding: name, text }));
+  const findings = createFindings(at('findings'), (name, text) => hands.act('remark', { finding: name, text }), onOpen);
   const refused = createRefused(at('refused'), hands.putBack);
   const title = createTitle(at('title'), { longest: keys.of('title').longest, commit: (text) => hands.commit({ key: 'title', text }) });
   const pictures = createPictures({ chief: at('chief'), rest: at('figures'), items: opening.items, titles: Object.fromEntries(Object.entries(opening.answer.figures).map(([name, { title }]) => [name, title])), onSeen: () => seen() });
