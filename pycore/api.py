@@ -17,6 +17,7 @@ from pycore.errors import InputError
 from pycore.findings import verdict
 from pycore.follow import follow, strip
 from pycore.holds_over import judged
+from pycore.link.reader_units import units_text, unknown_units
 from pycore.margins import margins_shown
 from pycore.margins.slices import margins_in_words
 from pycore.plan.keys.followed import FOLLOWED
@@ -63,7 +64,8 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     opened : str or None
         Text of a link to start from instead. [unitless]
     edits : sequence of dict
-        Edits in the order they were made; one that is refused leaves the plan as it was. [unitless]
+        Edits in the order they were made, each with the ``units`` it was typed in where they are no longer those that
+        are shown; one that is refused leaves the plan as it was. [unitless]
     figures : sequence of str
         Names of the figures that are on the screen; no other is computed. [unitless]
     size : mapping or None
@@ -92,7 +94,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     looked = seen(computed, view)
     return {
         'plan': computed.plan.document,
-        'link': _link(computed, looked),
+        'link': _link(computed, looked, units),
         'opened': None if start is None else _as_opened(start),
         'said': said,
         'refused': refused,
@@ -128,7 +130,7 @@ def look(plan, figures=(), marked=(), size=None, units=None, view=None):
     looked = seen(computed, view)
     sizes = size or {}
     return {
-        'link': _link(computed, looked),
+        'link': _link(computed, looked, units),
         'figures': {
             **{name: picture(name, computed, units, sizes.get(name), looked) for name in figures},
             **{name: marking(name, computed, units, sizes.get(name), looked) for name in marked if name not in figures},
@@ -188,11 +190,11 @@ def typed_target(name, text, current=None, units=None):
     return {'value': read_number(text, key, f'followed.{name}', unit, current)}
 
 
-def _link(computed, looked):
-    """Write the link, which carries the followed target."""
-    mark = looked.mark
+def _link(computed, looked, units):
+    """Write the link, which carries the followed target and the reader's units."""
+    mark, text = looked.mark, units_text(units)
     view = {} if mark is None else {'target': link.target_text(mark.target)}
-    return link.written(computed.plan.document, view=view)
+    return link.written(computed.plan.document, view={**view, **({'units': text} if text else {})})
 
 
 def _edited(document, edits, units):
@@ -200,7 +202,7 @@ def _edited(document, edits, units):
     plan, said, refused = None, [], []
     for one in edits:
         try:
-            result = edit.apply(document, one, units)
+            result = edit.apply(document, one, {**units, **(one.get('units') or {})})
         except InputError as error:
             refused.append({'edit': one, 'key': error.field, 'message': error.message})
         else:
@@ -210,7 +212,9 @@ def _edited(document, edits, units):
 
 
 def _as_opened(start):
-    return {name: getattr(start, name) for name in ('cut', 'edited', 'said', 'refused', 'view', 'target')}
+    said = [*start.said, *unknown_units(start.view.get('units', ''))]
+    kept = {name: getattr(start, name) for name in ('cut', 'edited', 'refused', 'view', 'target')}
+    return {**kept, 'said': said}
 
 
 def _shown(finding):

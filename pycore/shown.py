@@ -2,10 +2,12 @@
 
 Rounding is for showing only; the plan keeps what was typed. The page shows the
 same before Python has started: it divides (or, for a PRI shown as a frequency,
-turns over) by the numbers of ``OTHER_UNITS`` and keeps five significant digits.
+turns over) by the numbers of ``OTHER_UNITS``. What is round in the other unit was
+typed in it and stands as it was typed; the rest keeps as many significant
+figures as ``FIGURES`` says, whole digits never lost.
 """
 
-from pycore.wording import KM_PER_NMI, MINUS, THIN_SPACE
+from pycore.wording import KM_PER_NMI, MINUS, THIN_SPACE, converted
 
 OTHER_UNITS = {
     'km': {'nmi': {'divide': KM_PER_NMI}},
@@ -18,7 +20,9 @@ FAMILY_CHOICE = {'range': 'range', 'speed': 'speed', 'pri': 'pri'}
 """Which of the reader's preferences a family of units follows."""
 
 _PREFERRED = {'us': 'µs'}
-_CONVERTED_DIGITS = 5
+
+FIGURES = {'range': 3, 'speed': 3, 'pri': 5}
+"""Significant figures of what is shown in another unit than the plan's: neighbouring PRFs differ in the fourth."""
 
 
 def digits(value, decimals=0):
@@ -86,7 +90,7 @@ def shown_digits(key, value, units):
         return digits(value, key.decimals)
     how = OTHER_UNITS[key.unit][unit]
     number = how['over'] / value if 'over' in how else value / how['divide']
-    return digits(float(f'{number:.{_CONVERTED_DIGITS}g}'))
+    return digits(converted(number, FIGURES[FAMILY_CHOICE[key.family]]))
 
 
 def shown_value(key, value, units):

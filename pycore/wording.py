@@ -19,6 +19,10 @@ DISTANCE = {'km': 1e3, 'nmi': 1e3 * KM_PER_NMI}
 SPEED = {'m/s': 1.0, 'km/h': 1.0 / 3.6, 'kt': 1e3 * KM_PER_NMI / 3600.0}
 """Metres per second in one shown unit of speed. [m/s]"""
 
+_TYPED_DIGITS = 6
+_TYPED_WITHIN = 1e-11
+"""So near, relatively, to so many digits a number was typed as it is; a conversion comes there once in 100 000."""
+
 SHOWN_UNITS = {'range': 'km', 'speed': 'm/s', 'pri': 'us'}
 """Units that the page shows unless the reader prefers others."""
 
@@ -77,6 +81,29 @@ def trimmed(value, figures=6):
     if 'e' in text:
         text = f'{float(text):f}'
     return _grouped(text.rstrip('0').rstrip('.') if '.' in text else text)
+
+
+def converted(number, figures=3):
+    """Return an input that was turned into another unit, rounded for showing.
+
+    Parameters
+    ----------
+    number : float
+        In the shown unit, not zero. [any]
+    figures : int
+        Significant figures; whole digits are never lost. [unitless]
+
+    Returns
+    -------
+    number : float
+        Unchanged where it is round in the shown unit: then it was typed in it, and stands as it was typed.
+    """
+    if number == 0:
+        return number
+    typed = float(f'{number:.{_TYPED_DIGITS}g}')
+    if abs(number - typed) <= _TYPED_WITHIN * abs(number):
+        return typed
+    return float(f'{number:.{max(0, figures - 1 - math.floor(math.log10(abs(number))))}f}')
 
 
 def against(value, limit, figures=3):

@@ -3,6 +3,7 @@
 import math
 from dataclasses import dataclass
 
+from pycore.shown import FIGURES
 from pycore.wording import DISTANCE, SPEED, THIN_SPACE, between, significant, trimmed, with_unit
 
 _SAME = 1e-9
@@ -126,11 +127,12 @@ def interval_name(pri_s, units):
     Returns
     -------
     text : str
-        Such as ``'980 µs'`` or ``'1020.41 Hz'``.
+        Such as ``'980 µs'`` or ``'1020.4 Hz'``.
     """
     unit = units['pri']
     value = {'us': 1e6 * pri_s, 'ms': 1e3 * pri_s, 'Hz': 1.0 / pri_s, 'kHz': 1e-3 / pri_s}[unit]
-    return f'{trimmed(value)}{THIN_SPACE}{"µs" if unit == "us" else unit}'
+    text = trimmed(value, FIGURES['pri']) if unit in ('Hz', 'kHz') else trimmed(value)
+    return f'{text}{THIN_SPACE}{"µs" if unit == "us" else unit}'
 
 
 def decade_ticks(low, high):

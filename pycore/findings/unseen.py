@@ -3,7 +3,7 @@
 import math
 
 from pycore.findings.finding import NOT_ASKED, Finding, at_most
-from pycore.wording import as_typed, between, in_range_unit, in_speed_unit, significant, trimmed, with_unit
+from pycore.wording import as_typed, between, converted, in_range_unit, in_speed_unit, significant, trimmed, with_unit
 
 
 def unseen_inbound(computed, units):
@@ -85,7 +85,7 @@ def unseen_crossing(computed, units):
 
 
 def _input(value, unit):
-    return f'{trimmed(value)} {unit}'
+    return f'{trimmed(converted(value))} {unit}'
 
 
 def _never(wanted):

@@ -1,6 +1,7 @@
 """The plan in words: its grammar case by case, nothing hidden, and every number of it alive once."""
 
 import json
+import math
 from pathlib import Path
 
 import pytest
@@ -80,11 +81,19 @@ def test_what_is_shown_and_typed_again_means_the_same_number(key):
         assert quantity.read_number(text, key, key.path) == value
 
 
-@given(st.floats(0.5, 5000), st.sampled_from(['nmi', 'km']))
-def test_a_range_in_another_unit_is_shown_to_five_digits(range_km, unit):
+@given(st.floats(0.5, 5000))
+def test_a_range_from_another_unit_is_shown_to_three_figures_and_never_loses_a_whole_digit(range_km):
     key = next(key for key in KEYS if key.path == 'coverage.range_km')
-    shown = shown_value(key, range_km, {**SHOWN_UNITS, 'range': unit})
-    assert quantity.read_number(shown, key, key.path) == pytest.approx(range_km, rel=5.1e-5 if unit == 'nmi' else 0)
+    shown = shown_value(key, range_km, {**SHOWN_UNITS, 'range': 'nmi'})
+    rounding_km = 0.5 * 1.852 * min(1.0, 10 ** (math.floor(math.log10(range_km / 1.852)) - 2)) * (1 + 1e-9)
+    assert quantity.read_number(shown, key, key.path) == pytest.approx(range_km, abs=rounding_km)
+
+
+@given(st.decimals('0.1', '2000', places=2), st.sampled_from(['km/h', 'kt']))
+def test_a_speed_that_was_typed_in_a_unit_stands_as_it_was_typed(speed, unit):
+    key = next(key for key in KEYS if key.path == 'crossing.speed_mps')
+    speed_mps = quantity.read_number(f'{speed} {unit}', key, key.path)
+    assert shown_value(key, speed_mps, {**SHOWN_UNITS, 'speed': unit}) == f'{speed.normalize():f}\u202f{unit}'
 
 
 @pytest.mark.parametrize(

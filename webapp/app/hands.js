@@ -7,7 +7,7 @@ const RUN_PAUSE_MS = 1200;
 const LIST = 'waveform.pri_us';
 const NAMES = { 'add-pri': 'Adding a PRI', 'remove-pri': 'Removing a PRI', 'move-pri': 'Moving a PRI', 'sort-pris': 'Sorting the PRIs', 'paste-pris': 'Your own PRIs', 'add-rain': 'Adding rain', 'remove-rain': 'Taking the rain away', remark: 'The remark' };
 
-export function createHands({ state, keys, quantities, status, families, redraw, onAnswered, focus }) {
+export function createHands({ state, keys, quantities, typed, status, families, redraw, onAnswered, focus }) {
   const run = { path: '', at: 0, name: '' };
 
   function runOf(path) {
@@ -19,7 +19,7 @@ export function createHands({ state, keys, quantities, status, families, redraw,
 
   function value(path) {
     const pending = state.now.pending.findLast((edit) => edit.key === path);
-    return pending ? pending.value ?? quantities.plain(pending.text) : valueAt(state.now.plan, path);
+    return pending ? pending.value ?? typed(keys.of(path), pending.text) : valueAt(state.now.plan, path);
   }
 
   function step(path, { count, size, from = value(path), run: drag }) {
@@ -53,9 +53,11 @@ export function createHands({ state, keys, quantities, status, families, redraw,
     value,
     commit: (edit) => {
       run.path = '';
-      state.commit({ ...edit, name: keys.of(edit.key)?.label });
+      const shownIn = edit.text === undefined ? {} : { units: { ...quantities.units } }; // it means what it meant when it was typed
+      state.commit({ ...edit, ...shownIn, name: keys.of(edit.key)?.label });
     },
     putBack: (path) => state.putBack(path),
+    typed: (path, text) => typed(keys.of(path), text),
     takeBack: (name) => state.takeBack(name),
     refusedText: (path) => state.now.refused.find((edit) => edit.key === path)?.text,
     remove(path) {

@@ -3,7 +3,7 @@
 
 import { valueAt } from './keys.js';
 
-export function createLooks({ state, keys, quantities, engineState }) {
+export function createLooks({ state, keys, quantities, typed, engineState }) {
   function pendingShown(path, key) {
     const edit = state.now.pending.findLast((pending) => pending.key === path);
     if (!edit) return undefined;
@@ -37,7 +37,7 @@ export function createLooks({ state, keys, quantities, engineState }) {
 
   // An end of an interval that is possible by itself was refused because of the other one.
   function isWithin(key, text) {
-    const value = quantities.plain(text);
+    const value = typed(key, text);
     return key?.kind === 'interval' && value >= key.lowest && value <= key.highest;
   }
 

@@ -20,19 +20,24 @@ import { createStatus } from './status.js';
 import { followScheme } from './scheme.js';
 import { createStrip } from './strip.js';
 import { createTravel } from './travel.js';
+import { createTyped } from './typed-number.js';
 import { listenToTyping } from './typing.js';
+import { createUnits } from './units.js';
+import { createUnitsLine } from './units-line.js';
 import { createView } from './view.js';
 
 const root = document.documentElement;
 const opening = JSON.parse(document.getElementById('opening').textContent);
 const keys = createKeys(opening.keys);
-const quantities = createQuantities(opening.grammar, { range: 'km', speed: 'm/s', pri: 'us' });
+const units = createUnits(opening.units);
+const quantities = createQuantities(opening.grammar, units.now);
+const typed = createTyped(opening.units, quantities);
 const status = createStatus(document.getElementById('status'));
 const state = createState(opening.answer.plan);
 const view = createView();
 const address = createAddress(openLink);
-const hands = createHands({ state, keys, quantities, status, families: opening.units.families, redraw: () => page.redraw(), onAnswered: (count, act) => waiting.push({ count, act }), focus: (path, typing) => page.focus(path, typing) });
-const page = createPage({ opening, keys, quantities, state, hands, ask: () => asking.ask(), onOpen: (name, shows) => (shows ? opened.open(name, shows) : opened.close(name)) });
+const hands = createHands({ state, keys, quantities, typed, status, families: opening.units.families, redraw: () => page.redraw(), onAnswered: (count, act) => waiting.push({ count, act }), focus: (path, typing) => page.focus(path, typing) });
+const page = createPage({ opening, keys, quantities, typed, state, hands, ask: () => asking.ask(), onOpen: (name, shows) => (shows ? opened.open(name, shows) : opened.close(name)) });
 const travel = createTravel({ state, status, page, buttons: { undo: document.getElementById('undo'), redo: document.getElementById('redo') } });
 const head = createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening: () => asking.isOpening(), openExample });
 let findings = opening.answer.findings;
@@ -42,7 +47,7 @@ let waiting = []; // what is to be done when the answer to an edit stands on the
 let painted = null;
 const first = new Promise((resolve) => { painted = resolve; });
 const engine = startEngine({ payload: (name) => first.then(() => packedPart(name)), onFail: failed });
-const asking = createAsking({ engine, state, view, figures: page.pictures.visible, sizes, units: () => quantities.units, onLate: head.late, onAnswer: answered, onFault: fault });
+const asking = createAsking({ engine, state, view, figures: page.pictures.visible, sizes, units: () => ({ ...units.now }), onLate: head.late, onAnswer: answered, onFault: fault });
 
 const opened = createOpenedFindings({ engine, plan: () => state.now.plan, units: () => quantities.units, isBusy: () => state.now.pending.length > 0 || asking.isOpening() });
 
@@ -78,6 +83,7 @@ async function openLink(text, name = 'The link') {
 }
 
 async function readLink(text) {
+  units.fromLink(text);
   page.clear();
   asking.open(text);
   return openedPlan(text, opening);
@@ -98,6 +104,13 @@ state.watch((cause) => {
 });
 
 view.watch(() => asking.ask());
+units.watch(() => {
+  page.outdate();
+  page.redraw();
+  head.update();
+  asking.ask();
+});
+createUnitsLine({ button: document.getElementById('units'), line: document.getElementById('units-line'), units });
 
 const wasDragged = listenToDragging(document.body, hands);
 const strip = createStrip(document.getElementById('strip'), hands);

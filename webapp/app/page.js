@@ -18,9 +18,9 @@ import { createVerdict } from './verdict.js';
 const at = (id) => document.getElementById(id);
 const engineState = () => document.documentElement.dataset.engine;
 
-export function createPage({ opening, keys, quantities, state, hands, ask, onOpen }) {
+export function createPage({ opening, keys, quantities, typed, state, hands, ask, onOpen }) {
   const numberFor = createNumbers();
-  const looks = createLooks({ state, keys, quantities, engineState });
+  const looks = createLooks({ state, keys, quantities, typed, engineState });
   const sentence = createSentence({ grammar: opening.grammar, keys, quantities });
   const paragraph = createParagraph({ node: at('paragraph'), numberFor, act: (action) => hands.act(action) });
   const verdict = createVerdict(at('verdict'));
@@ -102,6 +102,7 @@ export function createPage({ opening, keys, quantities, state, hands, ask, onOpe
       painting = painting.then(() => pictures.show(answer.figures, count)).then(() => pictures.mark(painted));
       return painting.then(nextFrame);
     },
+    outdate: () => pictures.outdate(),
     clear() {
       verdict.clear();
       findings.clear();

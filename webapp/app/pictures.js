@@ -38,6 +38,8 @@ export function createPictures({ chief, rest, items, titles, onSeen }) {
     visible: () => [...frames].filter(([, frame]) => frame.seen).map(([name]) => name),
     mark: (count) => { for (const { node, count: drawn } of frames.values()) node.classList.toggle('outdated', drawn !== count); },
     outdated: (count) => [...frames].some(([, frame]) => frame.seen && frame.count !== count),
+    // None of them shows what is wanted now: those off the screen are asked for when they come into sight.
+    outdate: () => { for (const frame of frames.values()) frame.count = -1; },
     async show(pictures, count) {
       for (const [name, picture] of Object.entries(pictures)) await draw(frameFor(name), name, picture, items[name], count);
     },

@@ -61,15 +61,10 @@ function arrows(number, event, plan) {
   if (!['ArrowUp', 'ArrowDown'].includes(event.key) || event.ctrlKey || event.metaKey) return false;
   const size = event.altKey ? 'finest' : 'step';
   const count = (event.key === 'ArrowUp' ? 1 : -1) * (event.shiftKey && !event.altKey ? 10 : 1);
-  const from = isTouched(number) ? plainNumber(fieldText(number)) : undefined;
+  const from = isTouched(number) ? plan.typed(number.dataset.key, fieldText(number)) : undefined;
   touch(number, false);
   plan.step(number.dataset.key, { count, size, from });
   return true;
-}
-
-function plainNumber(text) {
-  const value = Number.parseFloat(text.replace('\u2212', '-').replace(',', '.'));
-  return Number.isFinite(value) ? value : undefined;
 }
 
 function commitField(number, plan) {

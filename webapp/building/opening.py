@@ -121,6 +121,7 @@ def grammar():
         'optional_records': plan_keys.OPTIONAL_RECORDS,
         'other_units': shown.OTHER_UNITS,
         'family_choice': shown.FAMILY_CHOICE,
+        'figures': shown.FIGURES,
         'link_records': link.RECORDS,
         'link_lists': {short: path for short, (path, _) in link.LISTS.items()},
         'link_units': {text: unit for unit, text in link_items.UNIT_TEXT.items()},
@@ -133,13 +134,20 @@ def units():
     Returns
     -------
     units : dict
-        By family: what one of each unit is in the family's base unit; and how else a unit may be spelt.
+        By family: what one of each unit is in the family's base unit; how else a unit may be spelt; and what the
+        reader may prefer, how a link says it, and what is shown to begin with.
     """
-    from pycore.units import FAMILIES, SPELLINGS
+    from pycore.link.reader_units import CHOICES, IN_LINK
+    from pycore.units import ALONE, FAMILIES, SPELLINGS
+    from pycore.wording import SHOWN_UNITS
 
     return {
         'families': {name: {unit: float(base) for unit, base in family.items()} for name, family in FAMILIES.items()},
         'spellings': SPELLINGS,
+        'alone': ALONE,
+        'shown': SHOWN_UNITS,
+        'choices': CHOICES,
+        'in_link': IN_LINK,
     }
 
 
