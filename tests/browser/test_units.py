@@ -68,6 +68,7 @@ def test_a_link_carries_the_units(live):
 
     expect(live.number(FAR)).to_have_text('59.4\u202fnmi')  # before the engine has started
     live.ready()
+    live.page.get_by_role('button', name='Units').click()
     expect(live.page.get_by_role('radio', name='PRF in kHz')).to_be_checked()
     expect(live.page.locator('#announcement')).to_be_hidden()
 

@@ -26,7 +26,7 @@ export function createPage({ opening, keys, quantities, typed, state, hands, ask
   const verdict = createVerdict(at('verdict'));
   const findings = createFindings(at('findings'), (name, text) => hands.act('remark', { finding: name, text }), onOpen);
   const refused = createRefused(at('refused'), hands.putBack);
-  const title = createTitle(at('title'), { longest: keys.of('title').longest, commit: (text) => hands.commit({ key: 'title', text }) });
+  const title = createTitle(at('title'), { label: keys.of('title').label, longest: keys.of('title').longest, commit: (text) => hands.commit({ key: 'title', text }) });
   const pictures = createPictures({ chief: at('chief'), rest: at('figures'), items: opening.items, titles: Object.fromEntries(Object.entries(opening.answer.figures).map(([name, { title }]) => [name, title])), onSeen: () => seen() });
   const table = createKeysTable({ box: at('quantities'), place: at('quantities-tables'), keys, numberFor, commit: hands.commit });
   const redraws = { running: false, wanted: false };
