@@ -8,11 +8,12 @@ too low), ``speeds`` (marked speeds) and their names; ``target``. Those of the o
 import numpy as np
 
 from pycore.columns import answering
-from pycore.columns.axes import interval_name, speed_axis
+from pycore.columns.axes import speed_axis
 from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import looks
 from pycore.columns.mark import across
+from pycore.columns.prf_names import prf_names
 from pycore.columns.view import WHOLE
 from pycore.columns.zone_sentences import zones_sentence
 from pycore.wording import THIN_SPACE, listed, percent, significant
@@ -55,7 +56,7 @@ def _of_stagger(computed, axis):
 
 def _of_dwells(computed, axis, units):
     plan = computed.plan
-    names = [interval_name(pri, units) for pri in plan.pri_s.tolist()]
+    names = prf_names(plan, units)
     notches = gaps(computed.prf_speeds, plan.n, plan.speed_m_s)
     unseen = zones(computed.speed_sweep, plan.n, plan.m)
     counted = f'{plan.m} of {plan.n}' if plan.n > 1 else None
@@ -136,7 +137,15 @@ def _table(computed, axis, names, notches):
         more = [f'{start.size - 6} more'] if start.size > 6 else []
         blind = float(axis.shown(computed.blind_speed_m_s[prf]))
         lost = percent(float(computed.notched_shares[prf]))
-        rows.append([name, significant(blind), f'± {significant(blind / 2)}', lost, '; '.join(found + more) or 'none'])
+        rows.append(
+            [
+                name,
+                significant(blind),
+                f'±{THIN_SPACE}{significant(blind / 2)}',
+                lost,
+                '; '.join(found + more) or 'none',
+            ]
+        )
     unit = axis.unit
     return {
         'head': ['PRF', f'First blind speed ({unit})', f'Nyquist speed ({unit})', 'Blind', 'Blind speeds'],

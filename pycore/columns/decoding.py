@@ -12,11 +12,12 @@ from dataclasses import dataclass
 import numpy as np
 
 from pycore.candidates import agreement, comb
-from pycore.columns.axes import interval_name, range_axis
+from pycore.columns.axes import range_axis
 from pycore.columns.decoding_words import span_text, words
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.mark import across
 from pycore.columns.named import names_at
+from pycore.columns.prf_names import prf_names
 from pycore.columns.view import WHOLE
 from pycore.follow import blur_half_widths, ghosts_of
 
@@ -89,7 +90,7 @@ def picture(computed, units, size=None, view=WHOLE):
         Columns, ranges, labels, ticks and words.
     """
     plan, axis = computed.plan, range_axis(computed.plan.range_m, units)
-    names = [interval_name(pri, units) for pri in plan.pri_s.tolist()]
+    names = prf_names(plan, units)
     found = None if computed.is_stagger else decoded(computed, view.mark)
     n = 0 if computed.is_stagger else plan.n
     lane_ends = _ALONE if computed.is_stagger else (_SPANS_LOW, lane_range(n, n > 1)[1])

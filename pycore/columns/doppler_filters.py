@@ -10,11 +10,12 @@ filter). Of a stagger: its canceller over the true speed.
 
 import numpy as np
 
-from pycore.columns.axes import interval_name, speed_axis
+from pycore.columns.axes import speed_axis
 from pycore.columns.filter_lanes import lanes
 from pycore.columns.filter_words import words
 from pycore.columns.mark import upright
 from pycore.columns.named import names_at
+from pycore.columns.prf_names import prf_names
 from pycore.columns.view import WHOLE
 
 NAME, TITLE = 'doppler-filters', 'Doppler filters'
@@ -71,7 +72,8 @@ def picture(computed, units, size=None, view=WHOLE):
     axis = speed_axis(
         (min(lane.speed_m_s[0] for lane in heard), max(lane.speed_m_s[-1] for lane in heard)), units, name
     )
-    names = [interval_name(computed.plan.pri_s[lane.prf], units) for lane in heard]
+    names = prf_names(computed.plan, units)
+    names = [names[lane.prf] for lane in heard]
     scale = _Scale(len(heard), _top(heard))
     return {
         'title': TITLE,

@@ -9,9 +9,10 @@ where there is room), ``names`` (in the CPIs that have room), ``end`` and ``end-
 
 import numpy as np
 
-from pycore.columns.axes import Axis, interval_name
+from pycore.columns.axes import Axis
 from pycore.columns.dwell_words import words
 from pycore.columns.named import names_at
+from pycore.columns.prf_names import prf_names
 from pycore.columns.view import WHOLE
 from pycore.dwell import sets_that_fit, timeline
 
@@ -52,7 +53,7 @@ def picture(computed, units, size=None, view=WHOLE):
     cpis = timed(computed)
     given = computed.plan.time_on_target_s
     axis = time_axis(max(float(cpis.stop_s[-1]), given or 0.0))
-    names = [interval_name(pri, units) for pri in computed.plan.pri_s.tolist()]
+    names = prf_names(computed.plan, units)
     names = ['stagger'] if computed.is_stagger else names
     px_per_s = (size or {}).get('width', WIDTH_PX) / axis.limits[1]
     return {

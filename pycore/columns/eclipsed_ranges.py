@@ -1,27 +1,32 @@
 """Figure: which ranges each PRF receives, how much of the echo, and which of them enough PRFs receive.
 
 Sources: ``lanes`` (a bar along each lane), ``eclipsed`` (on each PRF), ``unseen``
-(on fewer than M), ``received`` (the received share, its area and its edge), ``target``.
+(on fewer than M), ``received`` (the received share, its area and its edge) with
+``least`` (what counts as clear), ``target``.
 """
 
 import numpy as np
 
-from pycore.columns.axes import interval_name, range_axis
+from pycore.columns.axes import range_axis
 from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import cycle_looks, looks
 from pycore.columns.mark import across
-from pycore.columns.received import received_corners
+from pycore.columns.prf_names import prf_names
+from pycore.columns.received import is_legible, received, scale_ticks, share_sentence
 from pycore.columns.view import WHOLE
 from pycore.columns.zone_sentences import zones_sentence
 from pycore.wording import count_word, percent, significant
 
 NAME, TITLE = 'eclipsed-ranges', 'Eclipsed ranges'
 
-MOST_WITH_SHARE = 6
-"""PRFs up to which the received share is drawn as well: with more, its lanes would be too low to read. [unitless]"""
+SIZE = {'width': 560, 'height': 270}
+"""The plot where the page has not said how large it is. [px]"""
 
-_SHARE_FROM, _SHARE_HIGH = -0.47, 0.2
+SHARED, ALONE = 0.34, 0.62
+"""Height of a bar that has the share under it, and of one that has not. [lanes]"""
+
+_BAR_AT = 0.26
 
 
 def picture(computed, units, size=None, view=WHOLE):
@@ -34,7 +39,7 @@ def picture(computed, units, size=None, view=WHOLE):
     units : mapping
         Units that the reader prefers. [unitless]
     size : mapping or None
-        Not used: nothing here depends on the size. [px]
+        Width and height of the plot, which say whether the received share can be read. [px]
     view : View
         What the reader has chosen to look at. [unitless]
 
@@ -44,51 +49,52 @@ def picture(computed, units, size=None, view=WHOLE):
         Columns, ranges, labels, ticks and words.
     """
     plan, axis = computed.plan, range_axis(computed.plan.range_m, units)
-    names = [interval_name(pri, units) for pri in plan.pri_s.tolist()]
+    names = prf_names(plan, units)
     eclipsed = gaps(computed.prf_ranges, plan.n, plan.range_m)
     unseen = zones(computed.range_sweep, computed.looks, computed.m)
     counted = None if plan.n == 1 else 'all intervals' if computed.is_stagger else f'{plan.m} of {plan.n}'
-    lanes = lane_range(plan.n, counted is not None)
+    lanes, size = lane_range(plan.n, counted is not None), size or SIZE
+    shared = is_legible(plan, axis, size['width'])
     return {
         'title': TITLE,
-        **_words(computed, axis, names, eclipsed, unseen),
+        **_words(computed, axis, names, eclipsed, unseen, shared),
         'columns': {
-            **_columns(computed, axis, eclipsed, unseen, counted is not None),
+            **_columns(computed, axis, eclipsed, unseen, counted is not None, shared),
             'target': across(view.mark and view.mark.range_m, axis, lanes),
         },
         'ranges': {'x': axis.ends, 'y': lanes},
-        'labels': {'x': axis.label, 'y': ''},
+        'labels': {'x': axis.label, 'y': 'under each lane: received share of the echo' if shared else ''},
         'units': {'x': axis.unit},
-        'ticks': {'y': lane_ticks(names, counted)},
+        'ticks': {'y': _ticks(plan.n, lane_ticks(names, counted), lanes, size['height'] if shared else 0.0)},
     }
 
 
-def _columns(computed, axis, eclipsed, unseen, with_top):
+def _ticks(n, ticks, lanes, height):
+    """Return the lanes' names, each beside its bar, and nought and one beside the shares where there is room."""
+    if not height:
+        return ticks
+    names = {'at': [at + _BAR_AT for at in ticks['at'][:n]] + ticks['at'][n:], 'text': ticks['text']}
+    scale = scale_ticks(n, height / (lanes[1] - lanes[0]))
+    return {'at': [*scale['at'], *names['at']], 'text': [*scale['text'], *names['text']]}
+
+
+def _columns(computed, axis, eclipsed, unseen, with_top, shared):
     n = computed.plan.n
     middle, top = middles(n)
-    every = np.append(middle, top) if with_top else middle
+    at = middle + (_BAR_AT if shared else 0.0)
+    every = np.append(at, top) if with_top else at
     bars = unseen if with_top else unseen[:0]
-    return {
+    found = {
         'lanes': lane_bars(every, axis),
-        'eclipsed': lane_bars(middle, axis, eclipsed.prf, eclipsed.start, eclipsed.stop),
+        'eclipsed': lane_bars(at, axis, eclipsed.prf, eclipsed.start, eclipsed.stop),
         'unseen': lane_bars(np.array([top]), axis, np.zeros(len(bars), dtype=int), bars[:, 0], bars[:, 1]),
-        'received': _received(computed.plan, axis, middle),
     }
+    for columns in found.values():
+        columns['height'] = np.full(columns['y'].size, SHARED if shared else ALONE)
+    return {**found, **received(computed.plan, axis, shared)}
 
 
-def _received(plan, axis, middle):
-    """Return the received share of all PRFs under their bars, parted by nan: areas down to a base, and their edges."""
-    if plan.n > MOST_WITH_SHARE:
-        return {'x': np.zeros(0), 'area': np.zeros(0), 'edge': np.zeros(0)}
-    x, area, edge = [], [], []
-    for at, (range_m, share) in zip(middle + _SHARE_FROM, received_corners(plan), strict=True):
-        x += [axis.shown(range_m[[0]]), axis.shown(range_m), axis.shown(range_m[[-1, -1]])]
-        area += [[at], at + _SHARE_HIGH * share, [at, np.nan]]
-        edge += [[np.nan], at + _SHARE_HIGH * share, [np.nan, np.nan]]
-    return {'x': np.concatenate(x), 'area': np.concatenate(area), 'edge': np.concatenate(edge)}
-
-
-def _words(computed, axis, names, eclipsed, unseen):
+def _words(computed, axis, names, eclipsed, unseen, shared):
     said = cycle_looks() if computed.is_stagger else looks(computed.looks, computed.m, 'eclipsed')
     found, floor = avoidable(computed.sight, 0)
     where, whole, everywhere = _beyond(floor, axis), outside(axis.limits, floor), within(eclipsed, floor, axis.limits)
@@ -98,8 +104,7 @@ def _words(computed, axis, names, eclipsed, unseen):
         sentences += _beyond_the_cycle(computed, axis)
     elif computed.plan.n > 1 and not everywhere:
         sentences += _worst(computed, names)
-    if computed.plan.n <= MOST_WITH_SHARE:
-        sentences.append(f'Under {"the" if computed.plan.n == 1 else "each"} lane: the received share of the echo.')
+    sentences.append(share_sentence(computed.plan, shared))
     return {
         'caption': ' '.join(sentences),
         'short': sentences[0],

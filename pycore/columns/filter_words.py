@@ -38,8 +38,8 @@ def words(computed, heard, axis, names, mark=None):
 
 
 def _on(names, computed):
-    """Return ``at 980 µs`` for a PRF among several, nothing for the only one."""
-    return [''] * len(names) if computed.plan.n == 1 or computed.is_stagger else [f' at {name}' for name in names]
+    """Return ``on 980 µs`` for a PRF among several, nothing for the only one."""
+    return [''] * len(names) if computed.plan.n == 1 or computed.is_stagger else [f' on {name}' for name in names]
 
 
 def _clutter(computed, heard, names, mark):
@@ -100,7 +100,7 @@ def _bank(computed, heard, axis, names):
     filters = count_word(counts.pop()) if len(counts) == 1 else f'{min(counts)} to {max(counts)}'
     widths = [float(axis.shown(lane.cpi.blind_speed_m_s / lane.cpi.pulses)) for lane in heard]
     apart = listed(dict.fromkeys(significant(width) for width in widths))
-    each = 'on each PRF' if plan.n > 1 and len(heard) == plan.n else f'at {names[0]}' if plan.n > 1 else 'in the bank'
+    each = 'on each PRF' if plan.n > 1 and len(heard) == plan.n else f'on {names[0]}' if plan.n > 1 else 'in the bank'
     return [capitalised(f'{filters} filters {each}, {apart}{THIN_SPACE}{axis.unit} apart.')]
 
 

@@ -2,8 +2,9 @@
 
 import math
 
-from pycore.columns.axes import interval_name, range_axis, speed_axis
+from pycore.columns.axes import range_axis, speed_axis
 from pycore.columns.looks import all_of
+from pycore.columns.prf_names import prf_names
 from pycore.wording import capitalised, count_word, listed, percent, plural, significant, with_unit
 
 REASONS = {'eclipsed': 'eclipsed', 'notch': 'in the notch', 'clutter': 'under clutter'}
@@ -43,8 +44,7 @@ def words(mark, units):
         'rows': [
             [cells[part] for part in parts]
             for cells in (
-                _cells(one, interval_name(pri, units), x, y)
-                for one, pri in zip(mark.followed.prfs, plan.pri_s.tolist(), strict=True)
+                _cells(one, name, x, y) for one, name in zip(mark.followed.prfs, prf_names(plan, units), strict=True)
             )
         ],
     }

@@ -2,17 +2,21 @@
 
 On logarithmic axes all PRFs of one carrier lie on a line of slope -1, those of a
 band in a strip. Sources: ``edges`` (of the bands), ``band`` (the strips that the
-plan's carriers lie in), ``band-names``, ``lines`` (one for each carrier), ``asked``
-(what one PRF would have to reach) and ``asked-name``, ``prfs`` and ``prf-names``, ``target``
-(a PRF further out and higher up would show the followed target without ambiguity).
+plan's carriers lie in), ``band-names``, ``lines`` (one for each carrier) and
+``carrier-names``, ``asked`` (what one PRF would have to reach), ``regimes`` and
+``regime-names`` (low, medium, high and clear for this coverage), ``prfs`` and
+``prf-names``, ``target`` (a PRF further out and higher up would show the followed
+target without ambiguity).
 """
 
 import numpy as np
 
 from pycore import ambiguity, bands
-from pycore.columns.axes import decade_ticks, interval_name, range_axis, speed_axis
+from pycore.columns.axes import decade_ticks, range_axis, speed_axis
 from pycore.columns.mark import ring
 from pycore.columns.named import names_at
+from pycore.columns.prf_names import prf_names
+from pycore.columns.trade_regions import carrier_names, regions
 from pycore.columns.trade_words import words
 from pycore.columns.view import WHOLE
 
@@ -42,7 +46,7 @@ def picture(computed, units, size=None, view=WHOLE):
         Columns, ranges, labels, ticks and words.
     """
     x, y = _axes(computed, units)
-    names = [interval_name(pri, units) for pri in computed.plan.pri_s.tolist()]
+    names = prf_names(computed.plan, units)
     ticks = {
         side: dict(zip(('at', 'text'), decade_ticks(*axis.ends), strict=True)) for side, axis in (('x', x), ('y', y))
     }
@@ -51,7 +55,7 @@ def picture(computed, units, size=None, view=WHOLE):
         **words(computed, x, y, names),
         'columns': {
             **_bands(computed.plan, x, y),
-            **_asked(computed.plan, x, y),
+            **regions(computed.plan, x, y),
             **_prfs(computed, x, y, names),
             'target': _target(view.mark, x, y),
         },
@@ -99,12 +103,14 @@ def _bands(plan, x, y):
     own = [band for band in bands.BANDS if any(band.low_hz <= carrier <= band.high_hz for carrier in plan.carrier_hz)]
     left, right = x.ends
     outer, inner = (_product([getattr(band, end) for band in own], x, y) for end in ('low_hz', 'high_hz'))
+    carriers = _product(np.unique(plan.carrier_hz), x, y)
     strips = np.column_stack((inner / left, inner / right, outer / right, outer / left))
     return {
         'edges': _line(_product(edges, x, y), x),
         'band': {'xs': [[left, right, right, left] for _ in own], 'ys': strips.tolist()},
         'band-names': _band_names(plan, x, y),
-        'lines': _line(_product(np.unique(plan.carrier_hz), x, y), x),
+        'lines': _line(carriers, x),
+        'carrier-names': carrier_names(plan, carriers, x, y),
     }
 
 
@@ -128,17 +134,6 @@ def _band_names(plan, x, y):
     text = [band.name for band, here in zip(bands.BANDS, shown.tolist(), strict=True) if here]
     beside = from_left[shown]
     return names_at(at_x[shown], at_y[shown], text, anchor, np.where(beside, 4.0, 0.0), np.where(beside, 0.0, 2.0))
-
-
-def _asked(plan, x, y):
-    """Return the region in which one PRF would be unambiguous over the whole coverage, and where its name stands."""
-    corner = x.shown(plan.range_m[1]), y.shown(plan.speed_m_s[1] - plan.speed_m_s[0])
-    names = ('left', 'bottom', 'right', 'top')
-    box = {name: np.array([value]) for name, value in zip(names, (*corner, x.ends[1], y.ends[1]), strict=True)}
-    return {
-        'asked': box,
-        'asked-name': names_at(box['right'], box['bottom'], ['what is asked for'], ['bottom_right'], -3.0, -3.0),
-    }
 
 
 def _prfs(computed, x, y, names):

@@ -3,8 +3,9 @@
 import numpy as np
 
 from pycore import bands
+from pycore.columns.looks import all_of
 from pycore.constants import SPEED_OF_LIGHT_M_S
-from pycore.wording import THIN_SPACE, capitalised, count_word, listed, significant, trimmed
+from pycore.wording import THIN_SPACE, capitalised, count_word, listed, plural, significant, trimmed
 
 
 def words(computed, x, y, names):
@@ -25,6 +26,7 @@ def words(computed, x, y, names):
         caption, short, summary, table.
     """
     first, second = _shortfall(computed, x, y), _given(computed, x, y)
+    second = f'{second} {_regimes(computed)}'
     return {
         'caption': f'{first} {second}',
         'short': first,
@@ -64,14 +66,27 @@ def _given(computed, x, y):
     order = np.sort(first)
     if order.size > 3:
         ends = [f'{significant(values.min())} to {significant(values.max())}' for values in (reach, speed)]
-        ends.append(f'± {significant(nyquist.min())} to ± {significant(nyquist.max())}')
+        ends.append(f'±{THIN_SPACE}{significant(nyquist.min())} to ±{THIN_SPACE}{significant(nyquist.max())}')
     else:
         shown = [list(dict.fromkeys(map(significant, values[order].tolist()))) for values in (reach, speed, nyquist)]
-        ends = [listed(shown[0]), listed(shown[1]), listed(f'± {text}' for text in shown[2])]
+        ends = [listed(shown[0]), listed(shown[1]), listed(f'±{THIN_SPACE}{text}' for text in shown[2])]
     count, noun = computed.plan.n, 'interval' if computed.is_stagger else 'PRF'
     who = f"The plan's {count_word(count)} {noun + ' gives' if count == 1 else noun + 's give'}"
     blind = f'{"a first blind speed" if count == 1 else "first blind speeds"} of {ends[1]}{THIN_SPACE}{y.unit}'
     return f'{who} {ends[0]}{THIN_SPACE}{x.unit} and {blind} (Nyquist {ends[2]}{THIN_SPACE}{y.unit}).'
+
+
+def _regimes(computed):
+    """Say of which regime the PRFs are for this coverage."""
+    counts = {name: computed.regimes.count(name) for name in ('low', 'medium', 'high', 'clear')}
+    kinds = {name: count for name, count in counts.items() if count}
+    if len(kinds) > 1:
+        parts = listed(f'{count_word(count)} {plural(count, "is", "are")} {name}' for name, count in kinds.items())
+        return f'For this coverage {parts}.'
+    (name, n), *_ = kinds.items()
+    what = name if name == 'clear' else f'{name} PRF'
+    who = 'It' if n == 1 else capitalised(all_of(n))
+    return f'{who} {plural(n, "is", "are")} {what} for this coverage.'
 
 
 def _table(computed, x, y, names):
@@ -80,7 +95,7 @@ def _table(computed, x, y, names):
         names, x.shown(computed.unambiguous_range_m), y.shown(computed.blind_speed_m_s), computed.regimes, strict=True
     )
     rows = [
-        [name, significant(reach), significant(speed), f'± {significant(speed / 2)}', regime]
+        [name, significant(reach), significant(speed), f'±{THIN_SPACE}{significant(speed / 2)}', regime]
         for name, reach, speed, regime in triples
     ]
     head = [

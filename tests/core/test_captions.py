@@ -19,6 +19,7 @@ from pycore.computed import Computed
 from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS, THIN_SPACE
 
+SIZE = {'width': 560, 'height': 300}  # about a figure's on a laptop
 CASES = json.loads((Path(__file__).parent / 'captions.json').read_text(encoding='utf-8'))
 
 
@@ -26,7 +27,7 @@ CASES = json.loads((Path(__file__).parent / 'captions.json').read_text(encoding=
 def test_captions_say_what_they_should(case):
     computed, units = Computed(read(case['plan'])), {**SHOWN_UNITS, **case.get('units', {})}
     said = {
-        name: columns.picture(name, computed, units, {'width': 60, 'height': 40})['caption'].replace(THIN_SPACE, ' ')
+        name: columns.picture(name, computed, units, SIZE)['caption'].replace(THIN_SPACE, ' ')
         for name in columns.order(computed.plan.kind)
     }
     assert said == case['captions']

@@ -282,7 +282,7 @@ def test_lanes_stand_in_sending_order_from_the_top_and_the_one_that_counts_above
 
 def test_a_single_prf_has_no_lane_that_counts():
     one = {**OPENING, 'waveform': {'pri_us': [980.0], 'pulses': 9, 'detect_m': 1}}
-    assert pictures(one)['eclipsed-ranges']['ticks']['y']['text'] == [f'980{THIN_SPACE}µs']
+    assert pictures(one)['eclipsed-ranges']['ticks']['y']['text'] == ['0', '1', f'980{THIN_SPACE}µs']
 
 
 def test_the_response_of_a_stagger_is_drawn_with_its_marked_speeds():

@@ -12,7 +12,7 @@ from webapp.figures.palette import CLASS_ROLES, PALETTE, SCHEMES, STEP_ROLES
 from webapp.figures.style import colours
 
 STYLE = Path(__file__).parents[2] / 'webapp' / 'page' / 'styles' / 'base.css'
-DARK_CLASSES = ('none', 'none-hatch', 'too-few', 'too-few-edge', 'dot')
+DARK_CLASSES = ('none', 'none-hatch', 'too-few', 'too-few-edge')
 LIGHT_CLASSES = ('just-enough', 'more', 'all')
 
 
@@ -35,7 +35,7 @@ def test_contrast_is_that_of_the_standard_at_its_ends():
 
 
 def test_every_class_of_the_map_has_a_colour():
-    assert set(CLASS_ROLES) == set(NAMES) == {*DARK_CLASSES, *LIGHT_CLASSES}
+    assert set(CLASS_ROLES) == set(NAMES) == {*DARK_CLASSES, *LIGHT_CLASSES, 'dot'}
     assert set(CLASS_ROLES.values()) <= set(PALETTE)
 
 
@@ -44,6 +44,13 @@ def test_every_class_of_the_map_has_a_colour():
 @pytest.mark.parametrize('seen', LIGHT_CLASSES)
 def test_blind_stands_five_to_one_against_seen(scheme, blind, seen):
     assert contrast(*(colours(CLASS_ROLES[name], scheme) for name in (blind, seen))) >= 5
+
+
+@pytest.mark.parametrize('scheme', SCHEMES)
+def test_dots_of_clutter_are_plain_on_what_is_seen_and_quieter_than_what_is_blind(scheme):
+    dot, none, *seen = (colours(CLASS_ROLES[name], scheme) for name in ('dot', 'none', *LIGHT_CLASSES))
+    assert min(contrast(dot, ground) for ground in seen) >= 3
+    assert contrast(dot, none) >= 3
 
 
 @pytest.mark.parametrize('scheme', SCHEMES)

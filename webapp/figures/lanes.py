@@ -21,8 +21,8 @@ def lanes(made, name, picture, blind, height=HEIGHT):
         Its columns. [shown units]
     blind : str
         The source of the bars of single PRFs. [unitless]
-    height : float
-        Height of a bar. [lanes]
+    height : float or str
+        Height of a bar, or the column that has it. [lanes]
     """
     ends = {'y': 'y', 'left': 'left', 'right': 'right', 'height': height, 'line_alpha': 0}
     draw(made, source(name, picture, 'lanes'), HBar(**ends), fill_color='lane')

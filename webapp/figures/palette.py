@@ -27,6 +27,7 @@ PALETTE = {
     'seldom': ('#657182', '#9aa0a5'),
     'often': ('#8b97a4', '#707a85'),
     'enough': ('#dbe5ea', '#29343f'),
+    'dot': ('#6a7683', '#7d8894'),
     'asked': ('#dcebf0', '#1d323b'),
 }
 """Each role's colour in every scheme. [unitless]"""
@@ -39,7 +40,7 @@ CLASS_ROLES = {
     'just-enough': 'pale',
     'more': 'paler',
     'all': 'paper',
-    'dot': 'ink',
+    'dot': 'dot',
 }
 """The role that each class of the map of blind zones is drawn in. [unitless]"""
 

@@ -23,17 +23,20 @@ def build(picture):
     Returns
     -------
     figure : bokeh figure
-        Sources ``edges``, ``band``, ``band-names``, ``lines``, ``asked``, ``asked-name``, ``prfs``, ``prf-names``,
-        ``target``.
+        Sources ``edges``, ``band``, ``band-names``, ``lines``, ``carrier-names``, ``asked``,
+        ``regimes``, ``regime-names``, ``prfs``, ``prf-names``, ``target``.
     """
     made = plot(NAME, picture, 'log', 'log')
     draw(made, source(NAME, picture, 'band'), Patches(xs='xs', ys='ys', line_alpha=0), fill_color='band')
     asked = Quad(left='left', bottom='bottom', right='right', top='top', line_alpha=0)
     draw(made, source(NAME, picture, 'asked'), asked, fill_color='asked')
     draw(made, source(NAME, picture, 'edges'), Segment(**_ENDS, line_width=1), line_color='hair')
+    parted = Segment(**_ENDS, line_width=1, line_dash=[2, 4])
+    draw(made, source(NAME, picture, 'regimes'), parted, line_color='text')
     draw(made, source(NAME, picture, 'lines'), Segment(**_ENDS, line_width=2.25), line_color='line')
     write(made, NAME, picture, 'band-names', ground=0.0)
-    write(made, NAME, picture, 'asked-name', role='line', ground=0.0)
+    write(made, NAME, picture, 'carrier-names', role='line', ground=0.0)
+    write(made, NAME, picture, 'regime-names', style='italic', ground=0.0)
     write(made, NAME, picture, 'prf-names', role='strong-text', ground=0.6)
     mark = Scatter(x='x', y='y', size=10, line_width=1.5)
     draw(made, source(NAME, picture, 'prfs'), mark, fill_color='ink', line_color='paper')
