@@ -8,6 +8,7 @@ import math
 from pycore import ambiguity, eclipsing
 from pycore.columns.axes import interval_name, range_axis, speed_axis
 from pycore.columns.looks import all_of
+from pycore.columns.prf_names import prf_names
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.follow import why
 from pycore.wording import THIN_SPACE, capitalised, count_word, listed, percent, trimmed, with_unit
@@ -51,7 +52,7 @@ class _Point:
     def __init__(self, computed, units, x, y):
         self.computed, self.x, self.y = computed, x, y
         self.units = units
-        self.names = [interval_name(pri, units) for pri in computed.plan.pri_s.tolist()]
+        self.names = prf_names(computed.plan, units)
 
     def offset(self, prf, speed_m_s):
         """Return how far a speed lies from the nearest blind one, in words."""

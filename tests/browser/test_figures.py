@@ -12,6 +12,7 @@ from playwright.sync_api import expect
 
 from pycore import columns
 from pycore.columns.mark import marked
+from pycore.columns.view import View
 from pycore.computed import Computed
 from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS
@@ -146,7 +147,11 @@ def test_under_the_map_of_detection_a_pointer_has_a_range_and_no_speed(blank):
 
 def test_a_followed_target_is_marked_in_the_colour_of_lines(blank):
     picture = columns.picture(
-        'blind-zones', computed := Computed(read(document([980.0, 860.0]))), SHOWN_UNITS, SIZE, marked(computed, TARGET)
+        'blind-zones',
+        computed := Computed(read(document([980.0, 860.0]))),
+        SHOWN_UNITS,
+        SIZE,
+        View(mark=marked(computed, TARGET)),
     )
     show(blank, 'blind-zones', document([980.0, 860.0]))
     assert rgb_of('line', 'light') not in colours_up(blank)
