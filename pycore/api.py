@@ -10,19 +10,21 @@ from pycore.cautions import cautions
 from pycore.columns import followed, marking, picture
 from pycore.columns.here import here_words
 from pycore.columns.view import seen
+from pycore.comparing import comparison, moved
 from pycore.computed import Computed
 from pycore.conventions import conventions
-from pycore.differences import differing_inputs, judged_changes, verdicts_differ
 from pycore.errors import InputError
 from pycore.findings import verdict
 from pycore.follow import follow, strip
 from pycore.holds_over import judged
+from pycore.link.beside import beside, read_beside
 from pycore.link.reader_units import units_text, unknown_units
 from pycore.margins import margins_shown
 from pycore.margins.slices import margins_in_words
 from pycore.plan.keys.followed import FOLLOWED
 from pycore.plan.reading import read
 from pycore.quantity import read_number
+from pycore.remembered import computed_of, computed_of_document, findings_of
 from pycore.shown import shown_unit
 from pycore.timing import columns, timing_table
 from pycore.variation import steps, varied
@@ -76,22 +78,26 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         Whether findings that take long are worked out where nothing is judged by them. [unitless]
     view : mapping or None
         What the reader has chosen to look at: ``target``, with ``range_km`` and ``speed_mps``, is followed and marked
-        in all figures. [km, m/s]
+        in all figures; ``kept`` is a plan to compare with, for which one that an opened link carries goes before.
+        [km, m/s]
 
     Returns
     -------
     note : dict
-        The plan, its link, what was said and refused, verdict, findings, cautions, figures, and what becomes of the
-        target.
+        The plan, its link, what was said and refused, verdict, findings, cautions, figures, what becomes of the
+        target, and how the plan differs from the kept one.
     """
     units = {**SHOWN_UNITS, **(units or {})}
     start = None if opened is None else link.read_link(opened)
     if start is not None:
         view = {**(view or {}), 'target': start.target}
     edited, said, refused = _edited(plan if start is None else start.document, edits, units)
-    computed = Computed(edited, with_echoes=deep)
-    found = judged(computed, units)
+    computed = computed_of(edited, with_echoes=deep)
+    found = findings_of(computed, units)
+    if start is not None:
+        view = _with_kept(start, view)
     looked = seen(computed, view)
+    kept = None if looked.kept is None else looked.kept.plan.document
     return {
         'plan': computed.plan.document,
         'link': _link(computed, looked, units),
@@ -103,6 +109,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         'cautions': cautions(computed, units),
         'figures': {name: picture(name, computed, units, (size or {}).get(name), looked) for name in figures},
         'target': None if looked.mark is None else followed.words(looked.mark, units),
+        'kept': None if kept is None else {'plan': kept, **comparison(computed, looked.kept, units)},
     }
 
 
@@ -126,7 +133,7 @@ def look(plan, figures=(), marked=(), size=None, units=None, view=None):
         ``link``, ``figures`` (of the marked ones only what moves), ``target``.
     """
     units = {**SHOWN_UNITS, **(units or {})}
-    computed = Computed(read(plan))
+    computed = computed_of_document(plan)
     looked = seen(computed, view)
     sizes = size or {}
     return {
@@ -158,7 +165,7 @@ def here(plan, figure, x=None, y=None, units=None):
     here : dict
         ``text``, empty where there is nothing to say.
     """
-    return {'text': here_words(Computed(read(plan)), figure, x, y, {**SHOWN_UNITS, **(units or {})})}
+    return {'text': here_words(computed_of_document(plan), figure, x, y, {**SHOWN_UNITS, **(units or {})})}
 
 
 def typed_target(name, text, current=None, units=None):
@@ -191,10 +198,19 @@ def typed_target(name, text, current=None, units=None):
 
 
 def _link(computed, looked, units):
-    """Write the link, which carries the followed target and the reader's units."""
+    """Write the link, which carries the followed target, the reader's units, and the kept plan."""
     mark, text = looked.mark, units_text(units)
     view = {} if mark is None else {'target': link.target_text(mark.target)}
-    return link.written(computed.plan.document, view={**view, **({'units': text} if text else {})})
+    view |= {'units': text} if text else {}
+    view |= {} if looked.kept is None else beside(looked.kept.plan.document)
+    return link.written(computed.plan.document, view=view)
+
+
+def _with_kept(start, view):
+    """Return the view with the plan to compare with that an opened link carries; what is wrong with it is said."""
+    carried, said = read_beside(start)
+    start.said.extend(said)
+    return view if carried is None else {**(view or {}), 'kept': carried}
 
 
 def _edited(document, edits, units):
@@ -239,16 +255,30 @@ def compare(plan, other, units=None):
     Returns
     -------
     comparison : dict
-        ``inputs``, ``findings`` and ``differ`` (whether any verdict does).
+        ``inputs``, ``findings``, ``differ`` (whether any verdict does), and ``summary``, one sentence.
     """
     units = {**SHOWN_UNITS, **(units or {})}
-    ours, theirs = (Computed(read(one)) for one in (plan, other))
-    changes = judged_changes(judged(ours, units), judged(theirs, units))
-    return {
-        'inputs': differing_inputs(ours.plan.document, theirs.plan.document, units),
-        'findings': changes,
-        'differ': verdicts_differ(changes),
-    }
+    return comparison(computed_of_document(plan), computed_of_document(other), units)
+
+
+def moved_between(plan, before, units=None):
+    """Return what an edit did: what changed, and every finding that moved.
+
+    Parameters
+    ----------
+    plan, before : dict
+        The plan after the edit, and before it. [plan's units]
+    units : mapping or None
+        Units that the reader prefers. [unitless]
+
+    Returns
+    -------
+    moved : dict
+        ``what``, ``findings``, and ``link``, which opens the plan after it.
+    """
+    units = {**SHOWN_UNITS, **(units or {})}
+    now, then = (computed_of_document(one) for one in (plan, before))
+    return {**moved(now, then, units), 'link': link.written(now.plan.document)}
 
 
 def vary(plan, inputs):
@@ -442,6 +472,7 @@ ACTIONS = {
     'assess': assess,
     'note': note,
     'compare': compare,
+    'moved': moved_between,
     'vary': vary,
     'look': look,
     'here': here,

@@ -5,7 +5,9 @@ from collections.abc import Mapping
 from dataclasses import dataclass, field, replace
 
 from pycore.columns.mark import Mark, marked
+from pycore.computed import Computed
 from pycore.errors import InputError
+from pycore.remembered import computed_of_document
 
 
 @dataclass(frozen=True, slots=True)
@@ -18,10 +20,13 @@ class View:
         The target that is followed, which every figure marks. [m, m/s]
     zoom : mapping
         For each figure of which only a part is shown: its ends in range and in radial speed. [m, m/s]
+    kept : Computed or None
+        What the plan gives that was kept to compare with. [SI]
     """
 
     mark: Mark | None = None
     zoom: Mapping = field(default_factory=dict)
+    kept: Computed | None = None
 
     def part(self, name, x, y):
         """Return the axes that one figure is drawn on.
@@ -44,7 +49,7 @@ class View:
 
 
 WHOLE = View()
-"""The whole plan, nothing marked."""
+"""The whole plan, nothing marked, nothing beside it."""
 
 
 def seen(computed, chosen):
@@ -56,7 +61,7 @@ def seen(computed, chosen):
         What the plan gives. [SI]
     chosen : mapping or None
         ``target``: ``range_km`` and ``speed_mps`` of the target that is followed; ``zoom``: for each figure of which
-        a part is looked at, its ends ``x`` and ``y``. [km, m/s]
+        a part is looked at, its ends ``x`` and ``y``; ``kept``: the plan to compare with. [km, m/s]
 
     Returns
     -------
@@ -69,7 +74,12 @@ def seen(computed, chosen):
         Where what is chosen cannot be.
     """
     chosen = chosen or {}
-    return View(mark=marked(computed, chosen.get('target')), zoom=_zoomed(computed.plan, chosen.get('zoom') or {}))
+    kept = chosen.get('kept')
+    return View(
+        mark=marked(computed, chosen.get('target')),
+        zoom=_zoomed(computed.plan, chosen.get('zoom') or {}),
+        kept=None if kept is None else computed_of_document(kept, computed.with_echoes),
+    )
 
 
 def _zoomed(plan, zoom):
