@@ -1,4 +1,4 @@
-"""Two plans side by side in words: what differs in a sentence, each finding as better or worse, verdicts that flipped."""
+"""Two plans side by side in words: how many inputs differ, each finding as better or worse, verdicts that flipped."""
 
 from pycore.differences import differing_inputs, judged_changes, verdicts_differ
 from pycore.remembered import findings_of
@@ -106,10 +106,8 @@ def _what(inputs):
     """Name the first inputs that changed, each from what to what."""
     if not inputs:
         return 'nothing differs'
-    named = [
-        f'{_small(one["label"])} {from_to(one["other"] or "none", one["plan"] or "none")}'
-        for one in inputs[:_MOST_NAMED]
-    ]
+    ends = [(one['label'], one['other'] or 'none', one['plan'] or 'none') for one in inputs[:_MOST_NAMED]]
+    named = [f'{_small(label)} {from_to(before, after)}' for label, before, after in ends]
     more = len(inputs) - _MOST_NAMED
     return '; '.join([*named, *([f'{count_word(more)} more {plural(more, "input")}'] if more > 0 else [])])
 

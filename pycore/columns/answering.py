@@ -4,6 +4,7 @@ import numpy as np
 
 from pycore.columns.blind_parts import gaps
 from pycore.columns.named import names_at
+from pycore.crossings import clear_speeds
 from pycore.wording import THIN_SPACE, percent, significant, trimmed, with_unit
 
 LOWEST_DB, HIGHEST_DB = -50.0, 10.0
@@ -27,6 +28,7 @@ def nothing():
     empty = np.zeros(0)
     return {
         'response': {'x': empty, 'y': empty},
+        'kept-response': {'x': empty, 'y': empty},
         'threshold': {'x0': empty, 'x1': empty, 'y': empty},
         'below': {'y': empty, 'left': empty, 'right': empty, 'height': empty},
         'speeds': {'x': empty, 'y0': empty, 'y1': empty},
@@ -34,7 +36,7 @@ def nothing():
     }
 
 
-def picture(computed, axis):
+def picture(computed, axis, kept=None):
     """Return columns, ranges, ticks and words of a stagger's response.
 
     Parameters
@@ -43,6 +45,8 @@ def picture(computed, axis):
         What the plan gives. [SI]
     axis : Axis
         Of radial speed. [m/s]
+    kept : Computed or None
+        What the kept plan gives. [SI]
 
     Returns
     -------
@@ -55,8 +59,8 @@ def picture(computed, axis):
     step = 10 if high - low <= 80 else 20
     at = list(range(int(np.ceil(low / step)) * step, int(high) + 1, step))
     return {
-        **_words(computed, axis, least),
-        'columns': _columns(computed, axis, least, low, high),
+        **_words(computed, axis, least, kept),
+        'columns': {**_columns(computed, axis, least, low, high), 'kept-response': _kept_curve(kept, axis, low)},
         'ranges': {'x': axis.ends, 'y': [low, high]},
         'labels': {'x': axis.label, 'y': 'response (dB)'},
         'ticks': {'y': {'at': [float(value) for value in at], 'text': [significant(float(value), 2) for value in at]}},
@@ -80,6 +84,14 @@ def _columns(computed, axis, least, low, high):
         },
         **_marked(computed, axis, least, low, high),
     }
+
+
+def _kept_curve(kept, axis, low):
+    """Return the kept stagger's response over the same speeds; none where the kept plan is a set of dwells."""
+    if kept is None or not kept.is_stagger:
+        return {'x': np.zeros(0), 'y': np.zeros(0)}
+    speeds = _sampled(kept.response, axis.limits)
+    return {'x': axis.shown(speeds), 'y': np.maximum(kept.response.response.decibels(speeds), low - 10.0)}
 
 
 def _sampled(found, limits):
@@ -121,17 +133,35 @@ def _marked(computed, axis, least, low, high):
     }
 
 
-def _words(computed, axis, least):
+def _words(computed, axis, least, kept):
     found, limit = computed.response, f'{trimmed(least)}{THIN_SPACE}dB'
     sentences = [_first_fall(found, axis, limit), _repeat(found, axis), *_deepest(found, axis)]
     share = f'{percent(found.share_above)} of the speeds, {axis.span()}, stand at or above {limit}.'
+    said = ' '.join([*sentences, share, *_dashed(kept, axis)])
     return {
-        'caption': ' '.join([*sentences, share]),
+        'caption': said,
         'short': sentences[0],
-        'summary': f'Response of the stagger in decibels over the radial speed, {axis.span()}. '
-        + ' '.join([*sentences, share]),
-        'table': _table(computed, axis),
+        'summary': f'Response of the stagger in decibels over the radial speed, {axis.span()}. {said}',
+        'table': _table(computed, axis, kept),
     }
+
+
+def _dashed(kept, axis):
+    """Say what the dashed curve is, and what it reaches over the same speeds."""
+    if kept is None:
+        return []
+    if not kept.is_stagger:
+        return ['The kept plan is a set of dwells and has no response.']
+    blind = _too_low(kept, axis)
+    share = 1.0 - float((blind.stop - blind.start).sum()) / (axis.limits[1] - axis.limits[0])
+    least = f'{trimmed(kept.plan.response_min_db)}{THIN_SPACE}dB'
+    return [f'Dashed: the kept plan, at or above {least} over {percent(share)} of the same speeds.']
+
+
+def _too_low(computed, axis):
+    """Return the speeds of an axis at which a stagger's response is too low."""
+    clear = clear_speeds(computed.response.response, computed.plan.response_min_db, axis.limits)
+    return gaps(clear, 1, axis.limits)
 
 
 def _first_fall(found, axis, limit):
@@ -156,9 +186,17 @@ def _deepest(found, axis):
     return [f'The deepest dip is {with_unit(found.deepest_db, "dB")} at {axis.text(found.deepest_at_m_s)}.']
 
 
-def _table(computed, axis):
-    """Return the speeds at which the response is too low."""
-    blind = gaps(computed.response.clear_speeds, 1, axis.limits)
+def _table(computed, axis, kept):
+    """Return the speeds at which the response is too low, and those of the kept plan after them."""
+    rows = _rows(computed, axis)
+    head = [f'Response too low from ({axis.unit})', f'to ({axis.unit})']
+    if kept is None or not kept.is_stagger:
+        return {'head': head, 'rows': rows}
+    both = [*(['this plan', *row] for row in rows), *(['kept plan', *row] for row in _rows(kept, axis))]
+    return {'head': ['Plan', *head], 'rows': both}
+
+
+def _rows(computed, axis):
+    blind = _too_low(computed, axis)
     pairs = zip(axis.shown(blind.start).tolist(), axis.shown(blind.stop).tolist(), strict=True)
-    rows = [[significant(start, 4), significant(stop, 4)] for start, stop in pairs]
-    return {'head': [f'Response too low from ({axis.unit})', f'to ({axis.unit})'], 'rows': rows}
+    return [[significant(start, 4), significant(stop, 4)] for start, stop in pairs]

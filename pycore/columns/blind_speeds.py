@@ -2,14 +2,18 @@
 
 Sources: for dwells ``lanes``, ``notches`` (of each PRF), ``unseen`` (clear on fewer
 than M); for a stagger ``response``, ``threshold``, ``below`` (where the response is
-too low), ``speeds`` (marked speeds) and their names; ``target``. Those of the other kind are empty.
+too low), ``speeds`` (marked speeds) and their names; of the kept plan ``kept-lanes``,
+``kept-blind`` and ``kept-unseen``, or ``kept-response``; ``target``. Those of the other kind are empty.
 """
+
+from functools import partial
 
 import numpy as np
 
 from pycore.columns import answering
 from pycore.columns.axes import speed_axis
 from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
+from pycore.columns.kept_lanes import NO_LANES, beside
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import looks
 from pycore.columns.mark import across
@@ -20,6 +24,7 @@ from pycore.wording import THIN_SPACE, listed, percent, significant
 
 NAME, TITLE = 'blind-speeds', 'Blind speeds'
 
+_KEPT_AT = -0.41
 _NO_BARS = {'y': np.zeros(0), 'left': np.zeros(0), 'right': np.zeros(0)}
 
 
@@ -43,31 +48,33 @@ def picture(computed, units, size=None, view=WHOLE):
         Columns, ranges, labels, ticks and words.
     """
     axis = speed_axis(computed.plan.speed_m_s, units)
-    answer = _of_stagger(computed, axis) if computed.is_stagger else _of_dwells(computed, axis, units)
+    of_kind = _of_stagger if computed.is_stagger else _of_dwells
+    answer = of_kind(computed, axis, units, view.kept)
     answer['columns']['target'] = across(view.mark and view.mark.speed_m_s, axis, answer['ranges']['y'])
     return answer
 
 
-def _of_stagger(computed, axis):
-    answer = answering.picture(computed, axis)
-    answer['columns'] |= {'lanes': _NO_BARS, 'notches': _NO_BARS, 'unseen': _NO_BARS}
+def _of_stagger(computed, axis, units, kept):
+    answer = answering.picture(computed, axis, kept)
+    answer['columns'] |= {'lanes': _NO_BARS, 'notches': _NO_BARS, 'unseen': _NO_BARS, **NO_LANES}
     return {'title': TITLE, **answer, 'units': {'x': axis.unit}}
 
 
-def _of_dwells(computed, axis, units):
+def _of_dwells(computed, axis, units, kept):
     plan = computed.plan
     names = prf_names(plan, units)
     notches = gaps(computed.prf_speeds, plan.n, plan.speed_m_s)
     unseen = zones(computed.speed_sweep, plan.n, plan.m)
     counted = f'{plan.m} of {plan.n}' if plan.n > 1 else None
+    thin = beside(computed, kept, 1, axis, plan.n > 1, _KEPT_AT)
     return {
         'title': TITLE,
-        **_words(computed, axis, names, notches, unseen),
-        'columns': {**_lanes(plan, axis, notches, unseen), **answering.nothing()},
-        'ranges': {'x': axis.ends, 'y': lane_range(plan.n, plan.n > 1)},
+        **_words(computed, axis, names, notches, unseen, thin, units),
+        'columns': {**_lanes(plan, axis, notches, unseen), **thin.columns, **answering.nothing()},
+        'ranges': {'x': axis.ends, 'y': thin.lower(lane_range(plan.n, plan.n > 1))},
         'labels': {'x': axis.label, 'y': ''},
         'units': {'x': axis.unit},
-        'ticks': {'y': lane_ticks(names, counted)},
+        'ticks': {'y': thin.ticks(lane_ticks(names, counted))},
     }
 
 
@@ -81,17 +88,18 @@ def _lanes(plan, axis, notches, unseen):
     }
 
 
-def _words(computed, axis, names, notches, unseen):
+def _words(computed, axis, names, notches, unseen, thin, units):
     said = looks(computed.looks, computed.m, 'blind')
     found, floor = avoidable(computed.sight, 1)
     where = 'outside the notch around zero' if len(floor) else ''
     everywhere, whole = within(notches, floor, axis.limits), outside(axis.limits, floor)
     first = zones_sentence(found, axis, 'speed', said, everywhere, whole, where)
+    against = thin.sentences(unseen)
     return {
-        'caption': f'{first} {_first_blind_speeds(computed, axis)}',
+        'caption': ' '.join([first, _first_blind_speeds(computed, axis), *against]),
         'short': first,
-        'summary': _summary(computed, axis, names, unseen),
-        'table': _table(computed, axis, names, notches),
+        'summary': ' '.join([_summary(computed, axis, names, unseen), *against]),
+        'table': thin.table(_table(computed, axis, names, notches), partial(_rows, axis), units),
     }
 
 
@@ -130,24 +138,18 @@ def _summary(computed, axis, names, unseen):
 
 def _table(computed, axis, names, notches):
     """Return one row for each PRF: first blind speed, Nyquist speed, what it loses, and its blind speeds."""
-    rows = []
+    head = ['PRF', f'First blind speed ({axis.unit})', f'Nyquist speed ({axis.unit})', 'Blind', 'Blind speeds']
+    return {'head': head, 'rows': _rows(axis, computed, names, notches)}
+
+
+def _rows(axis, computed, names, notches):
+    rows, whole = [], axis.limits[1] - axis.limits[0]
     for prf, name in enumerate(names):
         start, stop = notches.of(prf)
         found = [axis.interval(*zone) for zone in zip(start[:6].tolist(), stop[:6].tolist(), strict=True)]
         more = [f'{start.size - 6} more'] if start.size > 6 else []
         blind = float(axis.shown(computed.blind_speed_m_s[prf]))
-        lost = percent(float(computed.notched_shares[prf]))
-        rows.append(
-            [
-                name,
-                significant(blind),
-                f'±{THIN_SPACE}{significant(blind / 2)}',
-                lost,
-                '; '.join(found + more) or 'none',
-            ]
-        )
-    unit = axis.unit
-    return {
-        'head': ['PRF', f'First blind speed ({unit})', f'Nyquist speed ({unit})', 'Blind', 'Blind speeds'],
-        'rows': rows,
-    }
+        lost = percent(float((stop - start).sum()) / whole)
+        nyquist = f'±{THIN_SPACE}{significant(blind / 2)}'
+        rows.append([name, significant(blind), nyquist, lost, '; '.join(found + more) or 'none'])
+    return rows

@@ -1,7 +1,8 @@
 """Figure: the number of clear PRFs over range and radial speed.
 
-Sources: ``map`` (classes, see :mod:`pycore.columns.classes`), ``regions`` and
-``region-names`` (must-see), ``holes`` (their numbers), ``target`` (the followed one). The colours of the classes
+Against a kept plan: only what is lost and gained. Sources: ``map`` (classes, see
+:mod:`pycore.columns.classes`), ``regions`` and ``region-names`` (must-see), ``holes`` (their
+numbers), ``target`` (the followed one). The colours of the classes
 belong to the page, so that only its palette changes with its scheme.
 """
 
@@ -9,7 +10,9 @@ import numpy as np
 
 from pycore import zones
 from pycore.columns.axes import range_axis, speed_axis
-from pycore.columns.classes import classes
+from pycore.columns.classes import changes, classes
+from pycore.columns.compared_words import compared_words
+from pycore.columns.kept import sight_over
 from pycore.columns.mark import ring
 from pycore.columns.named import names_at
 from pycore.columns.view import WHOLE, shown_part
@@ -50,17 +53,48 @@ def picture(computed, units, size=None, view=WHOLE):
     """
     whole = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)
     x, y = part = view.part(NAME, *whole)
+    if view.kept is not None:
+        return _compared(computed, view, whole, part, size or SIZE)
     count, blind, with_clutter = _counted(computed, part, size or SIZE)
     numbers, boxes = _numbers(computed, x, y, blind)
-    return {
-        'title': TITLE,
-        **words(computed, *whole, shown_part(*whole, part)),
-        'columns': {
+    return _figure(
+        part,
+        words(computed, *whole, shown_part(*whole, part)),
+        {
             'map': {'image': classes(count, computed.looks, computed.m, with_clutter), **_frame(x, y)},
             **_regions(computed, x, y),
             'holes': numbers,
             'target': ring(view.mark, x, y),
         },
+        boxes,
+    )
+
+
+def _compared(computed, view, whole, part, size):
+    """Return the figure of what is lost and gained: must-see regions and the target stay, holes have no number."""
+    x, y = part
+    at = [zones.centres(axis.limits, cells) for axis, cells in zip(part, _cells_for(size), strict=True)]
+    other = sight_over(view.kept, computed.plan)
+    seen, kept = (zones.count_map(one.ranges, one.speeds, *at) >= one.m for one in (computed.sight, other))
+    return _figure(
+        part,
+        compared_words(computed, view.kept, *whole, shown_part(*whole, part)),
+        {
+            'map': {'image': changes(seen, kept), **_frame(x, y)},
+            **_regions(computed, x, y),
+            'holes': names_at([], [], [], []),
+            'target': ring(view.mark, x, y),
+        },
+        [],
+    )
+
+
+def _figure(part, said, columns, boxes):
+    x, y = part
+    return {
+        'title': TITLE,
+        **said,
+        'columns': columns,
         'ranges': {'x': x.ends, 'y': y.ends},
         'labels': {'x': x.label, 'y': y.label},
         'units': {'x': x.unit, 'y': y.unit},

@@ -12,7 +12,11 @@ import numpy as np
 NONE, NONE_HATCH, TOO_FEW, TOO_FEW_EDGE, JUST_ENOUGH, MORE, ALL, DOT = range(8)
 """Clear on none; its hatch; on too few; their edge; on exactly M; on more; on all N; under clutter. [unitless]"""
 
+LOST, LOST_HATCH, GAINED, GAINED_DOT, STILL_BLIND = range(8, 13)
+"""Against a kept plan: seen only by it, and its cross-hatching; seen only now, and its dots; by neither. [unitless]"""
+
 NAMES = ('none', 'none-hatch', 'too-few', 'too-few-edge', 'just-enough', 'more', 'all', 'dot')
+NAMES += ('lost', 'lost-hatch', 'gained', 'gained-dot', 'still-blind')
 """The classes' names, in the order of their codes. [unitless]"""
 
 PITCH = 7
@@ -22,6 +26,8 @@ DOT_PITCH = 12
 """Distance of the dots along a row and between every second row. [px]"""
 
 _DOT = 2
+_CROSS_PITCH = 8
+_GAINED_PITCH = 8
 
 
 @lru_cache
@@ -67,6 +73,37 @@ def classes(count, n, m, with_clutter=None):
         lost = (with_clutter < m) & ~blind
         code[lost & _dots(count.shape)] = DOT
     return code
+
+
+def changes(seen, kept):
+    """Return the class of every cell against a kept plan: only what differs is marked.
+
+    Parameters
+    ----------
+    seen, kept : bool array, shape (V, R)
+        Whether the present plan sees the cell, and whether the kept one does. [unitless]
+
+    Returns
+    -------
+    code : uint8 array, shape (V, R)
+        Index into ``NAMES``: ``lost`` cross-hatched, ``gained`` dotted, ``still-blind``, and ``all`` for the rest.
+    """
+    code = np.full(seen.shape, ALL, dtype=np.uint8)
+    code[~seen & ~kept] = STILL_BLIND
+    lost, gained = kept & ~seen, seen & ~kept
+    cross, dots = _marks(seen.shape)
+    code[lost], code[gained] = LOST, GAINED
+    code[lost & cross], code[gained & dots] = LOST_HATCH, GAINED_DOT
+    return code
+
+
+@lru_cache(maxsize=4)
+def _marks(shape):
+    """Return two lattices: lines at 45 degrees both ways, and dots, every second row of them moved by half a step."""
+    row, column = np.arange(shape[0])[:, None], np.arange(shape[1])
+    cross = ((row + column) % _CROSS_PITCH == 0) | ((row - column) % _CROSS_PITCH == 0)
+    moved = column + (row // (_GAINED_PITCH // 2)) % 2 * (_GAINED_PITCH // 2)
+    return cross, (row % (_GAINED_PITCH // 2) < _DOT) & (moved % _GAINED_PITCH < _DOT)
 
 
 @lru_cache(maxsize=4)

@@ -3,10 +3,11 @@
 The y axis is the radial speed; the curves lie in a strip under the map, on ticks of
 their own. Sources: ``map`` (steps of probability), ``frame`` (around the map and the
 strip), ``wanted`` (the wanted probability), ``best``, ``median``, ``worst`` (curves),
-``names``, ``heading`` (of the strip), ``target``.
+``kept`` (the kept plan's median), ``names``, ``heading`` (of the strip), ``target``.
 """
 
 from dataclasses import dataclass
+from functools import lru_cache
 
 import numpy as np
 
@@ -91,11 +92,12 @@ def picture(computed, units, size=None, view=WHOLE):
     found = probabilities(computed, size or SIZE, part)
     return {
         'title': TITLE,
-        **words(computed, *whole, found, shown_part(*whole, part)),
+        **words(computed, *whole, found, shown_part(*whole, part), view.kept),
         'marked': marked(view.mark),
         'columns': {
             'map': {'image': _classes(found, wanted), **_frame(x, y)},
             **_strip_of(computed, x, strip, wanted),
+            'kept': _kept(view.kept, x, strip),
             'frame': _frames(x, y, strip),
             'target': ring(view.mark, x, y),
         },
@@ -186,6 +188,20 @@ def _strip_of(computed, x, strip, wanted):
         ),
         'heading': names_at([left], [strip.high], ['probability of detection'], ['bottom_left'], -2.0, -3.0),
     }
+
+
+def _kept(kept, x, strip):
+    """Return the kept plan's curve at its median speed."""
+    curve = None if kept is None else _median(kept, tuple(x.limits))
+    if curve is None:
+        return {'x': np.zeros(0), 'y': np.zeros(0)}
+    return {'x': x.shown(np.linspace(*x.limits, _POINTS)), 'y': strip.at(curve)}
+
+
+@lru_cache(maxsize=2)
+def _median(kept, limits):
+    """Return the probability along the range at the median speed, kept while neither the plan nor the range changes."""
+    return curves_of(kept, np.linspace(*limits, _POINTS)).get('median')
 
 
 def _name(name, at, curve, x):

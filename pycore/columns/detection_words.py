@@ -5,9 +5,10 @@ import numpy as np
 from pycore.wording import capitalised, percent, significant, trimmed
 
 _LEAST = 0.0005
+_SPEEDS = {'best': 'Best speed', 'median': 'Half of the speeds', 'worst': 'Worst speed'}
 
 
-def words(computed, x, y, found, also=()):
+def words(computed, x, y, found, also=(), kept=None):
     """Return caption, short caption, summary and table of detection.
 
     Parameters
@@ -20,6 +21,8 @@ def words(computed, x, y, found, also=()):
         Probability in every cell that is shown of the map. [unitless]
     also : sequence of str
         Sentences that end the caption: which part of the map is shown. [unitless]
+    kept : Computed or None
+        What the kept plan gives. [SI]
 
     Returns
     -------
@@ -27,13 +30,25 @@ def words(computed, x, y, found, also=()):
         caption, short, summary, table.
     """
     first = _reached(computed, x)
-    rest = [_curves(computed), _key(computed), *also]
+    against = _against(kept, x)
+    rest = [_curves(computed), _key(computed), *against, *also]
     return {
         'caption': ' '.join([first, *rest]),
         'short': first,
-        'summary': ' '.join([_shares(computed, x, y, found, bool(also)), first, *also]),
-        'table': _table(computed, x),
+        'summary': ' '.join([_shares(computed, x, y, found, bool(also)), first, *against, *also]),
+        'table': _table(computed, x, kept),
     }
+
+
+def _against(kept, x):
+    """Say what the long dashes are, and how far the kept plan reaches at half of its speeds."""
+    if kept is None:
+        return []
+    reached = kept.echoes.reached_km()['median']
+    lead = 'Long dashes: the kept plan at its median speed'
+    if reached is None:
+        return [f'{lead}, which does not reach probability {_wanted(kept)}.']
+    return [f'{lead}, with probability {_wanted(kept)} to {x.text(reached * 1e3)}.']
 
 
 def _wanted(computed):
@@ -99,12 +114,16 @@ def _shares(computed, x, y, found, cut):
     )
 
 
-def _table(computed, x):
-    """Return the ranges of the best, the median and the worst speed."""
-    names = {'best': 'Best speed', 'median': 'Half of the speeds', 'worst': 'Worst speed'}
-    reached = computed.echoes.reached_km()
-    rows = [
-        [text, 'not reached' if reached[name] is None else significant(x.shown(reached[name] * 1e3))]
-        for name, text in names.items()
-    ]
-    return {'head': ['Speed', f'Range at probability {_wanted(computed)} ({x.unit})'], 'rows': rows}
+def _table(computed, x, kept):
+    """Return the ranges of the best, the median and the worst speed, and those of the kept plan beside them."""
+    plans = [computed] if kept is None else [computed, kept]
+    reached = [one.echoes.reached_km() for one in plans]
+    rows = [[text, *(_range(x, one[name]) for one in reached)] for name, text in _SPEEDS.items()]
+    wanted = [f'Range at probability {_wanted(one)} ({x.unit})' for one in plans]
+    if kept is not None:
+        wanted[1] = f'Kept plan: {wanted[1][:1].lower()}{wanted[1][1:]}'
+    return {'head': ['Speed', *wanted], 'rows': rows}
+
+
+def _range(x, reached_km):
+    return 'not reached' if reached_km is None else significant(x.shown(reached_km * 1e3))

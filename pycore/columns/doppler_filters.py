@@ -4,16 +4,20 @@ One lane for each PRF, or for one of many; levels in dB above the noise of a fil
 Sources: ``lanes``, ``notch`` (bars along the foot of a lane), ``noise`` (0 dB),
 ``ground`` and ``rain`` (as a filter steered there passes them) with ``clutter-edge``,
 ``lobes`` (every filter outside the notch), ``filter`` (the one that hears the target
-best, whole), ``names``, ``target`` (its apparent speed) and ``level`` (its level in that
-filter). Of a stagger: its canceller over the true speed.
+best, whole), ``kept-filter`` (that of the kept plan), ``names``,
+``target`` (its apparent speed) and ``level`` (its level in that filter). Of a stagger: its
+canceller over the true speed.
 """
+
+from functools import lru_cache
 
 import numpy as np
 
 from pycore.columns.axes import speed_axis
 from pycore.columns.filter_lanes import lanes
 from pycore.columns.filter_words import words
-from pycore.columns.mark import upright
+from pycore.columns.kept import is_alike
+from pycore.columns.mark import Mark, upright
 from pycore.columns.named import names_at
 from pycore.columns.prf_names import prf_names
 from pycore.columns.view import WHOLE
@@ -74,14 +78,16 @@ def picture(computed, units, size=None, view=WHOLE):
     )
     names = prf_names(computed.plan, units)
     names = [names[lane.prf] for lane in heard]
-    scale = _Scale(len(heard), _top(heard))
+    others = _kept_lanes(view.kept, computed, heard, view.mark)
+    scale = _Scale(len(heard), _top([*heard, *others.values()]))
     return {
         'title': TITLE,
-        **words(computed, heard, axis, names, view.mark),
+        **words(computed, heard, axis, names, view.mark, None if view.kept is None else len(others)),
         'columns': {
             **_grounds(heard, axis, scale),
             **_clutter(computed, heard, axis, scale),
             **_filters(heard, axis, scale, size['width']),
+            'kept-filter': _kept_filters(others, axis, scale),
             'names': _names(computed, heard, axis, scale, names),
             **_target(heard, axis, scale),
         },
@@ -90,6 +96,30 @@ def picture(computed, units, size=None, view=WHOLE):
         'units': {'x': axis.unit},
         'ticks': {'y': _ticks(scale, size['height'])},
     }
+
+
+def _kept_lanes(kept, computed, heard, mark):
+    """Return the kept plan's lanes by the place of the lane that each belongs into."""
+    if kept is None or not is_alike(computed, kept):
+        return {}
+    found = {lane.prf: lane for lane in _heard_of(kept, None if mark is None else (mark.range_m, mark.speed_m_s))}
+    return {place: found[lane.prf] for place, lane in enumerate(heard) if lane.prf in found}
+
+
+@lru_cache(maxsize=2)
+def _heard_of(kept, target):
+    """Return the kept plan's lanes, worked out once for a target."""
+    return lanes(kept, None if target is None else Mark(kept, *target))
+
+
+def _kept_filters(others, axis, scale):
+    """Return the filters of the kept plan that match the whole ones, cut to the axis."""
+    courses = []
+    for place, lane in others.items():
+        inside = (lane.speed_m_s >= axis.limits[0]) & (lane.speed_m_s <= axis.limits[1])
+        if np.isfinite(lane.filter).all():
+            courses.append((axis.shown(lane.speed_m_s[inside]), scale.at(place, lane.filter[inside])))
+    return _joined(courses)
 
 
 def _top(heard):

@@ -4,7 +4,8 @@ One lane along the time from the set's first pulse. Sources: ``time`` (what the 
 gives), ``fill`` and ``counted`` (pulses sent ahead, and those that count), ``over``
 (beyond the time on target), ``again`` (further sets that fit), ``pulses`` (each one,
 where there is room), ``names`` (in the CPIs that have room), ``end`` and ``end-name``
-(the time on target), ``target`` (the CPIs that see the followed one).
+(the time on target), ``kept-fill`` and ``kept-counted`` (the kept plan's set), ``target`` (the
+CPIs that see the followed one).
 """
 
 import numpy as np
@@ -24,6 +25,10 @@ LANE = 0.3, 0.72
 WIDTH_PX = 560
 """Width of the plot where the page has not said it. [px]"""
 
+KEPT_LANE = -0.17, -0.06
+"""Lower and upper end of the thin lane of a kept plan. [unitless]"""
+
+_LOWEST_WITH_KEPT = -0.24
 _PULSES = 0.08, 0.22
 _TARGET_AT, _NAME_AT = LANE[0], 0.98
 _MARGIN = 0.004
@@ -52,25 +57,34 @@ def picture(computed, units, size=None, view=WHOLE):
     """
     cpis = timed(computed)
     given = computed.plan.time_on_target_s
-    axis = time_axis(max(float(cpis.stop_s[-1]), given or 0.0))
-    names = prf_names(computed.plan, units)
-    names = ['stagger'] if computed.is_stagger else names
+    others = None if view.kept is None else timed(view.kept)
+    ends = [cpis.stop_s[-1], given or 0.0, *([] if others is None else [others.stop_s[-1]])]
+    axis = time_axis(float(max(ends)))
+    names = _names_of(computed, units)
     px_per_s = (size or {}).get('width', WIDTH_PX) / axis.limits[1]
     return {
         'title': TITLE,
-        **words(computed, cpis, axis, names, view.mark),
+        **words(computed, cpis, axis, names, view.mark, view.kept and (view.kept, others, _names_of(view.kept, units))),
         'columns': {
             **_bars(cpis, axis, given),
+            **_kept(others, axis),
             'pulses': _pulses(computed, axis, px_per_s),
             'names': _names(cpis, axis, names, px_per_s),
             **_end(axis, given),
             'target': _seeing(cpis, axis, view.mark),
         },
-        'ranges': {'x': [-_MARGIN * axis.ends[1], (1.0 + _MARGIN) * axis.ends[1]], 'y': [0.0, 1.0]},
+        'ranges': {
+            'x': [-_MARGIN * axis.ends[1], (1.0 + _MARGIN) * axis.ends[1]],
+            'y': [0.0 if others is None else _LOWEST_WITH_KEPT, 1.0],
+        },
         'labels': {'x': axis.label, 'y': ''},
         'units': {'x': axis.unit},
         'ticks': {'y': {'at': [], 'text': []}},
     }
+
+
+def _names_of(computed, units):
+    return ['stagger'] if computed.is_stagger else prf_names(computed.plan, units)
 
 
 def timed(computed):
@@ -127,6 +141,15 @@ def _bars(cpis, axis, given):
         'over': _bar(axis.shown(over), axis.shown(used)),
         'again': _bar(axis.shown(again), axis.shown(again + used)),
     }
+
+
+def _kept(cpis, axis):
+    """Return the parts of the thin lane of a kept plan."""
+    if cpis is None:
+        return {'kept-fill': _bar([], []), 'kept-counted': _bar([], [])}
+    start, counted, stop = (axis.shown(edge) for edge in (cpis.start_s, cpis.counted_s, cpis.stop_s))
+    some = counted > start
+    return {'kept-fill': _bar(start[some], counted[some]), 'kept-counted': _bar(counted, stop)}
 
 
 def _bar(left, right):

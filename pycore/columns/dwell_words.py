@@ -7,7 +7,7 @@ _FITS = 1e-9
 """Part of the time on target that is left to rounding. [unitless]"""
 
 
-def words(computed, cpis, axis, names, mark=None):
+def words(computed, cpis, axis, names, mark=None, kept=None):
     """Return caption, short caption, summary and table of the dwell.
 
     Parameters
@@ -22,21 +22,26 @@ def words(computed, cpis, axis, names, mark=None):
         The CPIs' names. [unitless]
     mark : Mark or None
         The target that is followed. [m, m/s]
+    kept : tuple or None
+        What the kept plan gives, when its CPIs are sent, and their names. [SI, s, unitless]
 
     Returns
     -------
     words : dict
         caption, short, summary, table.
     """
-    first, *rest = [_taken(computed, cpis, axis), _fill(cpis, axis), *_ringed(computed, mark)]
+    first, *rest = [_taken(computed, cpis, axis), _fill(cpis, axis), *_ringed(computed, mark), *_thin(cpis, axis, kept)]
     said = ' '.join([first, *rest])
     count = len(names)
+    table = _table(computed, cpis, axis, names)
+    if kept:
+        table['rows'] += _table(kept[0], kept[1], axis, [f'kept: {name}' for name in kept[2]])['rows']
     return {
         'caption': said,
         'short': first,
         'summary': f'The {count_word(count)} {plural(count, "CPI")} of one set along the time from its first pulse. '
         f'{said}',
-        'table': _table(computed, cpis, axis, names),
+        'table': table,
     }
 
 
@@ -78,6 +83,17 @@ def _ringed(computed, mark):
     if not count:
         return ['No CPI sees the target.']
     return [f'Ringed: the {plural(count, "CPI")} that {plural(count, "sees", "see")} the target.']
+
+
+def _thin(cpis, axis, kept):
+    """Say what the thin lane is, and how much longer or shorter its set takes."""
+    if kept is None:
+        return []
+    used, then = float(cpis.stop_s[-1]), float(kept[1].stop_s[-1])
+    if abs(then - used) <= _FITS * used:
+        return ['Thin, below: the kept plan, which takes as long.']
+    much = axis.text(abs(then - used))
+    return [f'Thin, below: the kept plan, {axis.text(then)}, {much} {"longer" if then > used else "shorter"}.']
 
 
 def _table(computed, cpis, axis, names):

@@ -2,13 +2,17 @@
 
 Sources: ``lanes`` (a bar along each lane), ``eclipsed`` (on each PRF), ``unseen``
 (on fewer than M), ``received`` (the received share, its area and its edge) with
-``least`` (what counts as clear), ``target``.
+``least`` (what counts as clear); ``kept-lanes``, ``kept-blind`` and ``kept-unseen`` (of the
+kept plan, in place of the share); ``target``.
 """
+
+from functools import partial
 
 import numpy as np
 
 from pycore.columns.axes import range_axis
 from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
+from pycore.columns.kept_lanes import beside
 from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import cycle_looks, looks
 from pycore.columns.mark import across
@@ -27,6 +31,7 @@ SHARED, ALONE = 0.34, 0.62
 """Height of a bar that has the share under it, and of one that has not. [lanes]"""
 
 _BAR_AT = 0.26
+_KEPT_AT = -0.41
 
 
 def picture(computed, units, size=None, view=WHOLE):
@@ -53,19 +58,22 @@ def picture(computed, units, size=None, view=WHOLE):
     eclipsed = gaps(computed.prf_ranges, plan.n, plan.range_m)
     unseen = zones(computed.range_sweep, computed.looks, computed.m)
     counted = None if plan.n == 1 else 'all intervals' if computed.is_stagger else f'{plan.m} of {plan.n}'
-    lanes, size = lane_range(plan.n, counted is not None), size or SIZE
-    shared = is_legible(plan, axis, size['width'])
+    thin, size = beside(computed, view.kept, 0, axis, counted is not None, _KEPT_AT), size or SIZE
+    lanes = thin.lower(lane_range(plan.n, counted is not None))
+    shared = view.kept is None and is_legible(plan, axis, size['width'])
+    ticks = _ticks(plan.n, lane_ticks(names, counted), lanes, size['height'] if shared else 0.0)
     return {
         'title': TITLE,
-        **_words(computed, axis, names, eclipsed, unseen, shared),
+        **_words(computed, axis, names, eclipsed, unseen, shared, thin, units),
         'columns': {
             **_columns(computed, axis, eclipsed, unseen, counted is not None, shared),
+            **thin.columns,
             'target': across(view.mark and view.mark.range_m, axis, lanes),
         },
         'ranges': {'x': axis.ends, 'y': lanes},
         'labels': {'x': axis.label, 'y': 'under each lane: received share of the echo' if shared else ''},
         'units': {'x': axis.unit},
-        'ticks': {'y': _ticks(plan.n, lane_ticks(names, counted), lanes, size['height'] if shared else 0.0)},
+        'ticks': {'y': thin.ticks(ticks)},
     }
 
 
@@ -94,7 +102,7 @@ def _columns(computed, axis, eclipsed, unseen, with_top, shared):
     return {**found, **received(computed.plan, axis, shared)}
 
 
-def _words(computed, axis, names, eclipsed, unseen, shared):
+def _words(computed, axis, names, eclipsed, unseen, shared, thin, units):
     said = cycle_looks() if computed.is_stagger else looks(computed.looks, computed.m, 'eclipsed')
     found, floor = avoidable(computed.sight, 0)
     where, whole, everywhere = _beyond(floor, axis), outside(axis.limits, floor), within(eclipsed, floor, axis.limits)
@@ -104,12 +112,12 @@ def _words(computed, axis, names, eclipsed, unseen, shared):
         sentences += _beyond_the_cycle(computed, axis)
     elif computed.plan.n > 1 and not everywhere:
         sentences += _worst(computed, names)
-    sentences.append(share_sentence(computed.plan, shared))
+    sentences += thin.sentences(unseen) if thin.kept else [share_sentence(computed.plan, shared)]
     return {
         'caption': ' '.join(sentences),
         'short': sentences[0],
-        'summary': _summary(computed, axis, names, eclipsed, unseen),
-        'table': _table(computed, axis, names, eclipsed),
+        'summary': ' '.join([_summary(computed, axis, names, eclipsed, unseen), *thin.sentences(unseen)]),
+        'table': thin.table(_table(computed, axis, names, eclipsed), partial(_rows, axis), units),
     }
 
 
@@ -164,12 +172,17 @@ def _summary(computed, axis, names, eclipsed, unseen):
 
 def _table(computed, axis, names, eclipsed):
     """Return one row for each PRF: its unambiguous range, what it loses, and its zones."""
-    rows = []
+    head = ['PRF', f'Unambiguous range ({axis.unit})', 'Eclipsed', 'Eclipsed ranges']
+    return {'head': head, 'rows': _rows(axis, computed, names, eclipsed)}
+
+
+def _rows(axis, computed, names, eclipsed):
+    rows, whole = [], axis.limits[1] - axis.limits[0]
     for prf, name in enumerate(names):
         start, stop = eclipsed.of(prf)
         found = [axis.interval(*zone) for zone in zip(start[:6].tolist(), stop[:6].tolist(), strict=True)]
         more = [f'{start.size - 6} more'] if start.size > 6 else []
         reach = significant(float(axis.shown(computed.unambiguous_range_m[prf])))
-        lost = percent(float(computed.eclipsed_shares[prf]))
+        lost = percent(float((stop - start).sum()) / whole)
         rows.append([name, reach, lost, '; '.join(found + more) or 'none'])
-    return {'head': ['PRF', f'Unambiguous range ({axis.unit})', 'Eclipsed', 'Eclipsed ranges'], 'rows': rows}
+    return rows

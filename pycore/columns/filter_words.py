@@ -5,7 +5,7 @@ import math
 from pycore.wording import THIN_SPACE, capitalised, count_word, listed, percent, plural, significant, with_unit
 
 
-def words(computed, heard, axis, names, mark=None):
+def words(computed, heard, axis, names, mark=None, kept=None):
     """Return caption, short caption, summary and table of the Doppler filters.
 
     Parameters
@@ -20,6 +20,8 @@ def words(computed, heard, axis, names, mark=None):
         Names of the PRFs that have a lane. [unitless]
     mark : Mark or None
         The target that is followed. [m, m/s]
+    kept : int or None
+        How many lanes show a filter of the kept plan; none where nothing is kept. [unitless]
 
     Returns
     -------
@@ -28,6 +30,7 @@ def words(computed, heard, axis, names, mark=None):
     """
     first = ' '.join(_clutter(computed, heard, names, mark))
     rest = [*_target(computed, heard, names, mark), *_bank(computed, heard, axis, names), _key(computed, mark)]
+    rest += _dashed(computed, kept, mark)
     what = 'the canceller' if computed.is_stagger else 'the filters of each PRF'
     return {
         'caption': ' '.join([first, *rest]),
@@ -35,6 +38,19 @@ def words(computed, heard, axis, names, mark=None):
         'summary': f'Level in {what} above its noise along the {axis.name}, {axis.span()}. {" ".join([first, *rest])}',
         'table': _table(computed, heard, axis, names),
     }
+
+
+def _dashed(computed, kept, mark):
+    """Say what the dashed curves are."""
+    if kept is None:
+        return []
+    if not kept:
+        return ["The kept plan's filters have no PRF here to stand beside."]
+    if computed.is_stagger:
+        return ["Dashed: the kept plan's canceller."]
+    return [
+        f"Dashed: the kept plan's filter {'that hears the target best' if mark is not None else 'of the same kind'}."
+    ]
 
 
 def _on(names, computed):

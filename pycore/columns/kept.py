@@ -6,13 +6,6 @@ from pycore.columns.blind_parts import gaps, zones
 from pycore.lost_gained import lost_gained
 from pycore.patterns import sweep
 
-THIN = 0.13
-"""Height of a lane of the kept plan. [lanes]"""
-ALONE_AT = -0.42
-"""Middle of the one lane of a kept plan whose PRFs are not as many as the present plan's. [lanes]"""
-ROOM = 0.55
-"""How much further down the lanes begin where that one lies under them. [lanes]"""
-
 
 def is_alike(computed, kept):
     """Return whether each PRF of the present plan has one of the kept plan's to stand beside.

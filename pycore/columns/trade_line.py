@@ -5,8 +5,8 @@ band in a strip. Sources: ``edges`` (of the bands), ``band`` (the strips that th
 plan's carriers lie in), ``band-names``, ``lines`` (one for each carrier) and
 ``carrier-names``, ``asked`` (what one PRF would have to reach), ``regimes`` and
 ``regime-names`` (low, medium, high and clear for this coverage), ``prfs`` and
-``prf-names``, ``target`` (a PRF further out and higher up would show the followed
-target without ambiguity).
+``prf-names``, ``kept`` and ``kept-lines`` (the kept plan's PRFs and carriers), ``target``
+(a PRF further out and higher up would show the followed target without ambiguity).
 """
 
 import numpy as np
@@ -45,18 +45,20 @@ def picture(computed, units, size=None, view=WHOLE):
     picture : dict
         Columns, ranges, labels, ticks and words.
     """
-    x, y = _axes(computed, units)
+    x, y = _axes(computed, units, view.kept)
     names = prf_names(computed.plan, units)
+    kept_names = [] if view.kept is None else prf_names(view.kept.plan, units)
     ticks = {
         side: dict(zip(('at', 'text'), decade_ticks(*axis.ends), strict=True)) for side, axis in (('x', x), ('y', y))
     }
     return {
         'title': TITLE,
-        **words(computed, x, y, names),
+        **words(computed, x, y, names, view.kept, kept_names),
         'columns': {
             **_bands(computed.plan, x, y),
             **regions(computed.plan, x, y),
             **_prfs(computed, x, y, names),
+            **_kept(view.kept, computed, x, y),
             'target': _target(view.mark, x, y),
         },
         'ranges': {'x': x.ends, 'y': y.ends},
@@ -66,11 +68,12 @@ def picture(computed, units, size=None, view=WHOLE):
     }
 
 
-def _axes(computed, units):
-    """Return axes with room around the plan's PRFs and the corner of what is asked for."""
+def _axes(computed, units, kept):
+    """Return axes with room around the PRFs of the plan and of the kept one, and the corner of what is asked for."""
     low, high = computed.plan.speed_m_s
-    ranges = np.append(computed.unambiguous_range_m, computed.plan.range_m[1])
-    speeds = np.append(computed.blind_speed_m_s, high - low)
+    plans = [computed] if kept is None else [computed, kept]
+    ranges = np.concatenate([*(one.unambiguous_range_m for one in plans), [computed.plan.range_m[1]]])
+    speeds = np.concatenate([*(one.blind_speed_m_s for one in plans), [high - low]])
     x, y = ((float(values.min()) / _ROOM, float(values.max()) * _ROOM) for values in (ranges, speeds))
     return range_axis(x, units, 'unambiguous range'), speed_axis(y, units, 'first blind speed')
 
@@ -79,6 +82,18 @@ def _target(mark, x, y):
     """Return the ring of the target, which a logarithmic axis has no place for at range or speed nought."""
     here = mark is not None and x.limits[0] < mark.range_m and y.limits[0] < mark.speed_m_s
     return ring(mark if here else None, x, y)
+
+
+def _kept(kept, computed, x, y):
+    """Return the kept plan's PRFs, and the lines of its carriers that the present plan has not."""
+    if kept is None:
+        nothing = np.zeros(0)
+        return {'kept': {'x': nothing, 'y': nothing}, 'kept-lines': _line(nothing, x)}
+    other = np.setdiff1d(kept.plan.carrier_hz, computed.plan.carrier_hz)
+    return {
+        'kept': {'x': x.shown(kept.unambiguous_range_m), 'y': y.shown(kept.blind_speed_m_s)},
+        'kept-lines': _line(_product(other, x, y), x),
+    }
 
 
 def _product(frequency_hz, x, y):

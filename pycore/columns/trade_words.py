@@ -8,7 +8,7 @@ from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.wording import THIN_SPACE, capitalised, count_word, listed, plural, significant, trimmed
 
 
-def words(computed, x, y, names):
+def words(computed, x, y, names, kept=None, kept_names=()):
     """Return caption, short caption, summary and table of the trade line.
 
     Parameters
@@ -19,20 +19,38 @@ def words(computed, x, y, names):
         Of unambiguous range and of first blind speed. [m, m/s]
     names : sequence of str
         The PRFs' names. [unitless]
+    kept : Computed or None
+        What the kept plan gives. [SI]
+    kept_names : sequence of str
+        Its PRFs' names. [unitless]
 
     Returns
     -------
     words : dict
         caption, short, summary, table.
     """
-    first, second = _shortfall(computed, x, y), _given(computed, x, y)
-    second = f'{second} {_regimes(computed)}'
+    first = _shortfall(computed, x, y)
+    rest = [_given(computed, x, y, "The plan's"), _regimes(computed), *_hollow(computed, kept, x, y)]
+    said = ' '.join([first, *rest])
+    table = _table(computed, x, y, names)
+    if kept is not None:
+        table['rows'] += _table(kept, x, y, [f'kept: {name}' for name in kept_names])['rows']
     return {
-        'caption': f'{first} {second}',
+        'caption': said,
         'short': first,
-        'summary': f'Unambiguous range against first blind speed on logarithmic axes. {first} {second}',
-        'table': _table(computed, x, y, names),
+        'summary': f'Unambiguous range against first blind speed on logarithmic axes. {said}',
+        'table': table,
     }
+
+
+def _hollow(computed, kept, x, y):
+    """Say what the hollow marks are."""
+    if kept is None:
+        return []
+    given = _given(kept, x, y, "The kept plan's")
+    if given.partition("plan's")[2] == _given(computed, x, y, "The plan's").partition("plan's")[2]:
+        return ["Hollow: the kept plan's, which are the same."]
+    return [f'Hollow: {given[:1].lower()}{given[1:].partition(" (Nyquist")[0]}.']
 
 
 def _carrier(plan):
@@ -58,7 +76,7 @@ def _shortfall(computed, x, y):
     return capitalised(f'{_carrier(plan)} {prf} is unambiguous out to {asked}.')
 
 
-def _given(computed, x, y):
+def _given(computed, x, y, whose):
     """Say what the PRFs give: each of up to three, the span of more."""
     reach, speed = x.shown(computed.unambiguous_range_m), y.shown(computed.blind_speed_m_s)
     nyquist = speed / 2
@@ -71,7 +89,7 @@ def _given(computed, x, y):
         shown = [list(dict.fromkeys(map(significant, values[order].tolist()))) for values in (reach, speed, nyquist)]
         ends = [listed(shown[0]), listed(shown[1]), listed(f'±{THIN_SPACE}{text}' for text in shown[2])]
     count, noun = computed.plan.n, 'interval' if computed.is_stagger else 'PRF'
-    who = f"The plan's {count_word(count)} {noun + ' gives' if count == 1 else noun + 's give'}"
+    who = f'{whose} {count_word(count)} {noun + " gives" if count == 1 else noun + "s give"}'
     blind = f'{"a first blind speed" if count == 1 else "first blind speeds"} of {ends[1]}{THIN_SPACE}{y.unit}'
     return f'{who} {ends[0]}{THIN_SPACE}{x.unit} and {blind} (Nyquist {ends[2]}{THIN_SPACE}{y.unit}).'
 

@@ -14,6 +14,7 @@ from webapp.figures.style import colours
 STYLE = Path(__file__).parents[2] / 'webapp' / 'page' / 'styles' / 'base.css'
 DARK_CLASSES = ('none', 'none-hatch', 'too-few', 'too-few-edge')
 LIGHT_CLASSES = ('just-enough', 'more', 'all')
+AGAINST_KEPT = ('lost', 'lost-hatch', 'gained', 'gained-dot', 'still-blind')
 
 
 def luminance(colour):
@@ -35,7 +36,7 @@ def test_contrast_is_that_of_the_standard_at_its_ends():
 
 
 def test_every_class_of_the_map_has_a_colour():
-    assert set(CLASS_ROLES) == set(NAMES) == {*DARK_CLASSES, *LIGHT_CLASSES, 'dot'}
+    assert set(CLASS_ROLES) == set(NAMES) == {*DARK_CLASSES, *LIGHT_CLASSES, 'dot', *AGAINST_KEPT}
     assert set(CLASS_ROLES.values()) <= set(PALETTE)
 
 
@@ -95,3 +96,13 @@ def test_marks_stand_three_to_one_against_what_they_lie_on(scheme, mark, ground)
 def test_plain_is_the_page_s_own_colour(scheme, place):
     papers = re.findall(r'--paper:\s*(#[0-9a-f]{6})', STYLE.read_text(encoding='utf-8'))
     assert colours('paper', scheme) == papers[place]
+
+
+@pytest.mark.parametrize('scheme', SCHEMES)
+def test_lost_gained_and_the_rest_are_told_apart_in_grey(scheme):
+    shade = {name: colours(CLASS_ROLES[name], scheme) for name in NAMES}
+    assert contrast(shade['lost'], shade['gained']) >= 5
+    assert contrast(shade['lost'], shade['lost-hatch']) >= 5
+    assert contrast(shade['gained'], shade['gained-dot']) >= 5
+    assert contrast(shade['gained'], shade['all']) > 1.08
+    assert contrast(shade['still-blind'], shade['all']) < contrast(shade['gained'], shade['all'])

@@ -3,7 +3,7 @@
 from bokeh.models import HBar, Line, Segment
 
 from pycore.columns import blind_speeds
-from webapp.figures.lanes import lanes
+from webapp.figures.lanes import lanes, thin_lanes
 from webapp.figures.marks import upright
 from webapp.figures.names import write
 from webapp.figures.style import draw, plot, source
@@ -23,10 +23,11 @@ def build(picture):
     -------
     figure : bokeh figure
         Sources ``lanes``, ``notches``, ``unseen``; ``response``, ``threshold``, ``below``, ``speeds``, ``names``;
-        ``target``.
+        ``kept-lanes``, ``kept-blind``, ``kept-unseen``, ``kept-response``, ``target``.
     """
     made = plot(NAME, picture)
     lanes(made, NAME, picture, 'notches')
+    thin_lanes(made, NAME, picture)
     _response(made, picture)
     upright(made, NAME, picture)
     return made
@@ -38,6 +39,8 @@ def _response(made, picture):
     draw(made, source(NAME, picture, 'threshold'), across, line_color='text')
     upright = Segment(x0='x', x1='x', y0='y0', y1='y1', line_width=1)
     draw(made, source(NAME, picture, 'speeds'), upright, line_color='text')
+    kept = Line(x='x', y='y', line_width=1.5, line_dash=[7, 4])
+    draw(made, source(NAME, picture, 'kept-response'), kept, line_color='strong-text')
     draw(made, source(NAME, picture, 'response'), Line(x='x', y='y', line_width=1.75), line_color='line')
     bar = HBar(y='y', left='left', right='right', height='height', line_alpha=0)
     bar.update(hatch_pattern='right_diagonal_line', hatch_scale=7, hatch_weight=1)

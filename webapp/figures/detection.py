@@ -22,7 +22,8 @@ def build(picture):
     Returns
     -------
     figure : bokeh figure
-        Sources ``map``, ``frame``, ``wanted``, ``best``, ``median``, ``worst``, ``names``, ``heading``, ``target``.
+        Sources ``map``, ``frame``, ``wanted``, ``best``, ``median``, ``worst``, ``kept``, ``names``,
+        ``heading``, ``target``.
     """
     made = plot(NAME, picture)
     made.yaxis[0].axis_line_alpha = 0
@@ -41,6 +42,8 @@ def _curves(made, picture):
     """Draw the wanted probability and the three curves, told apart by weight and dashes."""
     across = Segment(x0='x0', x1='x1', y0='y', y1='y', line_width=1, line_dash=[5, 4])
     draw(made, source(NAME, picture, 'wanted'), across, line_color='text')
+    kept = Line(x='x', y='y', line_width=1.75, line_dash=[14, 5])
+    draw(made, source(NAME, picture, 'kept'), kept, line_color='strong-text')
     for name, width, dashes in (('best', 1.25, []), ('worst', 1.5, [6, 3]), ('median', 2.5, [])):
         line = Line(x='x', y='y', line_width=width, line_dash=dashes)
         draw(made, source(NAME, picture, name), line, line_color='line')

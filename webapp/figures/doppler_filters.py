@@ -24,7 +24,7 @@ def build(picture):
     -------
     figure : bokeh figure
         Sources ``lanes``, ``notch``, ``noise``, ``ground``, ``rain``, ``clutter-edge``, ``lobes``, ``filter``,
-        ``names``, ``target``, ``level``.
+        ``kept-filter``, ``names``, ``target``, ``level``.
     """
     made = plot(NAME, picture)
     made.yaxis[0].axis_line_alpha = 0
@@ -34,6 +34,8 @@ def build(picture):
     draw(made, source(NAME, picture, 'noise'), across, line_color='text')
     draw(made, source(NAME, picture, 'lobes'), Line(x='x', y='y', line_width=1), line_color='axis')
     upright(made, NAME, picture)
+    kept = Line(x='x', y='y', line_width=1.5, line_dash=[7, 4])
+    draw(made, source(NAME, picture, 'kept-filter'), kept, line_color='strong-text')
     draw(made, source(NAME, picture, 'filter'), Line(x='x', y='y', line_width=1.75), line_color='line')
     notch = Quad(**_BOX, line_alpha=0, hatch_pattern='right_diagonal_line', hatch_scale=7, hatch_weight=1)
     draw(made, source(NAME, picture, 'notch'), notch, fill_color='ink', hatch_color='hatch')

@@ -9,6 +9,7 @@ from webapp.figures.style import draw, plot, source
 NAME = dwell.NAME
 
 _LOW, _HIGH = dwell.LANE
+_KEPT_LOW, _KEPT_HIGH = dwell.KEPT_LANE
 
 
 def build(picture):
@@ -23,7 +24,7 @@ def build(picture):
     -------
     figure : bokeh figure
         Sources ``time``, ``fill``, ``counted``, ``over``, ``again``, ``pulses``, ``names``, ``end``, ``end-name``,
-        ``target``.
+        ``kept-fill``, ``kept-counted``, ``target``.
     """
     made = plot(NAME, picture)
     made.yaxis[0].visible = False
@@ -34,6 +35,9 @@ def build(picture):
     edged = {'line_width': 1, 'line_join': 'miter'}
     draw(made, source(NAME, picture, 'counted'), Quad(**bar, **edged), fill_color='pale', line_color='paper')
     draw(made, source(NAME, picture, 'fill'), Quad(**bar, **edged), fill_color='bar', line_color='paper')
+    thin = {**bar, **edged, 'bottom': _KEPT_LOW, 'top': _KEPT_HIGH}
+    draw(made, source(NAME, picture, 'kept-counted'), Quad(**thin), fill_color='pale', line_color='paper')
+    draw(made, source(NAME, picture, 'kept-fill'), Quad(**thin), fill_color='bar', line_color='paper')
     beyond = Quad(**{**bar, 'top': _LOW, 'bottom': _LOW - 0.06}, line_alpha=0)
     beyond.update(hatch_pattern='right_diagonal_line', hatch_scale=7, hatch_weight=1)
     draw(made, source(NAME, picture, 'over'), beyond, fill_color='ink', hatch_color='hatch')

@@ -3,7 +3,7 @@
 from bokeh.models import Line, Patch, Segment
 
 from pycore.columns import eclipsed_ranges
-from webapp.figures.lanes import lanes
+from webapp.figures.lanes import lanes, thin_lanes
 from webapp.figures.marks import upright
 from webapp.figures.style import draw, plot, source
 
@@ -21,10 +21,12 @@ def build(picture):
     Returns
     -------
     figure : bokeh figure
-        Sources ``lanes``, ``eclipsed``, ``unseen``, ``received``, ``least``, ``target``.
+        Sources ``lanes``, ``eclipsed``, ``unseen``, ``received``, ``least``, ``kept-lanes``,
+        ``kept-blind``, ``kept-unseen``, ``target``.
     """
     made = plot(NAME, picture)
     lanes(made, NAME, picture, 'eclipsed', height='height')
+    thin_lanes(made, NAME, picture)
     received = source(NAME, picture, 'received')
     draw(made, received, Patch(x='x', y='area', line_alpha=0), fill_color='asked')
     draw(made, received, Line(x='x', y='edge', line_width=1.25), line_color='line')

@@ -7,6 +7,9 @@ from webapp.figures.style import draw, source
 HEIGHT = 0.62
 """Height of a bar. [lanes]"""
 
+THIN = 0.13
+"""Height of a bar of the kept plan. [lanes]"""
+
 
 def lanes(made, name, picture, blind, height=HEIGHT):
     """Draw the lanes of a figure.
@@ -33,3 +36,22 @@ def lanes(made, name, picture, blind, height=HEIGHT):
         **{**ends, 'line_alpha': 1}, line_width=0.75, hatch_pattern='right_diagonal_line', hatch_scale=7, hatch_weight=1
     )
     draw(made, source(name, picture, 'unseen'), hatched, fill_color='ink', line_color='ink', hatch_color='hatch')
+
+
+def thin_lanes(made, name, picture):
+    """Draw the thin lanes of the kept plan.
+
+    Parameters
+    ----------
+    made : bokeh figure
+        The figure. [unitless]
+    name : str
+        Its name. [unitless]
+    picture : dict
+        Its columns. [shown units]
+    """
+    ends = {'y': 'y', 'left': 'left', 'right': 'right', 'height': THIN, 'line_width': 0.75}
+    ground = HBar(**ends, fill_alpha=0, line_alpha=0.8)
+    draw(made, source(name, picture, 'kept-lanes'), ground, line_color='hair')
+    draw(made, source(name, picture, 'kept-blind'), HBar(**ends), fill_color='bar', line_color='bar')
+    draw(made, source(name, picture, 'kept-unseen'), HBar(**ends), fill_color='ink', line_color='ink')

@@ -41,6 +41,11 @@ CLASS_ROLES = {
     'more': 'paler',
     'all': 'paper',
     'dot': 'dot',
+    'lost': 'ink',
+    'lost-hatch': 'paper',
+    'gained': 'pale',
+    'gained-dot': 'ink',
+    'still-blind': 'lane',
 }
 """The role that each class of the map of blind zones is drawn in. [unitless]"""
 

@@ -24,7 +24,8 @@ def build(picture):
     -------
     figure : bokeh figure
         Sources ``edges``, ``band``, ``band-names``, ``lines``, ``carrier-names``, ``asked``,
-        ``regimes``, ``regime-names``, ``prfs``, ``prf-names``, ``target``.
+        ``regimes``, ``regime-names``, ``prfs``, ``prf-names``,
+        ``kept-lines``, ``kept``, ``target``.
     """
     made = plot(NAME, picture, 'log', 'log')
     draw(made, source(NAME, picture, 'band'), Patches(xs='xs', ys='ys', line_alpha=0), fill_color='band')
@@ -34,10 +35,14 @@ def build(picture):
     parted = Segment(**_ENDS, line_width=1, line_dash=[2, 4])
     draw(made, source(NAME, picture, 'regimes'), parted, line_color='text')
     draw(made, source(NAME, picture, 'lines'), Segment(**_ENDS, line_width=2.25), line_color='line')
+    other = Segment(**_ENDS, line_width=1.5, line_dash=[6, 4])
+    draw(made, source(NAME, picture, 'kept-lines'), other, line_color='line')
     write(made, NAME, picture, 'band-names', ground=0.0)
     write(made, NAME, picture, 'carrier-names', role='line', ground=0.0)
     write(made, NAME, picture, 'regime-names', style='italic', ground=0.0)
     write(made, NAME, picture, 'prf-names', role='strong-text', ground=0.6)
+    hollow = Scatter(x='x', y='y', size=13, line_width=1.75)
+    draw(made, source(NAME, picture, 'kept'), hollow, fill_color='paper', line_color='ink')
     mark = Scatter(x='x', y='y', size=10, line_width=1.5)
     draw(made, source(NAME, picture, 'prfs'), mark, fill_color='ink', line_color='paper')
     ring(made, NAME, picture)
