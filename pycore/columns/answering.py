@@ -2,6 +2,7 @@
 
 import numpy as np
 
+from pycore.columns.answering_marks import inside, marked
 from pycore.columns.blind_parts import gaps
 from pycore.columns.named import names_at
 from pycore.crossings import clear_speeds
@@ -32,6 +33,7 @@ def nothing():
         'threshold': {'x0': empty, 'x1': empty, 'y': empty},
         'below': {'y': empty, 'left': empty, 'right': empty, 'height': empty},
         'speeds': {'x': empty, 'y0': empty, 'y1': empty},
+        'dip': {'x': empty, 'y': empty},
         'names': names_at(empty, empty, [], []),
     }
 
@@ -55,7 +57,7 @@ def picture(computed, axis, kept=None):
     """
     least = float(computed.plan.response_min_db)
     low, high = min(LOWEST_DB, least - 20.0), max(HIGHEST_DB, least + 6.0)
-    high += _ROOM_DB if _inside(computed, axis, least) else 0.0
+    high += _ROOM_DB if inside(computed, axis, least) else 0.0
     step = 10 if high - low <= 80 else 20
     at = list(range(int(np.ceil(low / step)) * step, int(high) + 1, step))
     return {
@@ -82,7 +84,7 @@ def _columns(computed, axis, least, low, high):
             'right': axis.shown(blind.stop),
             'height': np.full(count, _BAR_DB),
         },
-        **_marked(computed, axis, least, low, high),
+        **marked(computed, axis, least, low, high),
     }
 
 
@@ -102,35 +104,6 @@ def _sampled(found, limits):
     if last - first > _MOST_REPEATS:
         return even
     return np.sort(np.concatenate((even, np.arange(first, last + 1) * found.true_first_blind_m_s)))
-
-
-def _inside(computed, axis, least):
-    """Return the marked speeds that lie inside the axis, each with its name."""
-    found, (low, high) = computed.response, axis.limits
-    fall = f'first below {trimmed(least)}{THIN_SPACE}dB'
-    repeat = 'true first blind speed' if found.is_blind else 'response repeats'
-    marks = [(found.first_below_m_s, fall), (found.true_first_blind_m_s, repeat)]
-    return [(speed, name) for speed, name in marks if speed is not None and low < speed < high]
-
-
-def _marked(computed, axis, least, low, high):
-    """Return the marked speeds inside the axis, with their names beside the line that leaves them room."""
-    inside = _inside(computed, axis, least)
-    x = np.array([float(axis.shown(speed)) for speed, _ in inside])
-    # Names stand at the top, one under the other, on the side of the line with more room.
-    rows = high - 0.02 * (high - low) - 0.075 * (high - low) * np.arange(len(inside))
-    right_half = x > sum(axis.ends) / 2
-    return {
-        'speeds': {'x': x, 'y0': np.full(x.size, low), 'y1': np.full(x.size, high)},
-        'names': names_at(
-            np.append(x, axis.ends[1]),
-            np.append(rows, least),
-            [*(f'{name}, {axis.text(speed)}' for speed, name in inside), f'blind below {trimmed(least)}{THIN_SPACE}dB'],
-            ['top_right' if right else 'top_left' for right in [*right_half.tolist(), True]],
-            np.append(np.where(right_half, -3.0, 3.0), 0.0),
-            np.append(np.zeros(x.size), 2.0),
-        ),
-    }
 
 
 def _words(computed, axis, least, kept):

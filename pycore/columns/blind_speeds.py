@@ -2,7 +2,7 @@
 
 Sources: for dwells ``lanes``, ``notches`` (of each PRF), ``unseen`` (clear on fewer
 than M); for a stagger ``response``, ``threshold``, ``below`` (where the response is
-too low), ``speeds`` (marked speeds) and their names; of the kept plan ``kept-lanes``,
+too low), ``speeds`` (marked speeds), ``dip`` and their names; of the kept plan ``kept-lanes``,
 ``kept-blind`` and ``kept-unseen``, or ``kept-response``; ``target``. Those of the other kind are empty.
 """
 
@@ -18,6 +18,7 @@ from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import looks
 from pycore.columns.mark import across
 from pycore.columns.prf_names import prf_names
+from pycore.columns.speed_scales import choice, scale
 from pycore.columns.view import WHOLE
 from pycore.columns.zone_sentences import zones_sentence
 from pycore.wording import THIN_SPACE, listed, percent, significant
@@ -50,6 +51,8 @@ def picture(computed, units, size=None, view=WHOLE):
     axis = speed_axis(computed.plan.speed_m_s, units)
     of_kind = _of_stagger if computed.is_stagger else _of_dwells
     answer = of_kind(computed, axis, units, view.kept)
+    label, ticks = scale(computed, axis, view.axis)
+    answer['labels']['x'], answer['ticks']['x'], answer['choices'] = label, ticks, [choice(view.axis)]
     answer['columns']['target'] = across(view.mark and view.mark.speed_m_s, axis, answer['ranges']['y'])
     return answer
 

@@ -5,6 +5,7 @@ from collections.abc import Mapping
 from dataclasses import dataclass, field, replace
 
 from pycore.columns.mark import Mark, marked
+from pycore.columns.speed_scales import SCALES
 from pycore.computed import Computed
 from pycore.errors import InputError
 from pycore.remembered import computed_of_document
@@ -22,11 +23,14 @@ class View:
         For each figure of which only a part is shown: its ends in range and in radial speed. [m, m/s]
     kept : Computed or None
         What the plan gives that was kept to compare with. [SI]
+    axis : str
+        What the axis of the blind speeds is read in, one of ``SCALES``. [unitless]
     """
 
     mark: Mark | None = None
     zoom: Mapping = field(default_factory=dict)
     kept: Computed | None = None
+    axis: str = 'speed'
 
     def part(self, name, x, y):
         """Return the axes that one figure is drawn on.
@@ -61,7 +65,8 @@ def seen(computed, chosen):
         What the plan gives. [SI]
     chosen : mapping or None
         ``target``: ``range_km`` and ``speed_mps`` of the target that is followed; ``zoom``: for each figure of which
-        a part is looked at, its ends ``x`` and ``y``; ``kept``: the plan to compare with. [km, m/s]
+        a part is looked at, its ends ``x`` and ``y``; ``kept``: the plan to compare
+        with; ``axis`` of the blind speeds. [km, m/s]
 
     Returns
     -------
@@ -79,7 +84,14 @@ def seen(computed, chosen):
         mark=marked(computed, chosen.get('target')),
         zoom=_zoomed(computed.plan, chosen.get('zoom') or {}),
         kept=None if kept is None else computed_of_document(kept, computed.with_echoes),
+        axis=_axis(chosen.get('axis') or 'speed'),
     )
+
+
+def _axis(name):
+    if name not in SCALES:
+        raise InputError('axis', f'axis must be one of {", ".join(SCALES)}; got {name!r}.')
+    return name
 
 
 def _zoomed(plan, zoom):

@@ -37,7 +37,7 @@ const state = createState(opening.answer.plan);
 const view = createView();
 const address = createAddress(openLink);
 const hands = createHands({ state, keys, quantities, typed, status, families: opening.units.families, redraw: () => page.redraw(), onAnswered: (count, act) => waiting.push({ count, act }), focus: (path, typing) => page.focus(path, typing) });
-const page = createPage({ opening, keys, quantities, typed, state, hands, ask: () => asking.ask(), onOpen: (name, shows) => (shows ? opened.open(name, shows) : opened.close(name)) });
+const page = createPage({ opening, keys, quantities, typed, state, hands, choose: view.choose, ask: () => asking.ask(), onOpen: (name, shows) => (shows ? opened.open(name, shows) : opened.close(name)) });
 const travel = createTravel({ state, status, page, buttons: { undo: document.getElementById('undo'), redo: document.getElementById('redo') } });
 const head = createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening: () => asking.isOpening(), openExample });
 let findings = opening.answer.findings;

@@ -18,7 +18,7 @@ import { createVerdict } from './verdict.js';
 const at = (id) => document.getElementById(id);
 const engineState = () => document.documentElement.dataset.engine;
 
-export function createPage({ opening, keys, quantities, typed, state, hands, ask, onOpen }) {
+export function createPage({ opening, keys, quantities, typed, state, hands, ask, onOpen, choose }) {
   const numberFor = createNumbers();
   const looks = createLooks({ state, keys, quantities, typed, engineState });
   const sentence = createSentence({ grammar: opening.grammar, keys, quantities });
@@ -27,7 +27,7 @@ export function createPage({ opening, keys, quantities, typed, state, hands, ask
   const findings = createFindings(at('findings'), (name, text) => hands.act('remark', { finding: name, text }), onOpen);
   const refused = createRefused(at('refused'), hands.putBack);
   const title = createTitle(at('title'), { label: keys.of('title').label, longest: keys.of('title').longest, commit: (text) => hands.commit({ key: 'title', text }) });
-  const pictures = createPictures({ chief: at('chief'), rest: at('figures'), items: opening.items, titles: Object.fromEntries(Object.entries(opening.answer.figures).map(([name, { title }]) => [name, title])), onSeen: () => seen() });
+  const pictures = createPictures({ chief: at('chief'), rest: at('figures'), items: opening.items, titles: Object.fromEntries(Object.entries(opening.answer.figures).map(([name, { title }]) => [name, title])), onSeen: () => seen(), choose });
   const table = createKeysTable({ box: at('quantities'), place: at('quantities-tables'), keys, numberFor, commit: hands.commit });
   const redraws = { running: false, wanted: false };
   let painted = 0;

@@ -2,12 +2,13 @@
 // A figure that is not on the screen is neither embedded nor computed; `onSeen()` tells that one has come into view.
 
 import { mount, onHover, update } from './figures.js';
+import { createFigureChoices } from './figure-choices.js';
 import { createFigureTable } from './figure-table.js';
 import { setText } from './number.js';
 
 const NEAR = '240px'; // a figure this close to the screen counts as on it
 
-export function createPictures({ chief, rest, items, titles, onSeen }) {
+export function createPictures({ chief, rest, items, titles, onSeen, choose }) {
   const frames = new Map();
   const inView = new IntersectionObserver((entries) => {
     for (const { target, isIntersecting } of entries) frames.get(target.dataset.figure).seen = isIntersecting;
@@ -16,7 +17,7 @@ export function createPictures({ chief, rest, items, titles, onSeen }) {
 
   const frameFor = (name) => {
     if (!frames.has(name)) {
-      const frame = build(name);
+      const frame = build(name, choose);
       frames.set(name, frame);
       inView.observe(frame.node);
     }
@@ -70,13 +71,14 @@ function place(units, at) {
   return axes.map((side) => `${Number(at[side].toPrecision(4))}\u202f${units[side]}`.replace('-', '\u2212')).join(', ');
 }
 
-function caption(frame, { caption: text, summary, table }) {
+function caption(frame, { caption: text, summary, table, choices }) {
   setText(frame.caption, text);
   setText(frame.summary, summary ?? '');
   frame.table.update(table);
+  frame.choices.update(choices);
 }
 
-function build(name) {
+function build(name, choose) {
   const node = document.createElement('figure');
   node.className = 'figure pending';
   node.dataset.figure = name;
@@ -88,6 +90,8 @@ function build(name) {
   };
   const plot = part('div', 'plot');
   const reading = part('p', 'figure-reading');
+  const choices = createFigureChoices(choose);
+  node.append(choices.node);
   const words = part('figcaption', '');
   const label = part('span', 'figure-name', words);
   words.append(' ');
@@ -97,5 +101,5 @@ function build(name) {
   const summary = part('p', 'out-of-sight');
   const table = createFigureTable();
   node.append(table.node);
-  return { node, plot, reading, label, caption: text, shows, summary, table, seen: false, mounted: null, count: -1 };
+  return { node, plot, reading, choices, label, caption: text, shows, summary, table, seen: false, mounted: null, count: -1 };
 }

@@ -1,6 +1,6 @@
 """Blind speeds: lanes with the notches of each PRF, or the response of a stagger."""
 
-from bokeh.models import HBar, Line, Segment
+from bokeh.models import HBar, Line, Scatter, Segment
 
 from pycore.columns import blind_speeds
 from webapp.figures.lanes import lanes, thin_lanes
@@ -22,8 +22,8 @@ def build(picture):
     Returns
     -------
     figure : bokeh figure
-        Sources ``lanes``, ``notches``, ``unseen``; ``response``, ``threshold``, ``below``, ``speeds``, ``names``;
-        ``kept-lanes``, ``kept-blind``, ``kept-unseen``, ``kept-response``, ``target``.
+        Sources ``lanes``, ``notches``, ``unseen``; ``response``, ``threshold``, ``below``, ``speeds``, ``dip``,
+        ``names``; ``kept-lanes``, ``kept-blind``, ``kept-unseen``, ``kept-response``, ``target``.
     """
     made = plot(NAME, picture)
     lanes(made, NAME, picture, 'notches')
@@ -45,4 +45,6 @@ def _response(made, picture):
     bar = HBar(y='y', left='left', right='right', height='height', line_alpha=0)
     bar.update(hatch_pattern='right_diagonal_line', hatch_scale=7, hatch_weight=1)
     draw(made, source(NAME, picture, 'below'), bar, fill_color='ink', hatch_color='hatch')
+    dip = Scatter(x='x', y='y', size=9, line_width=1.75)
+    draw(made, source(NAME, picture, 'dip'), dip, fill_color='paper', line_color='line')
     write(made, NAME, picture, 'names')
