@@ -7,6 +7,7 @@ No mathematics lives here.
 from pycore import edit, link
 from pycore.assessment import assessment, finite
 from pycore.cautions import cautions
+from pycore.checks_here import conventions_here
 from pycore.columns import followed, marking, picture
 from pycore.columns.here import here_words
 from pycore.columns.view import seen
@@ -21,6 +22,7 @@ from pycore.link.beside import beside, read_beside
 from pycore.link.reader_units import units_text, unknown_units
 from pycore.margins import margins_shown
 from pycore.margins.slices import margins_in_words
+from pycore.own_table import agreement, read_table
 from pycore.plan.keys.followed import FOLLOWED
 from pycore.plan.reading import read
 from pycore.quantity import read_number
@@ -468,6 +470,42 @@ def workings_of(plan, finding):
     return workings(Computed(read(plan)), finding)
 
 
+def conventions_of(plan):
+    """Return what the models leave out, and the conventions with checks by the plan's own numbers.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+
+    Returns
+    -------
+    shown : dict
+        ``left_out`` and ``rows`` (``name``, ``text``, ``check``, ``result``, ``here``).
+    """
+    return conventions_here(Computed(read(plan)))
+
+
+def agreement_with(plan, text, units=None):
+    """Return how far a plan agrees with a table of the reader's own.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+    text : str
+        Lines of range, speed, seen, as a spreadsheet writes them. [unitless]
+    units : mapping or None
+        Units that are meant where the table names none. [unitless]
+
+    Returns
+    -------
+    agreement : dict
+        ``cells``, ``agree``, ``sentences``, and the first cells that disagree as ``head`` and ``rows``.
+    """
+    return agreement(Computed(read(plan)), read_table(text, {**SHOWN_UNITS, **(units or {})}))
+
+
 ACTIONS = {
     'assess': assess,
     'note': note,
@@ -483,5 +521,7 @@ ACTIONS = {
     'margins_in_words': margins_told,
     'workings': workings_of,
     'conventions': conventions,
+    'conventions_here': conventions_of,
+    'agreement': agreement_with,
 }
 """What the worker in the browser may be asked for, by name."""
