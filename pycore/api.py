@@ -17,6 +17,7 @@ from pycore.conventions import conventions
 from pycore.errors import InputError
 from pycore.findings import verdict
 from pycore.follow import follow, strip
+from pycore.hand_over import hand_over
 from pycore.holds_over import judged
 from pycore.link.beside import beside, read_beside
 from pycore.link.reader_units import units_text, unknown_units
@@ -470,6 +471,28 @@ def workings_of(plan, finding):
     return workings(Computed(read(plan)), finding)
 
 
+def hand_over_of(plan, opened=None, units=None):
+    """Return what is handed over with a plan: the timing table in words, and what changed.
+
+    Parameters
+    ----------
+    plan : dict
+        A plan. [plan's units]
+    opened : dict or None
+        The plan that was opened. [plan's units]
+    units : mapping or None
+        Units that the reader prefers. [unitless]
+
+    Returns
+    -------
+    shown : dict
+        ``head``, ``rows``, ``sentences``, ``csv``, ``text``, ``changed``.
+    """
+    before = None if opened is None else read(opened).document
+    checksum = link.write(plan).rpartition('=')[2]
+    return hand_over(read(plan), checksum, before, {**SHOWN_UNITS, **(units or {})})
+
+
 def conventions_of(plan):
     """Return what the models leave out, and the conventions with checks by the plan's own numbers.
 
@@ -517,6 +540,7 @@ ACTIONS = {
     'typed-target': typed_target,
     'follow': follow_target,
     'timing': timing,
+    'hand_over': hand_over_of,
     'margins': margins_of,
     'margins_in_words': margins_told,
     'workings': workings_of,

@@ -72,12 +72,14 @@ def _sentences(computed, table, here, wrong):
     """Say how many agree, which way the others differ, and how many of those lie at an edge."""
     cells, units = _counted(here.size), f'range in {table.units[0]}, speed in {table.units[1]}'
     if not wrong.size:
-        return [f'All {cells} cells agree with the plan.', f'Read as {units}, seen. Clutter is not counted.']
+        all_of_them = 'The one cell agrees' if here.size == 1 else f'All {cells} cells agree'
+        return [f'{all_of_them} with the plan.', f'Read as {units}, seen. Clutter is not counted.']
     hidden = int(np.count_nonzero(table.seen[wrong]))
     parts = [(hidden, 'seen in your table and not here'), (int(wrong.size) - hidden, 'seen here and not in your table')]
     ways = listed([f'{_counted(count)} {plural(count, "is", "are")} {what}' for count, what in parts if count])
-    alike = capitalised(_counted(here.size - wrong.size))
-    said = [f'{alike} of {cells} cells agree, {percent(1 - wrong.size / here.size)}; {ways}.']
+    alike = 'None' if wrong.size == here.size else capitalised(_counted(here.size - wrong.size))
+    of_them = f'{cells} {plural(here.size, "cell")} {"agrees" if wrong.size == here.size - 1 else "agree"}'
+    said = [f'{alike} of {of_them}, {percent(1 - wrong.size / here.size)}; {ways}.']
     edge = int(np.count_nonzero(_at_an_edge(computed, table, here, wrong)))
     if edge:
         where = f'half a gate in range or {_EDGE_M_S}{THIN_SPACE}m/s in speed'

@@ -2,12 +2,13 @@
 
 from dataclasses import dataclass
 
-from pycore.wording import THIN_SPACE, listed, trimmed
+from pycore.wording import MINUS, THIN_SPACE, listed, trimmed
 
 DERIVED = 'derived here'
 DEFINITION = 'definition'
 COMMON = 'common practice'
 _FIGURES = 8
+_SMALL = 1e-4
 
 
 @dataclass(frozen=True, slots=True)
@@ -69,9 +70,10 @@ def shown(value, unit=''):
     Returns
     -------
     text : str
-        Eight significant figures at most, no trailing zeros.
+        Eight significant figures at most, no trailing zeros; what is very small with a power of ten.
     """
-    text = trimmed(float(value), _FIGURES)
+    small = 0 < abs(value) < _SMALL
+    text = f'{value:.{_FIGURES}g}'.replace('-', MINUS) if small else trimmed(float(value), _FIGURES)
     return f'{text}{"" if unit == "°" else THIN_SPACE if unit else ""}{unit}'
 
 

@@ -71,3 +71,8 @@ def test_what_the_models_leave_out_is_told_in_whole_sentences():
     said = api.conventions_of(EXAMPLES['opening'])['left_out']
     assert len(said) > 6
     assert all(sentence.endswith('.') for sentence in said)
+
+
+def test_a_very_small_result_keeps_its_digits():
+    rows = {row['name']: row for row in api.conventions_of(EXAMPLES['opening'])['rows']}
+    assert rows['False alarm']['result'] == '5.0000013e−07'  # 1 − √(1 − 1e-6)

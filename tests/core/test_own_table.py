@@ -114,7 +114,7 @@ def test_cells_that_disagree_are_listed_with_the_reason_on_each_prf():
     answer = api.agreement_with(OPENING, text)
     assert answer['agree'] == 1
     assert answer['sentences'][0] == (
-        'One of four cells agree, 25.0\u202f%; two are seen in your table and not here and one is seen here and '
+        'One of four cells agrees, 25.0\u202f%; two are seen in your table and not here and one is seen here and '
         'not in your table.'
     )
     rows = [[cell.replace('\u202f', ' ') for cell in row] for row in answer['rows']]
@@ -142,3 +142,8 @@ def test_only_the_first_twenty_disagreements_are_listed():
 
 def test_cells_beyond_the_coverage_are_compared_too():
     assert api.agreement_with(OPENING, '500,2000,1\n0,0,0')['cells'] == 2
+
+
+def test_of_a_single_cell_it_is_spoken_in_the_singular():
+    assert api.agreement_with(OPENING, '10,57,0')['sentences'][0] == 'The one cell agrees with the plan.'
+    assert api.agreement_with(OPENING, '10,57,1')['sentences'][0].startswith('None of one cell agree, 0')

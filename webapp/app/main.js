@@ -3,14 +3,17 @@
 
 import { createAddress } from './address.js';
 import { createAsking } from './asking.js';
+import { createConventions } from './conventions.js';
 import { listenToDragging } from './dragging.js';
 import { startEngine } from './engine.js';
 import { sizes } from './figures.js';
+import { createHandOver } from './hand-over.js';
 import { createHands } from './hands.js';
 import { createHead } from './head.js';
 import { createKeys } from './keys.js';
 import { openedPlan } from './link.js';
 import { createOpenedFindings } from './opened-findings.js';
+import { createOwnTable } from './own-table.js';
 import { createPage } from './page.js';
 import { packedPart } from './payload.js';
 import { createQuantities } from './quantities.js';
@@ -49,7 +52,10 @@ const first = new Promise((resolve) => { painted = resolve; });
 const engine = startEngine({ payload: (name) => first.then(() => packedPart(name)), onFail: failed });
 const asking = createAsking({ engine, state, view, figures: page.pictures.visible, sizes, units: () => ({ ...units.now }), onLate: head.late, onAnswer: answered, onFault: fault });
 
-const opened = createOpenedFindings({ engine, plan: () => state.now.plan, units: () => quantities.units, isBusy: () => state.now.pending.length > 0 || asking.isOpening() });
+const given = { engine, plan: () => state.now.plan, units: () => quantities.units, isBusy: () => state.now.pending.length > 0 || asking.isOpening() };
+const opened = createOpenedFindings(given);
+const handOver = createHandOver({ ...given, status, opened: opening.answer.plan });
+const onRequest = [opened, handOver, createConventions(given), createOwnTable(given)]; // worked out when the edits pause
 
 function answered(answer, request) {
   status.sayWhenQuiet(flipped(request.opened ? [] : findings, answer.findings));
@@ -61,7 +67,8 @@ function answered(answer, request) {
   if (request.opened !== null) head.opened(answer);
   head.answered(answer);
   address.show(answer.link);
-  if (request.deep) opened.refresh();
+  if (request.opened !== null) handOver.opened(answer.plan);
+  if (request.deep) onRequest.forEach((part) => part.refresh());
   const shown = state.committed(request.count);
   page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(shown, Number(root.dataset.shown)); });
 }
@@ -128,6 +135,7 @@ async function begin() {
   root.dataset.engine = 'ready';
   page.redraw();
   head.update();
+  handOver.refresh();
 }
 
 begin().catch(() => {}); // a failed start is told by onFail

@@ -1,23 +1,26 @@
 // Which findings are opened, and what they show: asked of the engine after the pause, in slices that let an edit in between.
 // Knows the plan's state and the engine; how workings look is workings.js's.
 
-const SLICE_MS = 50; // how long one slice may keep the engine; an edit waits no longer than that
+const SLICE_MS = 60; // how long one slice may keep the engine; an edit waits no longer than that
 const MOST_TRIES = 200;
 
 export function createOpenedFindings({ engine, plan, units, isBusy }) {
   const opened = new Map();
-  let [run, tries] = [0, 4];
+  let run = { isGoing: false };
+  let tries = 4;
 
-  // A newer run makes an older one stop: its plan is not the present one any more.
+  // One run works through all that is open, and takes in what is opened meanwhile; an edit makes it stop.
   async function refresh() {
-    run += 1;
-    const mine = run;
+    if (run.isGoing) return;
+    const mine = { isGoing: true };
+    run = mine;
     const isOld = () => mine !== run || isBusy();
     const key = JSON.stringify([plan(), units()]);
     for (const [name, entry] of opened) {
-      if (isOld()) return;
+      if (isOld()) break;
       if (entry.key !== key && await workOut(name, entry.shows, isOld)) entry.key = key;
     }
+    mine.isGoing = false;
   }
 
   async function workOut(name, shows, isOld) {
@@ -50,7 +53,7 @@ export function createOpenedFindings({ engine, plan, units, isBusy }) {
     refresh,
     // After an edit what is open waits; it is worked out again when the edits pause.
     wait() {
-      run += 1;
+      run = { isGoing: false };
       for (const entry of opened.values()) {
         entry.key = '';
         entry.shows.wait();

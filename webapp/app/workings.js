@@ -3,6 +3,7 @@
 
 import { formula, putIn } from './formula.js';
 import { setText } from './number.js';
+import { tableOf } from './table.js';
 
 const WAITING = '…';
 
@@ -35,7 +36,7 @@ export function createWorkings(label) {
     },
     showMargins({ sentence, head, rows, notes: said }) {
       setText(parts.margin, sentence);
-      fill(parts.list, rows.length > 1 ? [marginTable(head, rows)] : []);
+      fill(parts.list, rows.length > 1 ? [tableOf(head, rows, { caption: 'How far each input can move alone' })] : []);
       notes.margins = said;
       fillNotes();
     },
@@ -55,26 +56,6 @@ function step({ formula: text, numbers, result, source }) {
     element('span', 'step-source', source),
   );
   return item;
-}
-
-function marginTable(head, rows) {
-  const table = document.createElement('table');
-  table.append(element('caption', '', 'How far each input can move alone'));
-  const row = (tag, scope) => (cells) => {
-    const line = document.createElement('tr');
-    line.append(...cells.map((text, i) => {
-      const cell = element(i ? tag : 'th', '', text);
-      if (cell.tagName === 'TH') cell.scope = i ? 'col' : scope;
-      return cell;
-    }));
-    return line;
-  };
-  const top = document.createElement('thead');
-  const body = document.createElement('tbody');
-  top.append(row('th', 'col')(head));
-  body.append(...rows.map(row('td', 'row')));
-  table.append(top, body);
-  return table;
 }
 
 function element(tag, className, ...inner) {
