@@ -69,7 +69,7 @@ def test_an_interval_shown_as_a_frequency_rises_where_it_shrinks():
 
 def test_ranges_and_speeds_are_said_in_the_units_of_the_reader():
     rows = {row[0]: [plain(cell) for cell in row] for row in told(OPENING, 'decode-range', MARINE)['rows']}
-    assert rows['The far end of the range'][1:] == ['59.395 nmi', '–', '69.5 nmi']  # 128.84 km are 69.57 nmi
+    assert rows['The far end of the range'][1:] == ['59.4 nmi', '–', '69.5 nmi']  # 128.84 km are 69.57 nmi
 
 
 @pytest.mark.parametrize(
