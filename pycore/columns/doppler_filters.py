@@ -31,6 +31,8 @@ _LOWEST_DB, _LEAST_TOP_DB, _ROOM_DB = -30.0, 30.0, 6.0
 _FLOOR = 10.0 ** (_LOWEST_DB / 10.0)
 _HIGH = 0.86
 _BAR = 0.045
+_NEAR_AN_END = 0.06
+_LEFT = 0.3
 _PX_PER_LOBE, _PX_PER_TICK = 3.5, 30.0
 
 
@@ -196,22 +198,29 @@ def _filters(heard, axis, scale, width):
 
 
 def _names(computed, heard, axis, scale, names):
-    """Return the PRF's name in the corner of its lane, and the patches' names where they are strongest."""
+    """Return the PRFs' names in a free corner of their lanes, and the patches' names where they are strongest."""
     x, y, text, anchor = [], [], [], []
+    crowded = any(np.argmax(power) < _LEFT * power.size for lane in heard for power in lane.clutter)
     for place, (lane, name) in enumerate(zip(heard, names, strict=True)):
         if not computed.is_stagger and computed.plan.n > 1:
-            x.append(axis.shown(lane.speed_m_s[0]))
+            x.append(axis.shown(lane.speed_m_s[-1 if crowded else 0]))
             y.append(scale.foot(place) + _HIGH)
             text.append(name)
-            anchor.append('top_left')
+            anchor.append('top_right' if crowded else 'top_left')
         for patch, power in zip(computed.echoes.patches, lane.clutter, strict=True):
             top = int(np.argmax(power))
             if power[top] > 1.0:
                 x.append(axis.shown(lane.speed_m_s[top]))
                 y.append(float(scale.at(place, power[top])))
                 text.append(patch.name or 'patch')
-                anchor.append('top_center')
+                anchor.append(_lean(lane, top))
     return names_at(x, y, text, anchor)
+
+
+def _lean(lane, top):
+    """Return how a patch's name lies at its top, so that it stays in its lane."""
+    part = top / max(lane.speed_m_s.size - 1, 1)
+    return 'top_left' if part < _NEAR_AN_END else 'top_right' if part > 1 - _NEAR_AN_END else 'top_center'
 
 
 def _target(heard, axis, scale):

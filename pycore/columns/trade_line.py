@@ -51,12 +51,13 @@ def picture(computed, units, size=None, view=WHOLE):
     ticks = {
         side: dict(zip(('at', 'text'), decade_ticks(*axis.ends), strict=True)) for side, axis in (('x', x), ('y', y))
     }
+    shown = x.shown(computed.unambiguous_range_m), y.shown(computed.blind_speed_m_s)
     return {
         'title': TITLE,
         **words(computed, x, y, names, view.kept, kept_names),
         'columns': {
             **_bands(computed.plan, x, y),
-            **regions(computed.plan, x, y),
+            **regions(computed.plan, *shown, x, y),
             **_prfs(computed, x, y, names),
             **_kept(view.kept, computed, x, y),
             'target': _target(view.mark, x, y),

@@ -13,17 +13,22 @@ _REGIMES = (
 )
 """Name of each regime, and how it leans on the corner that the coverage asks for. [px]"""
 
+_CLOSE = 0.17
+"""Part of an axis within which names would meet. [unitless]"""
+
 _ALONG = 0.82
 """Part of a line, as drawn, after which its name stands. [unitless]"""
 
 
-def regions(plan, x, y):
+def regions(plan, reach, speed, x, y):
     """Return what one PRF would have to reach, and the regimes that part there.
 
     Parameters
     ----------
     plan : Plan
         The plan. [SI]
+    reach, speed : float array, shape N
+        Unambiguous range and first blind speed of the PRFs. [shown units]
     x, y : Axis
         Of unambiguous range and of first blind speed. [m, m/s]
 
@@ -37,6 +42,12 @@ def regions(plan, x, y):
     (left, right), (bottom, top) = x.ends, y.ends
     box = zip(('left', 'bottom', 'right', 'top'), (far, wide, right, top), strict=True)
     text, anchor, dx, dy = zip(*_REGIMES, strict=True)
+    level = np.full(4, wide)
+    if _is_taken(reach, speed, far, wide, x, y):
+        # Where the plan's own marks stand at the crossing, the names go to the ends of the line across the range.
+        level = np.array([top, bottom, bottom, top])
+        anchor = ['top_left', 'bottom_left', 'bottom_right', 'top_right']
+        dy = [-down for down in dy]
     return {
         'asked': {name: np.array([value]) for name, value in box},
         'regimes': {
@@ -45,8 +56,16 @@ def regions(plan, x, y):
             'x1': np.array([far, right]),
             'y1': np.array([top, wide]),
         },
-        'regime-names': names_at(np.full(4, far), np.full(4, wide), text, anchor, dx, dy),
+        'regime-names': names_at(np.full(4, far), level, text, anchor, dx, dy),
     }
+
+
+def _is_taken(reach, speed, far, wide, x, y):
+    """Return whether a PRF's mark stands so close to a point that their names would meet."""
+    (left, right), (bottom, top) = x.ends, y.ends
+    along = np.abs(np.log(reach / far)) / np.log(right / left)
+    up = np.abs(np.log(speed / wide)) / np.log(top / bottom)
+    return bool(((along < _CLOSE) & (up < _CLOSE)).any())
 
 
 def carrier_names(plan, product, x, y):

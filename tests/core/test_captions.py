@@ -19,13 +19,21 @@ from pycore.computed import Computed
 from pycore.plan.reading import read
 from pycore.wording import SHOWN_UNITS, THIN_SPACE
 
+EXAMPLES = Path(__file__).parents[2] / 'webapp' / 'examples'
 SIZE = {'width': 560, 'height': 300}  # about a figure's on a laptop
 CASES = json.loads((Path(__file__).parent / 'captions.json').read_text(encoding='utf-8'))
 
 
+def plan_of(case):
+    """The plan of a case: its own, or that of a worked example."""
+    if 'plan' in case:
+        return case['plan']
+    return json.loads((EXAMPLES / f'{case["example"]}.json').read_text(encoding='utf-8'))['plan']
+
+
 @pytest.mark.parametrize('case', CASES, ids=[case['name'] for case in CASES])
 def test_captions_say_what_they_should(case):
-    computed, units = Computed(read(case['plan'])), {**SHOWN_UNITS, **case.get('units', {})}
+    computed, units = Computed(read(plan_of(case))), {**SHOWN_UNITS, **case.get('units', {})}
     said = {
         name: columns.picture(name, computed, units, SIZE)['caption'].replace(THIN_SPACE, ' ')
         for name in columns.order(computed.plan.kind)
@@ -42,7 +50,8 @@ def test_the_table_of_captions_has_every_form():
         'the widest is',
         'every range is',
     )
-    assert len(CASES) == 20
+    assert {case['example'] for case in CASES if 'example' in case} == {path.stem for path in EXAMPLES.glob('*.json')}
+    assert len(CASES) == 20 + 13
     assert all(form in said for form in forms)
 
 
