@@ -12,6 +12,7 @@ patience calls ``step`` again.
     search.ranked(10)
 """
 
+from copy import copy
 from functools import lru_cache
 from math import inf
 
@@ -130,15 +131,28 @@ def run_slice(limits, seed, number, steps=None):
         To be merged with those of the others.
     """
     one = begun(limits, seed, number)
-    most = _longest(one) if steps is None else steps
-    while one.ledger.steps < most and one.step():
+    most = inf if steps is None else steps
+    while one.ledger.steps < most and goes_on(one):
         pass
     return one.ledger.found()
 
 
-def _longest(one):
-    """Return how many steps a slice may take; all sets of a block are gone through whatever that takes."""
-    return inf if isinstance(one, Exhaustion) else SLICE_STEPS
+def goes_on(one):
+    """Take one step of a slice.
+
+    Parameters
+    ----------
+    one : Descent, Exhaustion or StaggerDescent
+        From ``begun``. [mixed]
+
+    Returns
+    -------
+    goes_on : bool
+        Whether there is another step to take in this slice.
+    """
+    # All sets of a block are gone through, whatever that takes.
+    most = inf if isinstance(one, Exhaustion) else SLICE_STEPS
+    return one.step() and one.ledger.steps < most
 
 
 class Search:
@@ -157,6 +171,7 @@ class Search:
         self.judge, self.proves = judge_of(limits), proves(limits)
         self._slices = 0 if self._hopeless() else slices(limits)
         self._done, self._number, self._slice = Found(), 0, None
+        self._known = {}
 
     def _hopeless(self):
         """Whether some place has no PRI to choose from."""
@@ -184,7 +199,7 @@ class Search:
             return False
         if self._slice is None:
             self._slice = begun(self.limits, self.seed, self._number)
-        if not self._slice.step() or self._slice.ledger.steps >= _longest(self._slice):
+        if not goes_on(self._slice):
             self.add(self._slice.ledger.found())
             self._slice = None
         return not self.ended
@@ -203,6 +218,25 @@ class Search:
     def next_slice(self):
         """Number of the slice that is being taken, or that is next."""
         return self._number
+
+    def with_parts(self, parts, taken):
+        """Return a search that knows what others have found so far, some of it in slices that are still under way.
+
+        Parameters
+        ----------
+        parts : iterable of Found
+            Of whole slices and of parts of them, in any order. [unitless]
+        taken : int
+            How many slices are whole. [unitless]
+
+        Returns
+        -------
+        search : Search
+            For its lists.
+        """
+        other = copy(self)
+        other._done, other._number = merged((self._done, *parts)), self._number + taken
+        return other
 
     @property
     def found(self):
@@ -272,9 +306,12 @@ class Search:
         Returns
         -------
         better : Better
-            Equal to what assessing the plan says.
+            Equal to what assessing the plan says; worked out once.
         """
-        return better(self.judge, pris) if self.limits.stagger is None else stagger_better(self.judge, pris)
+        if pris not in self._known:
+            each = better if self.limits.stagger is None else stagger_better
+            self._known[pris] = each(self.judge, pris)
+        return self._known[pris]
 
 
 def _apart(one, other):

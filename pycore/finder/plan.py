@@ -28,7 +28,9 @@ ASKED = {
     'hole_km': None,
     'hole_mps': None,
     'cpi_ms': None,
+    'time_ms': None,
     'spread': 2.0,
+    'mean_us': None,
 }
 """What may be asked besides the plan, and what holds where it is not."""
 
@@ -80,7 +82,7 @@ def limits_of(document, asked=None):
         received_min=plan.received_min,
         near=plan.near,
         duty_limit=plan.duty_limit,
-        time_s=plan.time_on_target_s,
+        time_s=plan.time_on_target_s if asked['time_ms'] is None else _number('time_ms', asked['time_ms']) / 1e3,
         decode=asked['decode'],
         decode_m=plan.range_m[1] if wanted.decode_range else None,
         decode_m_s=high - low if wanted.decode_speed else None,
@@ -95,7 +97,7 @@ def limits_of(document, asked=None):
         hole_m=_metres(asked['hole_km'], wanted.hole_m),
         hole_m_s=wanted.hole_m_s if asked['hole_mps'] is None else _number('hole_mps', asked['hole_mps']),
         unseen_s=wanted.unseen_s,
-        stagger=_cycle(plan, asked) if stagger else None,
+        stagger=_cycle(plan, asked, clock) if stagger else None,
     )
 
 
@@ -123,7 +125,7 @@ def _place(plan, index, asked):
     )
 
 
-def _cycle(plan, asked):
+def _cycle(plan, asked, clock):
     weights = binomial_weights(plan.delays) if plan.weights is None else plan.weights
     mean = sum(plan.pri_counts) / plan.n
     return Cycle(
@@ -131,7 +133,9 @@ def _cycle(plan, asked):
         user_weights=plan.weights is not None,
         response_min_db=plan.response_min_db,
         spread=_number('spread', asked['spread']),
-        mean_counts=(0.95 * mean, 1.05 * mean),
+        mean_counts=(0.95 * mean, 1.05 * mean)
+        if asked['mean_us'] is None
+        else _ends('mean_us', asked['mean_us'], clock),
     )
 
 

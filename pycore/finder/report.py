@@ -1,6 +1,6 @@
 """What each set that was found gives, in full, by the same functions that assess a plan."""
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
@@ -116,25 +116,7 @@ def better(judge, pris):
         duty,
         None,
     )
-    return with_(values, tightest=tightest(limits, values))
-
-
-def with_(values, **changes):
-    """Return a set with some of what it gives replaced.
-
-    Parameters
-    ----------
-    values : Better
-        One set. [mixed]
-    **changes
-        Fields to replace. [mixed]
-
-    Returns
-    -------
-    values : Better
-        Another record.
-    """
-    return Better(**{name: changes.get(name, getattr(values, name)) for name in Better.__slots__})
+    return replace(values, tightest=tightest(limits, values))
 
 
 def tightest(limits, values):
@@ -196,7 +178,7 @@ def marked(some):
         In the same order, ``on_front`` set.
     """
     return [
-        with_(one, on_front=bool(on)) for one, on in zip(some, front([_judged_by(one) for one in some]), strict=True)
+        replace(one, on_front=bool(on)) for one, on in zip(some, front([_judged_by(one) for one in some]), strict=True)
     ]
 
 

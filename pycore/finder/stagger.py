@@ -1,5 +1,6 @@
 """One slice of a search for staggers: descents by two PRIs at a time, one longer by what the other is shorter."""
 
+from dataclasses import replace
 from itertools import combinations
 
 import numpy as np
@@ -9,7 +10,7 @@ from pycore.finder.chance import Chance
 from pycore.finder.cycle import StaggerJudge
 from pycore.finder.decode import pulses_of
 from pycore.finder.found import Ledger
-from pycore.finder.report import Better, tightest, with_
+from pycore.finder.report import Better, tightest
 from pycore.finder.shortfalls import DIGITS
 from pycore.holes import holes
 from pycore.patterns import sweep
@@ -224,4 +225,4 @@ def stagger_better(judge, pris):
         None,
         judge.dip_db(pris),
     )
-    return with_(values, tightest=tightest(limits, values))
+    return replace(values, tightest=tightest(limits, values))

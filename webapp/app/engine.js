@@ -59,6 +59,7 @@ export function startEngine({ payload = packedPart, onStage = () => {}, onFail =
   }
 
   function openWorker(script, snapshot) {
+    if (engine.failure) throw engine.failure; // ended before it began
     performance.mark('engine starts');
     engine.worker = startWorker(script);
     engine.worker.onmessage = heard;
@@ -71,7 +72,12 @@ export function startEngine({ payload = packedPart, onStage = () => {}, onFail =
   }
 
   boot().catch((error) => fail(causeOf(error)));
-  return { ask, newest: newestOf(ask), ready }; // ready rejects where the start fails
+  const end = () => {
+    watch.end();
+    engine.failure ??= new Error('this engine was ended');
+    engine.worker?.terminate();
+  };
+  return { ask, newest: newestOf(ask), ready, end }; // ready rejects where the start fails
 }
 
 // One request runs and only the newest waits: what it replaces is answered with null.

@@ -7,6 +7,7 @@ const SCHEMES = ['light', 'dark']; // the order of the colours in a model's tags
 
 const mounted = new Map();
 const listeners = { pick: () => {}, hover: () => {} };
+const own = new Map(); // listeners of one figure, instead of those of all
 let scheme = 'light';
 
 // Embed a figure's document in an element; it is as large as the element from then on.
@@ -52,6 +53,11 @@ export function onPick(callback) {
 
 export function onHover(callback) {
   listeners.hover = callback;
+}
+
+// One figure's own callbacks get (x, y), or (null, null) on leaving.
+export function listenTo(name, { pick, hover }) {
+  own.set(name, { pick: (_, x, y) => pick(x, y), hover: (_, x, y) => hover(x, y) });
 }
 
 // Width and height of each figure's plot, without its axes, in CSS pixels: what a map is computed for.
@@ -105,18 +111,19 @@ function withoutTabStop(view) {
 
 function listen(name, element) {
   const at = (event) => placeOf(mounted.get(name), event);
+  const tell = () => own.get(name) ?? listeners;
   let inside = false;
   element.addEventListener('click', (event) => {
     const place = at(event);
-    if (place) listeners.pick(name, ...place);
+    if (place) tell().pick(name, ...place);
   });
   element.addEventListener('pointermove', (event) => {
     const place = at(event);
-    if (place || inside) listeners.hover(name, ...(place ?? [null, null]));
+    if (place || inside) tell().hover(name, ...(place ?? [null, null]));
     inside = Boolean(place);
   });
   element.addEventListener('pointerleave', () => {
-    if (inside) listeners.hover(name, null, null);
+    if (inside) tell().hover(name, null, null);
     inside = false;
   });
 }

@@ -5,12 +5,14 @@ import { createAddress } from './address.js';
 import { createAsking } from './asking.js';
 import { createConventions } from './conventions.js';
 import { listenToDragging } from './dragging.js';
-import { startEngine } from './engine.js';
+import { newestOf, startEngine } from './engine.js';
 import { sizes } from './figures.js';
 import { createHandOver } from './hand-over.js';
+import { createFinder } from './finder.js';
 import { createHands } from './hands.js';
 import { createHead } from './head.js';
 import { createKeys } from './keys.js';
+import { eitherHands } from './limits.js';
 import { openedPlan } from './link.js';
 import { createOpenedFindings } from './opened-findings.js';
 import { createOwnTable } from './own-table.js';
@@ -51,6 +53,8 @@ let painted = null;
 const first = new Promise((resolve) => { painted = resolve; });
 const engine = startEngine({ payload: (name) => first.then(() => packedPart(name)), onFail: failed });
 const asking = createAsking({ engine, state, view, figures: page.pictures.visible, sizes, units: () => ({ ...units.now }), onLate: head.late, onAnswer: answered, onFault: fault });
+const finder = createFinder({ opening, engine, more: () => startEngine(), newest: newestOf(engine.ask), plan: () => state.now.plan, pending: () => state.now.pending.length > 0, quantities, units: () => ({ ...units.now }), status, take: takePlan });
+const allHands = eitherHands(hands, finder.limits, finder.owns);
 
 const given = { engine, plan: () => state.now.plan, units: () => quantities.units, isBusy: () => state.now.pending.length > 0 || asking.isOpening() };
 const opened = createOpenedFindings(given);
@@ -69,6 +73,7 @@ function answered(answer, request) {
   address.show(answer.link);
   if (request.opened !== null) handOver.opened(answer.plan);
   if (request.deep) onRequest.forEach((part) => part.refresh());
+  finder.follow();
   const shown = state.committed(request.count);
   page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(shown, Number(root.dataset.shown)); });
 }
@@ -101,6 +106,12 @@ function openExample({ link, title }) {
   openLink(link, title);
 }
 
+// A plan as a whole: one step of undo, one entry of the history.
+function takePlan(plan, link, name) {
+  if (link) address.add(link);
+  state.open(plan, name);
+}
+
 state.watch((cause) => {
   page.redraw();
   travel.update();
@@ -116,12 +127,13 @@ units.watch(() => {
   page.redraw();
   head.update();
   asking.ask();
+  finder.relist();
 });
 createUnitsLine({ button: document.getElementById('units'), line: document.getElementById('units-line'), units });
 
-const wasDragged = listenToDragging(document.body, hands);
-const strip = createStrip(document.getElementById('strip'), hands);
-listenToTyping(document.body, { ...hands, wasDragged, strip });
+const wasDragged = listenToDragging(document.body, allHands);
+const strip = createStrip(document.getElementById('strip'), allHands);
+listenToTyping(document.body, { ...allHands, wasDragged, strip });
 followScheme();
 page.redraw();
 head.update();
@@ -134,6 +146,7 @@ async function begin() {
   await engine.ready;
   root.dataset.engine = 'ready';
   page.redraw();
+  finder.follow();
   head.update();
   handOver.refresh();
 }

@@ -51,7 +51,7 @@ export function createPage({ opening, keys, quantities, typed, state, hands, ask
     pictures.arrange(opening.order[state.now.plan.waveform.kind]);
     const shown = shownByKey(said);
     table.update(state.now.plan, shown);
-    for (const number of document.querySelectorAll('.number')) setNumber(number, looks.look(number.dataset.key, shown.get(number.dataset.key)));
+    for (const number of document.querySelectorAll('.number:not([data-key^="find."])')) setNumber(number, looks.look(number.dataset.key, shown.get(number.dataset.key)));
     const refusals = looks.refusals();
     refused.update(refusals);
     const stale = refusals.length ? `shows ${refusals.map(({ still }) => still).join(', ')}` : '';

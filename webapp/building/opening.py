@@ -43,7 +43,11 @@ def opening_json(python):
         One JSON object.
     """
     sources = [path for folder in ('pycore', 'webapp/figures') for path in sorted((ROOT / folder).rglob('*.py'))]
-    sources += [*sorted((WEBAPP / 'examples').glob('*.json')), WEBAPP / 'engine' / 'bridge.py', Path(__file__)]
+    sources += [
+        *sorted((WEBAPP / 'examples').glob('*.json')),
+        *sorted((WEBAPP / 'engine').glob('*.py')),
+        Path(__file__),
+    ]
 
     return made('opening.json', lambda place: compute(python, place), str(python), *sources).read_text(encoding='utf-8')
 
@@ -72,18 +76,20 @@ def opening():
     Returns
     -------
     opening : dict
-        answer, items (one Bokeh document for each figure) and their order, keys, grammar, units, examples, version,
-        checksum.
+        answer, items (one Bokeh document for each figure) and their order, keys, grammar, units, finder, examples,
+        version, checksum.
     """
     from pycore import __version__, api
-    from pycore.columns import FIGURES, order
+    from pycore.columns import FIGURES, order, trade_off
     from pycore.plan import keys as plan_keys
+    from pycore.wording import SHOWN_UNITS
     from webapp import figures
 
     plans = examples()
     answer = api.note(plan=plans[EXAMPLES[0]]['plan'], figures=list(FIGURES), deep=True)
     pictures = answer['figures']
     items = {name: figures.build(name, picture) for name, picture in pictures.items()}
+    items[trade_off.NAME] = figures.build(trade_off.NAME, trade_off.picture([], None, 'time', SHOWN_UNITS))
     for picture in pictures.values():
         del picture['columns']  # they are in the figure's own document
 
@@ -94,10 +100,33 @@ def opening():
         'keys': plan_keys.table(),
         'grammar': grammar(),
         'units': units(),
+        'finder': finder(answer['plan']),
         'examples': [{'name': name, **shown(example, api)} for name, example in plans.items()],
         'version': __version__,
         'checksum': content_key(*sorted((ROOT / 'pycore').rglob('*.py'))),
     }
+
+
+def finder(plan):
+    """Return what the search for better plans says before the engine is there.
+
+    Parameters
+    ----------
+    plan : dict
+        The opening plan. [plan's units]
+
+    Returns
+    -------
+    finder : dict
+        Keys of its limits, their sentence, the colours of the small pictures.
+    """
+    from pycore.columns.classes import NAMES
+    from pycore.finder import keys
+    from webapp.engine import searching
+    from webapp.figures.palette import CLASS_ROLES, PALETTE
+
+    said = searching.limits(plan, {})
+    return {'keys': keys.table(), 'said': said, 'colours': [PALETTE[CLASS_ROLES[name]] for name in NAMES]}
 
 
 def grammar():

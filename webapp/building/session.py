@@ -28,7 +28,33 @@ def requests():
     return [
         *({'action': 'note', 'args': args} for args in [*notes, *links]),
         *({'action': 'assess', 'args': {'plan': plan}} for plan in plans),
+        *(request for plan in plans for request in search(plan)),
         {'action': 'no such action', 'args': {}},
+    ]
+
+
+def search(plan):
+    """Return the requests of a short search for better plans.
+
+    Parameters
+    ----------
+    plan : dict
+        What is to be bettered. [plan's units]
+
+    Returns
+    -------
+    requests : list of dict
+        Limits in words, some steps, what they found, a list of nothing.
+    """
+    nothing = {'best': [], 'ends': [], 'by_time': [], 'misses': [], 'nearest': None, 'tried': 0, 'steps': 0}
+    edit = {'key': 'find.n', 'text': '2'}
+
+    return [
+        {'action': 'find limits', 'args': {'plan': plan, 'asked': {}, 'edits': [edit]}},
+        {'action': 'find begin', 'args': {'plan': plan, 'asked': {}, 'seed': 1}},
+        {'action': 'find run', 'args': {'number': 0, 'ms': 500}},
+        {'action': 'find part', 'args': {}},
+        {'action': 'find list', 'args': {'parts': [nothing], 'taken': 0}},
     ]
 
 

@@ -33,13 +33,23 @@ def answer(request_text):
     """
     request = json.loads(request_text)
     try:
-        reply = {'result': api.ACTIONS[request['action']](**request['args'])}
+        reply = {'result': action(request['action'])(**request['args'])}
     except InputError as refused:
         reply = {'error': {'message': str(refused), 'field': refused.field}}
     except Exception as fault:
         reply = {'error': {'message': f'{type(fault).__name__}: {fault}', 'traceback': traceback.format_exc()}}
 
     return packed(reply)
+
+
+def action(name):
+    """Return the action of a name: one of the core's, or one of the search, which is imported when first asked for."""
+    if name.startswith('find '):
+        from webapp.engine import searching
+
+        return searching.ACTIONS[name]
+
+    return api.ACTIONS[name]
 
 
 def packed(value):

@@ -11,10 +11,11 @@ from webapp.figures import (
     dwell,
     eclipsed_ranges,
     trade_line,
+    trade_off,
 )
 
 _IN_ORDER = (blind_zones, trade_line, eclipsed_ranges, blind_speeds, decoding, doppler_filters, detection, dwell)
-_MODULES = {module.NAME: module for module in _IN_ORDER}
+_MODULES = {module.NAME: module for module in (*_IN_ORDER, trade_off)}
 
 
 def drawn(name, picture):
@@ -23,7 +24,7 @@ def drawn(name, picture):
     Parameters
     ----------
     name : str
-        One of ``pycore.columns.FIGURES``. [unitless]
+        One of ``pycore.columns.FIGURES``, or the trade-off of found plans. [unitless]
     picture : dict
         What the core gives for it. [shown units]
 

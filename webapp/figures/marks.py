@@ -17,9 +17,21 @@ def ring(made, name, picture):
     picture : dict
         Its columns, ``target`` among them with x, y. [shown units]
     """
-    target = source(name, picture, 'target')
-    draw(made, target, Scatter(x='x', y='y', size=17, fill_alpha=0, line_width=6, line_alpha=0.95), line_color='paper')
-    draw(made, target, Scatter(x='x', y='y', size=17, fill_alpha=0, line_width=2.5), line_color='line')
+    ring_of(made, source(name, picture, 'target'))
+
+
+def ring_of(made, place):
+    """Draw a ring around points.
+
+    Parameters
+    ----------
+    made : bokeh figure
+        The figure. [unitless]
+    place : ColumnDataSource
+        x, y. [shown units]
+    """
+    draw(made, place, Scatter(x='x', y='y', size=17, fill_alpha=0, line_width=6, line_alpha=0.95), line_color='paper')
+    draw(made, place, Scatter(x='x', y='y', size=17, fill_alpha=0, line_width=2.5), line_color='line')
 
 
 def upright(made, name, picture):
