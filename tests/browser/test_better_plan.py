@@ -6,6 +6,10 @@ import pytest
 from playwright.sync_api import expect
 
 FIND_MS = 60_000  # a search on a busy machine
+LISTED = """() => {
+  const tried = (name) => document.querySelector(`[data-finder="${name}"]`).dataset.tried;
+  return tried('plans') === tried('progress');
+}"""  # the list is of all that was tried
 
 
 class Finder:
@@ -34,6 +38,7 @@ class Finder:
         if self.stop.is_visible():
             self.stop.click()
         expect(self.start).to_be_visible()
+        self.note.page.wait_for_function(LISTED)
         return self
 
 

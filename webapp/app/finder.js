@@ -15,12 +15,12 @@ const LIST_EVERY_MS = { alone: 6000, spared: 2500 }; // a list takes its worker 
 const KEEP_MS = 30000; // further workers are kept for so long after the last search
 const at = (id) => document.getElementById(id);
 
-export function createFinder({ opening, engine, more, newest, plan, pending, quantities, units, status, take }) {
+export function createFinder({ opening, engine, more, newest, plan, pending, quantities, typed, units, status, take }) {
   const keys = createKeys(opening.finder.keys);
   const section = at('finder');
   const hook = (name) => section.querySelector(`[data-finder="${name}"]`);
   const [start, stop] = [hook('start'), hook('stop')];
-  const limits = createLimits({ ask: newest, plan, keys, quantities, families: opening.units.families, units, status, opening: opening.finder.said, onChange: () => draw() });
+  const limits = createLimits({ ask: newest, plan, keys, quantities, typed, families: opening.units.families, units, status, opening: opening.finder.said, onChange: () => draw() });
   const refused = createRefused(at('finder-refused'), limits.putBack, (still) => `The search takes ${still}.`);
   const sentence = createLimitsSentence({ node: at('finder-limits'), wants: at('finder-wants'), refused, limits, keys });
   const progress = createProgress(hook('progress'));
@@ -77,6 +77,7 @@ export function createFinder({ opening, engine, more, newest, plan, pending, qua
     run.told = now;
     if (!crew.running) return;
     progress.told(now);
+    if (hook('plans').matches(':hover, :focus-within')) return; // a row stays under the hand
     const patience = workersToSpare(navigator) ? LIST_EVERY_MS.spared : LIST_EVERY_MS.alone;
     if (now.best && now.best.score !== run.shown && !run.listing && !pending() && performance.now() - run.listed > patience) list();
   }
@@ -123,6 +124,8 @@ export function createFinder({ opening, engine, more, newest, plan, pending, qua
     const answer = await crew.list({ units: units(), against: trade.against(), chosen: null });
     if (!answer) return;
     run.shown = best?.score ?? null;
+    hook('plans').dataset.tried = answer.merged.tried;
+    if (!crew.running) progress.end({ ...run.told, tried: answer.merged.tried });
     const kept = run.rows?.[plans.chosen]?.pris.join();
     run.rows = answer.rows;
     at('finder-found').hidden = answer.rows.length === 0;

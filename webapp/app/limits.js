@@ -3,7 +3,7 @@
 
 const RUN_PAUSE_MS = 400; // a plan that is being edited changes the sentence when the hand rests
 
-export function createLimits({ ask, plan, keys, quantities, families, units, status, opening, onChange }) {
+export function createLimits({ ask, plan, keys, quantities, typed, families, units, status, opening, onChange }) {
   const state = { asked: {}, said: opening, pending: [], refused: [], count: 0, before: null };
   let timer = 0;
 
@@ -33,7 +33,7 @@ export function createLimits({ ask, plan, keys, quantities, families, units, sta
 
   function value(path) {
     const pending = state.pending.findLast(({ key }) => key === path);
-    return pending ? pending.value ?? quantities.plain(pending.text) : pieceOf(path)?.value;
+    return pending ? pending.value ?? typed(keys.of(path), pending.text) : pieceOf(path)?.value;
   }
 
   function shown(path) {
@@ -46,7 +46,7 @@ export function createLimits({ ask, plan, keys, quantities, families, units, sta
 
   function step(path, { count, size, from = value(path), run }) {
     const key = keys.of(path);
-    if (typeof from !== 'number' || Number.isNaN(from)) return;
+    if (typeof from !== 'number') return;
     if (run && state.before?.run !== run) state.before = { run, path, value: value(path) };
     const next = quantities.stepped(key, from, count, size, plan());
     const held = Math.min(Math.max(next, key.lowest), key.highest);
@@ -69,6 +69,7 @@ export function createLimits({ ask, plan, keys, quantities, families, units, sta
       clearTimeout(timer);
       timer = setTimeout(read, RUN_PAUSE_MS);
     },
+    typed: (path, text) => typed(keys.of(path), text),
     asPlan: () => commit({ do: 'as-the-plan' }),
     commit,
     entry: (path) => {

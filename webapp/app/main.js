@@ -53,7 +53,7 @@ let painted = null;
 const first = new Promise((resolve) => { painted = resolve; });
 const engine = startEngine({ payload: (name) => first.then(() => packedPart(name)), onFail: failed });
 const asking = createAsking({ engine, state, view, figures: page.pictures.visible, sizes, units: () => ({ ...units.now }), onLate: head.late, onAnswer: answered, onFault: fault });
-const finder = createFinder({ opening, engine, more: () => startEngine(), newest: newestOf(engine.ask), plan: () => state.now.plan, pending: () => state.now.pending.length > 0, quantities, units: () => ({ ...units.now }), status, take: takePlan });
+const finder = createFinder({ opening, engine, more: () => startEngine(), newest: newestOf(engine.ask), plan: () => state.now.plan, pending: () => state.now.pending.length > 0, quantities, typed, units: () => ({ ...units.now }), status, take: takePlan });
 const allHands = eitherHands(hands, finder.limits, finder.owns);
 
 const given = { engine, plan: () => state.now.plan, units: () => quantities.units, isBusy: () => state.now.pending.length > 0 || asking.isOpening() };
