@@ -99,6 +99,16 @@ def test_while_margins_are_worked_out_an_edit_gets_in_between(opened):
     expect(finding.locator('.margin-sentence')).to_have_text('…')
 
 
+def test_a_plan_that_holds_over_carriers_shows_the_worst_and_where_and_how_it_was_searched(note):
+    plan = 'v=1&pri=980,860us&pulses=9&fill=1&want-visible=95pct&over-carrier=2.7..2.9GHz&holds=yes'
+    note.open(plan).ready()
+    finding = note.finding('visible')
+
+    expect(finding).to_contain_text('over 2.7 to 2.9\u202fGHz', timeout=MARGINS_MS)
+    finding.get_by_role('button', name='How it comes about').click()
+    expect(finding).to_contain_text('65 points and of finer ones around it', timeout=MARGINS_MS)
+
+
 def test_opened_workings_print_and_closed_ones_do_not(opened):
     opened.finding('dwell').get_by_role('button', name='How it comes about').click()
     expect(opened.finding('dwell')).to_contain_text('Σ (n + fill) T')

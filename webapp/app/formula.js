@@ -1,8 +1,8 @@
 // A formula of the workings, set as it is read aloud: letters in italics, subscripts and superscripts where they belong.
 // Knows how the core writes formulas as text (`v_b`, `p^k`, `Σ_{k≥M}`), nothing of what they mean.
 
-const TOKEN = /_\{([^}]*)\}|_([A-Za-z0-9]+)|\^\(([^)]*)\)|\^([A-Za-z0-9]+)|(S\/N)|([0-9][0-9.]*\s?K\b)|([A-Za-zα-ωΓ-Ω]+)/gu;
-const UPRIGHT = new Set(['a', 'I', 'dB', 'Hz', 'ms', 'Σ', 'π', 'of']);
+const TOKEN = /_\{([^}]*)\}|_([A-Za-z0-9]+)|\^\(([^)]*)\)|\^([A-Za-z0-9]+)|(S\/N|k?m\/[sh])|([0-9][0-9.]*\s?K\b)|([A-Za-zα-ωΓ-Ω]+)/gu;
+const UPRIGHT = new Set(['a', 'A', 'I', 'dB', 'Hz', 'ms', 'Σ', 'π', 'of']);
 const GREEK = /[α-ω]/u;
 const NAMED = /^([^=]{1,40}?)( [=≤≥<>] )/u; // what stands before a sign of equality is a name or a formula
 
@@ -45,7 +45,7 @@ function piece([whole, subBraced, sub, supBraced, sup, ratio, kelvin, letters]) 
   return ratio || kelvin ? [{ text: whole }] : quantities(letters);
 }
 
-// Letters without a space between them are one quantity after another (`cT`, `qτ`); a word is a word.
+// A sentence may begin with A, and no quantity here is called so. Letters without a space between them are one quantity after another (`cT`, `qτ`); a word is a word.
 function quantities(letters) {
   if (UPRIGHT.has(letters)) return [{ text: letters }];
   const product = letters.length === 1 || (letters.length === 2 && /^[a-z][A-Z]$/.test(letters)) || (letters.length < 4 && GREEK.test(letters));

@@ -1,13 +1,12 @@
 // Which findings are opened, and what they show: asked of the engine after the pause, in slices that let an edit in between.
 // Knows the plan's state and the engine; how workings look is workings.js's.
 
-const SLICE_MS = 60; // how long one slice may keep the engine; an edit waits no longer than that
+const SLICE_MS = 50; // how long the verdicts of one slice may keep the engine; an edit waits little longer than that
 const MOST_TRIES = 200;
 
 export function createOpenedFindings({ engine, plan, units, isBusy }) {
   const opened = new Map();
   let run = { isGoing: false };
-  let tries = 4;
 
   // One run works through all that is open, and takes in what is opened meanwhile; an edit makes it stop.
   async function refresh() {
@@ -40,11 +39,12 @@ export function createOpenedFindings({ engine, plan, units, isBusy }) {
 
   async function inSlices(given, isOld) {
     let answer = { done: false, so_far: null };
+    let pace = { tries: 1, besides: null };
     while (!answer.done) {
       const start = performance.now();
-      answer = await engine.ask('margins_in_words', { ...given, so_far: answer.so_far, tries });
+      answer = await engine.ask('margins_in_words', { ...given, so_far: answer.so_far, tries: pace.tries });
       if (isOld()) return null;
-      tries = paced(tries, performance.now() - start);
+      pace = paced(pace, performance.now() - start);
     }
     return answer;
   }
@@ -68,7 +68,10 @@ export function createOpenedFindings({ engine, plan, units, isBusy }) {
   };
 }
 
-// As many verdicts as fit into a slice, from what the last one took.
-function paced(tries, took) {
-  return Math.max(1, Math.min(MOST_TRIES, Math.round(tries * Math.min(2, SLICE_MS / Math.max(took, 1)))));
+// As many verdicts as fit into a slice. What a slice costs besides them (reading the plan, taking up the walk) is not counted:
+// it was measured with a single one, and slices of nothing else would never end.
+function paced({ tries, besides }, took) {
+  if (besides === null) return { tries: 2, besides: took };
+  const each = Math.max(took - besides, 0.5) / tries;
+  return { tries: Math.max(1, Math.min(MOST_TRIES, 2 * tries, Math.round(SLICE_MS / each))), besides: Math.min(besides, took) };
 }
