@@ -55,6 +55,15 @@ def test_the_timing_table_follows_the_plan(opened):
     expect(hand_over(opened)).to_contain_text('One set takes 184\u202f100 counts')
 
 
+def test_right_after_an_edit_nothing_of_the_earlier_plan_is_handed_over(opened):
+    expect(hand_over(opened)).to_contain_text('One set takes 184\u202f000 counts')
+    opened.commit('waveform.pri_us.1', '861')
+    opened.page.get_by_role('button', name='Undo').click()
+
+    expect(hand_over(opened)).not_to_contain_text('184\u202f100')
+    expect(hand_over(opened)).to_contain_text('One set takes 184\u202f000 counts')
+
+
 def test_the_timing_table_is_copied_as_csv_and_as_text(opened):
     hand_over(opened).get_by_role('button', name='Timing table').click()
     hand_over(opened).get_by_role('button', name='Copy as CSV').click()

@@ -32,6 +32,15 @@ export function createHandOver({ engine, plan, units, status, isBusy, opened }) 
 
   return {
     refresh: part.refresh,
+    // After an edit nothing of the earlier plan may be read, copied or printed as if it were this one's.
+    wait() {
+      part.forget();
+      answer = null;
+      setText(at('timing-sums'), '…');
+      at('timing-table').replaceChildren();
+      at('changed').replaceChildren();
+      at('changed-heading').hidden = true;
+    },
     opened: (first) => { origin = first; },
   };
 }

@@ -116,7 +116,7 @@ state.watch((cause) => {
   page.redraw();
   travel.update();
   head.update();
-  if (cause !== 'answer') opened.wait();
+  if (cause !== 'answer') [opened, handOver].forEach((part) => part.wait());
   if (cause === 'travel') asking.open(null);
   if (cause !== 'answer') asking.ask();
 });

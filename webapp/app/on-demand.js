@@ -19,5 +19,5 @@ export function createOnDemand({ isWanted, args, ask, show, fail, isBusy }) {
     await ask(given).then(settle(show), settle((error) => fail(error.message)));
   }
 
-  return { refresh };
+  return { refresh, forget: () => { shown = ''; } }; // after forgetting, what is shown is worked out anew
 }
