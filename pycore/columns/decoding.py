@@ -14,7 +14,7 @@ import numpy as np
 from pycore.candidates import agreement, comb
 from pycore.columns.axes import range_axis
 from pycore.columns.decoding_words import span_text, words
-from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
+from pycore.columns.lanes import lane_bars, lane_range, middles, room_ticks
 from pycore.columns.mark import across
 from pycore.columns.named import names_at
 from pycore.columns.prf_names import prf_names
@@ -23,9 +23,13 @@ from pycore.follow import blur_half_widths, ghosts_of
 
 NAME, TITLE = 'decoding', 'Decoding'
 
+SIZE = {'width': 560, 'height': 270}
+"""The plot where the page has not said how large it is. [px]"""
+
 _SPANS_AT = np.array([-0.8, -1.7])
 _SPANS_LOW = -2.2
-_ALONE = -1.6, 0.0
+_MANY = 9.0
+_ALONE = -2.1, 0.5
 _NO_BARS = np.zeros((0, 2))
 
 
@@ -80,7 +84,7 @@ def picture(computed, units, size=None, view=WHOLE):
     units : mapping
         Units that the reader prefers. [unitless]
     size : mapping or None
-        Not used: nothing here depends on the size. [px]
+        Width and height of the plot, which say how many names there is room for. [px]
     view : View
         What the reader has chosen to look at. [unitless]
 
@@ -93,7 +97,7 @@ def picture(computed, units, size=None, view=WHOLE):
     names = prf_names(plan, units)
     found = None if computed.is_stagger else decoded(computed, view.mark)
     n = 0 if computed.is_stagger else plan.n
-    lane_ends = _ALONE if computed.is_stagger else (_SPANS_LOW, lane_range(n, n > 1)[1])
+    lane_ends = _ALONE if computed.is_stagger else (_SPANS_LOW * _apart(n), lane_range(n, n > 1)[1])
     lowest = lane_ends[0] if computed.is_stagger else 0.0
     return {
         'title': TITLE,
@@ -106,7 +110,7 @@ def picture(computed, units, size=None, view=WHOLE):
         'ranges': {'x': axis.ends, 'y': list(lane_ends)},
         'labels': {'x': axis.label, 'y': ''},
         'units': {'x': axis.unit},
-        'ticks': {'y': _ticks(computed, names[:n])},
+        'ticks': {'y': _ticks(computed, names[:n], (size or SIZE)['height'] / (lane_ends[1] - lane_ends[0]))},
     }
 
 
@@ -184,17 +188,23 @@ def _spans(computed, axis):
     text = [span_text(span.exact, span, axis), span_text(span.blurred, span, axis)]
     if computed.is_stagger:
         values, reach, text = values[1:], reach[1:], text[1:]
-    at = _SPANS_AT[: len(reach)]
+    at = _SPANS_AT[: len(reach)] * (1.0 if computed.is_stagger else _apart(computed.plan.n))
     return {
         'spans': lane_bars(at, axis, np.arange(at.size), np.full(at.size, low), reach),
         'span-names': names_at(np.full(at.size, axis.ends[0]), at, text, ['center_left'] * at.size, 2.0),
     }
 
 
-def _ticks(computed, names):
+def _apart(n):
+    """Return how much farther apart the spans stand among many lanes, which are low."""
+    return max(1.0, n / _MANY)
+
+
+def _ticks(computed, names, px_per_lane):
     """Return the names of the lanes: spans at the bottom, PRFs, the lane that counts."""
     if computed.is_stagger:
         return {'at': [float(_SPANS_AT[0])], 'text': ['unambiguous']}
     counted = f'{computed.m} of {computed.plan.n}' if computed.plan.n > 1 else None
-    lanes = lane_ticks(names, counted)
-    return {'at': [*_SPANS_AT[::-1].tolist(), *lanes['at']], 'text': ['with blur', 'no error', *lanes['text']]}
+    lanes = room_ticks(names, counted, px_per_lane)
+    at = _SPANS_AT[::-1] * _apart(computed.plan.n)
+    return {'at': [*at.tolist(), *lanes['at']], 'text': ['with blur', 'no error', *lanes['text']]}

@@ -71,7 +71,7 @@ def picture(computed, units, size=None, view=WHOLE):
             'target': across(view.mark and view.mark.range_m, axis, lanes),
         },
         'ranges': {'x': axis.ends, 'y': lanes},
-        'labels': {'x': axis.label, 'y': 'under each lane: received share of the echo' if shared else ''},
+        'labels': {'x': axis.label, 'y': 'received share under each lane' if shared else ''},
         'units': {'x': axis.unit},
         'ticks': {'y': thin.ticks(ticks)},
     }

@@ -9,6 +9,9 @@ import numpy as np
 GAP = 0.3
 """Space between the PRFs' lanes and the top one. [lanes]"""
 
+_LEAST_PX = 11.5
+"""Height of a lane in which a name of its own can be read. [px]"""
+
 
 def middles(n):
     """Return where the PRFs' lanes and the top lane have their middles.
@@ -73,6 +76,31 @@ def lane_bars(middle, axis, prf=None, start=None, stop=None):
         'left': axis.shown(np.asarray(start, dtype=float)),
         'right': axis.shown(np.asarray(stop, dtype=float)),
     }
+
+
+def room_ticks(names, top_name, px_per_lane):
+    """Return the same as :func:`lane_ticks`, every second PRF left out where their names would meet.
+
+    Parameters
+    ----------
+    names : sequence of str
+        The PRFs' names. [unitless]
+    top_name : str or None
+        The top lane's name. [unitless]
+    px_per_lane : float
+        Height of a lane. [px]
+
+    Returns
+    -------
+    ticks : dict
+        ``at`` and ``text``, from the bottom up. [lanes]
+    """
+    ticks, n = lane_ticks(names, top_name), len(names)
+    if px_per_lane >= _LEAST_PX:
+        return ticks
+    # The first PRF, which is uppermost, always has its name.
+    kept = [i for i in range(len(ticks['at'])) if i >= n or (n - 1 - i) % 2 == 0]
+    return {key: [ticks[key][i] for i in kept] for key in ('at', 'text')}
 
 
 def lane_ticks(names, top_name):

@@ -39,6 +39,13 @@ export function update(name, { columns, ranges, labels, ticks, holds = {} }) {
     named.get(`${name}/y-label`).text = labels.y;
   }
   for (const [source, data] of Object.entries(columns)) named.get(`${name}/${source}`).data = columnsOf(data);
+  repaintIfMoved(mounted.get(name).view);
+}
+
+// Where the words beside an axis have become wider, the canvas keeps ticks of before until it is painted once more.
+function repaintIfMoved(view) {
+  const { left } = view.frame.bbox;
+  requestAnimationFrame(() => requestAnimationFrame(() => { if (view.frame.bbox.left !== left) view.request_paint(); }));
 }
 
 export function setScheme(name) {
