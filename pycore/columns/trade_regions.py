@@ -16,6 +16,9 @@ _REGIMES = (
 _CLOSE = 0.17
 """Part of an axis within which names would meet. [unitless]"""
 
+_UNDER_BANDS = 18.0
+"""How far names at the top stand under those of the bands. [px]"""
+
 _ALONG = 0.82
 """Part of a line, as drawn, after which its name stands. [unitless]"""
 
@@ -47,7 +50,7 @@ def regions(plan, reach, speed, x, y):
         # Where the plan's own marks stand at the crossing, the names go to the ends of the line across the range.
         level = np.array([top, bottom, bottom, top])
         anchor = ['top_left', 'bottom_left', 'bottom_right', 'top_right']
-        dy = [-down for down in dy]
+        dy = [_UNDER_BANDS, -3.0, -3.0, _UNDER_BANDS]
     return {
         'asked': {name: np.array([value]) for name, value in box},
         'regimes': {
