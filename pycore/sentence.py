@@ -1,7 +1,8 @@
 """The plan in words: the paragraph, its rail of PRIs, and the Also line, from the templates of ``clauses``.
 
 Everything comes out as *pieces*: ``{'text': …}``, a live number ``{'key': path,
-'shown': text}``, an action ``{'do': action, 'text': words}`` or the rail
+'shown': text}``, an action ``{'do': action, 'text': words}`` (with
+``at``, a place in a list, and ``name``, where it needs them) or the rail
 ``{'rail': [cell, …]}``, so that a page can lay them out and plain text is the
 pieces joined. The algorithm is kept simple enough to stand a second time on the
 page; ``tests/core/sentences.json`` holds the two against each other.
@@ -9,13 +10,14 @@ page; ``tests/core/sentences.json`` holds the two against each other.
 
 import re
 
-from pycore.clauses import ALSO, CLAUSES, NOT_IN_ALSO, PATCH
+from pycore.clauses import ALSO, CLAUSES, NOT_IN_ALSO, PATCH, RAIL, REGION, REGION_REPORTED
 from pycore.plan.keys import BY_PATH, GROUPS, JUDGED, OPTIONAL_RECORDS
 from pycore.plan.paths import key_of, value_at
 from pycore.shown import shown_digits, shown_unit, shown_value
 from pycore.wording import SHOWN_UNITS
 
 _FEW = 4
+_UNNAMED = 'what has no name'
 _SLOT = re.compile(r'\{([^}]*)\}')
 _PER_PRF = ('radar.carrier_ghz', 'radar.pulse_us', 'radar.bandwidth_mhz', 'doppler.notch_mps')
 _PER_CPI = ('waveform.pulses', 'waveform.fill_pulses')
@@ -74,20 +76,26 @@ def clauses(plan, units=SHOWN_UNITS):
             continue
         taken.add(clause['id'])
         out.append({'id': clause['id'], 'short': clause['short'], 'pieces': _pieces(clause['text'], plan, units)})
-    out.extend(_patch_clauses(plan, units, known))
+        if clause['id'] == 'sees':
+            out.extend(_each('must-see', 'must_see', plan, units, _region))
+    if known['rain'] == 'several':
+        out.extend(_each('rain', 'rain', plan, units, lambda patch: PATCH))
     spoken = {key_of(piece['key']).path for clause in out for piece in clause['pieces'] if 'key' in piece}
     also = _also(plan, units, spoken)
     return [*out, {'id': 'also', 'short': False, 'pieces': also}] if also else out
 
 
-def _patch_clauses(plan, units, known):
-    """Return one clause for each patch where rain is a list of them, and the action that takes them away."""
-    if known['rain'] != 'several':
-        return []
-    each = [PATCH.replace('@', f'rain.{index}') for index in range(len(plan['rain']))]
-    each[-1] += ' {do remove-rain|No rain}'
-    made = enumerate(_pieces(text, plan, units) for text in each)
-    return [{'id': f'rain-{index}', 'short': False, 'pieces': pieces} for index, pieces in made]
+def _each(name, path, plan, units, template):
+    """Return one clause for each record of a list."""
+    out = []
+    for index, record in enumerate(value_at(plan, path)):
+        text = template(record).replace('@', f'{path}.{index}').replace('#', str(index))
+        out.append({'id': f'{name}-{index}', 'short': False, 'pieces': _pieces(text, plan, units)})
+    return out
+
+
+def _region(region):
+    return REGION_REPORTED if region['visible_pct'] is None else REGION
 
 
 def _pieces(template, plan, units):
@@ -117,8 +125,7 @@ def _slot(slot, plan, units):
     if slot.startswith('list '):
         return _list(slot.removeprefix('list '), plan, units)
     if slot.startswith('do '):
-        action, _, words = slot.removeprefix('do ').partition('|')
-        return [{'do': action, 'text': words}]
+        return [_action(*slot.removeprefix('do ').split('|'))]
     if slot.startswith('goes '):
         return [{'text': _goes(value_at(plan, slot.removeprefix('goes ')))}]
     if slot == 'rail':
@@ -129,15 +136,26 @@ def _slot(slot, plan, units):
         path, _, forms = slot.partition('?')
         one, _, many = forms.partition('|')
         return [{'text': one if value_at(plan, path) == 1 else many}]
-    path, _, bare = slot.partition('|')
-    return [_number(path, plan, units, bare=bool(bare))]
+    path, _, how = slot.partition('|')
+    return [_number(path, plan, units, how)]
 
 
-def _number(path, plan, units, bare=False):
+def _action(action, words, name=None):
+    """Return an action in words; ``remove-rain.2`` is done to the third patch."""
+    action, _, at = action.partition('.')
+    return {'do': action, 'text': words, **({'at': int(at)} if at else {}), **({'name': name} if name else {})}
+
+
+def _number(path, plan, units, how=''):
     key, value = key_of(path), value_at(plan, path)
+    if key.kind == 'choice':
+        return {'text': key.said(value)}
     if isinstance(value, str):
-        return {'text': value[:1].upper() + value[1:]}
-    shown = shown_digits(key, value, units) if bare and value is not None else shown_value(key, value, units)
+        named = value or _UNNAMED
+        return {'key': path, 'shown': named if how == 'name' else named[:1].upper() + named[1:]}
+    if how == 'no' and value == 0:
+        return {'key': path, 'shown': 'no'}
+    shown = shown_digits(key, value, units) if how == 'bare' and value is not None else shown_value(key, value, units)
     return {'key': path, 'shown': shown}
 
 
@@ -147,7 +165,7 @@ def _list(path, plan, units):
     for index in range(count):
         if index:
             pieces.append({'text': ' and ' if index == count - 1 else ', '})
-        pieces.append(_number(f'{path}.{index}', plan, units, bare=index < count - 1))
+        pieces.append(_number(f'{path}.{index}', plan, units, 'bare' if index < count - 1 else ''))
     return pieces
 
 
@@ -191,14 +209,23 @@ def rail(plan, units=SHOWN_UNITS):
     cells = []
     for index, pri in enumerate(plan['waveform']['pri_us']):
         lines = [_number(f'waveform.pri_us.{index}', plan, units), {'text': shown_value(key, pri, other)}]
-        cells.append([*lines, *(_number(f'{path}.{index}', plan, units) for path in lists)])
+        cells.append([*lines, *(_differing(path, index, plan, units) for path in lists)])
     return cells
+
+
+def _differing(path, index, plan, units):
+    """Return the line of a cell for what differs by PRF, with the words that say what it is."""
+    before, one, many = RAIL.get(path, ('', '', ''))
+    number = _number(f'{path}.{index}', plan, units)
+    return {**number, 'before': before, 'after': one if value_at(plan, number['key']) == 1 else many}
 
 
 def _also(plan, units, spoken):
     """Return the Also line: what is off its default and stands nowhere else in the paragraph."""
-    items = [_pieces(one['text'], plan, units) for one in ALSO if value_at(plan, one['record']) is not None]
+    own = [one for one in ALSO if _is_said(value_at(plan, one['path']), one)]
+    items = [_pieces(one['text'], plan, units) for one in own]
     spoken = spoken | {key_of(piece['key']).path for item in items for piece in item if 'key' in piece}
+    spoken = spoken | {one['path'] for one in own}
     for key in BY_PATH.values():
         if key.path not in spoken and _off_default(key, plan):
             items.append(_item(key, plan, units))
@@ -209,6 +236,10 @@ def _also(plan, units, spoken):
         pieces.extend([{'text': '; '}] if index else [])
         pieces.extend(item)
     return _joined([*pieces, {'text': '.'}])
+
+
+def _is_said(value, one):
+    return value in one['is'] if 'is' in one else value is not None
 
 
 def _off_default(key, plan):
@@ -228,6 +259,8 @@ def _item(key, plan, units):
     label, value = key.label[:1].lower() + key.label[1:], value_at(plan, key.path)
     if value is True:
         return [{'text': label}]
+    if key.kind == 'choice':
+        return [{'text': key.said(value)}]
     if key.kind in ('number', 'count') and value is not None:
         return [{'text': f'{label} '}, _number(key.path, plan, units)]
     return [{'text': f'{label} {shown_value(key, value, units)}'}]
@@ -255,10 +288,12 @@ def _plain(pieces):
     parts = []
     for piece in pieces:
         if 'rail' in piece:
-            parts.append(
-                '; '.join(', '.join(line.get('shown', line.get('text')) for line in cell) for cell in piece['rail'])
-                + '.'
-            )
+            parts.append('; '.join(', '.join(map(_line, cell)) for cell in piece['rail']) + '.')
         elif 'do' not in piece:
             parts.append(piece.get('shown', piece.get('text')))
     return ''.join(parts).strip()
+
+
+def _line(line):
+    """Return one line of a cell as plain text."""
+    return f'{line.get("before", "")}{line.get("shown", line.get("text"))}{line.get("after", "")}'

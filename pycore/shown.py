@@ -115,7 +115,7 @@ def shown_value(key, value, units):
     if isinstance(value, bool):
         return 'yes' if value else 'no'
     if isinstance(value, str):
-        return value
+        return key.said(value)
     if isinstance(value, list):
         unit = shown_unit(key, units)
         joint = ' to ' if key.kind == 'interval' else ', '

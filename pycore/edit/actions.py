@@ -3,7 +3,7 @@
 from pycore.edit import pris as edit_pris
 from pycore.errors import InputError
 from pycore.plan.document import shown
-from pycore.plan.keys import MOST_PATCHES, MOST_REGIONS, OPTIONAL_RECORDS
+from pycore.plan.keys import BY_PATH, MOST_PATCHES, MOST_REGIONS, OPTIONAL_RECORDS
 from pycore.plan.paths import put, value_at
 
 
@@ -25,6 +25,52 @@ def _remove_record(path):
         put(plan, path, None)
         if path == 'weather':
             plan['purpose'] = 'targets'
+        return []
+
+    return remove
+
+
+def _add_near_pulse(plan, edit, units):
+    """Add a near pulse, sent when the long one and the guard are over."""
+    radar = plan['radar']
+    if radar['near_pulse'] is None:
+        longest = max(radar['pulse_us']) if isinstance(radar['pulse_us'], list) else radar['pulse_us']
+        usual = BY_PATH['radar.near_pulse.sent_at_us'].default
+        radar['near_pulse'] = {'sent_at_us': max(usual, longest + radar['guard_us'])}
+    return []
+
+
+def _add_weather(plan, edit, units):
+    """Judge the plan by the speeds of weather that it measures."""
+    plan['purpose'] = 'weather'
+    if plan['weather'] is None:
+        plan['weather'] = {}
+    return []
+
+
+def _add_over_carrier(plan, edit, units):
+    """Judge by the worst over carriers: two per cent to either side until it is said otherwise."""
+    carriers = plan['radar']['carrier_ghz']
+    middle = carriers[0] if isinstance(carriers, list) else carriers
+    key = BY_PATH['holds_over.carrier_ghz']
+    ends = [min(max(float(f'{middle * share:.3g}'), key.lowest), key.highest) for share in (0.98, 1.02)]
+    put(plan, key.path, ends if ends[0] < ends[1] else key.start)
+    return []
+
+
+def _add_over_rain(plan, edit, units):
+    """Judge by the worst over speeds of the rain."""
+    put(plan, 'holds_over.rain_mps', list(BY_PATH['holds_over.rain_mps'].start))
+    return []
+
+
+def _remove_over(name):
+    """Make the action that takes one interval of *holds over* away, and the record with the last of them."""
+
+    def remove(plan, edit, units):
+        if plan['holds_over'] is not None:
+            left = {**plan['holds_over'], name: None}
+            plan['holds_over'] = left if any(value is not None for value in left.values()) else None
         return []
 
     return remove
@@ -117,6 +163,12 @@ ACTIONS = {
     'join': edit_pris.join,
     'set-kind': edit_pris.set_kind,
     **dict(_record_actions()),
+    'add-near-pulse': _add_near_pulse,
+    'add-weather': _add_weather,
+    'add-over-carrier': _add_over_carrier,
+    'add-over-rain': _add_over_rain,
+    'remove-over-carrier': _remove_over('carrier_ghz'),
+    'remove-over-rain': _remove_over('rain_mps'),
     'add-rain': _add_rain,
     'remove-rain': _remove_rain,
     'add-must-see': _add_region,

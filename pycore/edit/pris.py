@@ -13,7 +13,7 @@ from pycore.plan.document import checked_number, shown
 from pycore.plan.keys import BY_PATH, KEYS, MOST_PRIS
 from pycore.plan.paths import known_key, put, value_at
 from pycore.quantity import typed_list
-from pycore.shown import digits, shown_unit
+from pycore.shown import shown_unit, shown_value
 from pycore.units import FAMILIES
 from pycore.wording import count_word
 
@@ -278,8 +278,7 @@ def join(plan, edit, units):
     if not key.per_prf or not isinstance(value, list):
         return []
     put(plan, key.path, value[0])
-    unit = f' {key.unit}' if key.unit else ''
-    return [f'{key.label} is now {digits(value[0])}{unit} on every PRF.'] if len(set(value)) > 1 else []
+    return [f'{key.label} is now {shown_value(key, value[0], units)} on every PRF.'] if len(set(value)) > 1 else []
 
 
 def set_kind(plan, edit, units):
@@ -306,7 +305,7 @@ def set_kind(plan, edit, units):
             value = value_at(kept, path)
             if value is not None or path == 'doppler.weights' and 'weights' in (kept.get('doppler') or {}):
                 put(plan, path, copy.deepcopy(value))
-        return []
+        return rounded_pris(plan, plan['radar']['clock_mhz'])
     name = {'dwells': 'dwells', 'stagger': 'stagger'}[before]
     other = 'stagger' if before == 'dwells' else 'dwells'
     if before == plan['waveform']['kind']:

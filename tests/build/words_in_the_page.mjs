@@ -17,7 +17,7 @@ function words({ plan, units }) {
 
 function plain(piece) {
   if (piece.rail) return `${piece.rail.map((cell) => cell.map(plain).join(', ')).join('; ')}.`;
-  return piece.do ? '' : piece.shown ?? piece.text;
+  return piece.do ? '' : `${piece.before ?? ''}${piece.shown ?? piece.text}${piece.after ?? ''}`;
 }
 
 console.log(JSON.stringify({

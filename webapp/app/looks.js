@@ -26,6 +26,7 @@ export function createLooks({ state, keys, quantities, typed, engineState }) {
       shown: pending ?? said ?? alone(path, key, value),
       value,
       label: key?.label ?? path,
+      words: key?.kind === 'text',
       lowest: key?.lowest,
       highest: key?.highest,
       waiting: pending !== undefined && engineState() !== 'ready',

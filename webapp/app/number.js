@@ -26,13 +26,14 @@ export function setNumber(number, look) {
   if (!number.classList.contains('open')) setText(number, text);
   else if (!isTouched(number)) refill(number, text);
   number.classList.toggle('waiting', Boolean(look.waiting));
+  number.classList.toggle('words', Boolean(look.words));
   number.classList.toggle('plain', Boolean(look.plain));
   setAttributes(number, look.plain ? PLAIN : {
-    role: 'spinbutton',
+    role: look.words ? 'textbox' : 'spinbutton',
     tabindex: '0',
     'aria-label': look.label,
     'aria-valuenow': Number.isFinite(look.value) ? look.value : null,
-    'aria-valuetext': look.waiting ? `${text}, waiting for the engine` : text,
+    'aria-valuetext': look.words ? null : look.waiting ? `${text}, waiting for the engine` : text,
     'aria-valuemin': look.lowest,
     'aria-valuemax': look.highest,
     'aria-invalid': look.invalid ? 'true' : null,

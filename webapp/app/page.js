@@ -1,5 +1,6 @@
 // All parts of the page and how they are repainted: from the state after every edit, from an answer when one has come.
 
+import { createAdding } from './adding.js';
 import { copyAsSentence } from './copying.js';
 import { createFindings } from './findings.js';
 import { createKeysTable } from './keys-table.js';
@@ -22,13 +23,14 @@ export function createPage({ opening, keys, quantities, typed, state, hands, ask
   const numberFor = createNumbers();
   const looks = createLooks({ state, keys, quantities, typed, engineState });
   const sentence = createSentence({ grammar: opening.grammar, keys, quantities });
-  const paragraph = createParagraph({ node: at('paragraph'), numberFor, act: (action) => hands.act(action) });
+  const paragraph = createParagraph({ node: at('paragraph'), numberFor, act: (action, given) => hands.act(action, given) });
   const verdict = createVerdict(at('verdict'));
   const findings = createFindings(at('findings'), (name, text) => hands.act('remark', { finding: name, text }), onOpen);
   const refused = createRefused(at('refused'), hands.putBack);
   const title = createTitle(at('title'), { label: keys.of('title').label, longest: keys.of('title').longest, commit: (text) => hands.commit({ key: 'title', text }) });
   const pictures = createPictures({ chief: at('chief'), rest: at('figures'), items: opening.items, titles: Object.fromEntries(Object.entries(opening.answer.figures).map(([name, { title }]) => [name, title])), onSeen: () => seen(), choose });
   const table = createKeysTable({ box: at('quantities'), place: at('quantities-tables'), keys, numberFor, commit: hands.commit });
+  const adding = createAdding({ node: at('adding'), keys, hands });
   const redraws = { running: false, wanted: false };
   let painted = 0;
   let painting = Promise.resolve();
@@ -52,6 +54,7 @@ export function createPage({ opening, keys, quantities, typed, state, hands, ask
     const shown = shownByKey(said);
     table.update(state.now.plan, shown);
     for (const number of document.querySelectorAll('.number:not([data-key^="find."])')) setNumber(number, looks.look(number.dataset.key, shown.get(number.dataset.key)));
+    adding.update(state.now.plan);
     const refusals = looks.refusals();
     refused.update(refusals);
     const stale = refusals.length ? `shows ${refusals.map(({ still }) => still).join(', ')}` : '';

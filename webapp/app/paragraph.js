@@ -4,7 +4,7 @@
 import { quietButton } from './fields.js';
 import { setText } from './number.js';
 
-const RAIL_ACTIONS = [{ do: 'add-pri', text: '+', label: 'Add a PRI' }, { do: 'sort-pris', text: 'Sort', label: 'Sort the PRIs' }];
+const RAIL_ACTIONS = [{ do: 'add-pri', text: '+', name: 'Add a PRI' }, { do: 'sort-pris', text: 'Sort', name: 'Sort the PRIs' }];
 
 export function createParagraph({ node, numberFor, act }) {
   const parts = new Map();
@@ -16,11 +16,12 @@ export function createParagraph({ node, numberFor, act }) {
     return piece.rail ? railFor(piece.rail) : piece.text;
   }
 
-  function buttonFor({ do: action, text, label }) {
-    if (!buttons.has(action)) buttons.set(action, quietButton(text, label, () => act(action)));
-    setText(buttons.get(action), text);
-    buttons.get(action).setAttribute('aria-label', label ?? text);
-    return buttons.get(action);
+  function buttonFor({ do: action, text, at, name }) {
+    const id = `${action} ${at ?? ''}`;
+    if (!buttons.has(id)) buttons.set(id, quietButton(text, name, () => act(action, at === undefined ? {} : { index: at })));
+    setText(buttons.get(id), text);
+    buttons.get(id).setAttribute('aria-label', name ?? text);
+    return buttons.get(id);
   }
 
   function railFor(cells) {
@@ -38,9 +39,9 @@ export function createParagraph({ node, numberFor, act }) {
     return cell;
   }
 
-  function lineFor({ key, text }, i, row) {
+  function lineFor({ key, text, before, after }, i, row) {
     const line = partFor(`line ${i} ${row}`, key ? 'rail-line' : 'rail-other');
-    lay(line, [key ? numberFor(key) : text]);
+    lay(line, key ? [before, numberFor(key), after].filter(Boolean) : [text]);
     return line;
   }
 

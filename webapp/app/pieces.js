@@ -2,18 +2,27 @@
 
 import { valueAt } from './keys.js';
 
-export function numberPiece(path, plan, { keys, quantities }, bare = false) {
+const UNNAMED = 'what has no name';
+
+// `how` is 'bare' (no unit), 'no' (a count that is "no" when it is nought) or 'name' (a text as it was typed).
+export function numberPiece(path, plan, { keys, quantities }, how = '') {
   const [key, value] = [keys.of(path), valueAt(plan, path) ?? null];
-  if (typeof value === 'string') return { text: value.slice(0, 1).toUpperCase() + value.slice(1) };
-  return { key: path, shown: bare && value !== null ? quantities.digitsOf(key, value) : quantities.shown(key, value) };
+  if (key.kind === 'choice') return { text: quantities.shown(key, value) };
+  if (typeof value === 'string') return { key: path, shown: how === 'name' ? value || UNNAMED : capital(value || UNNAMED) };
+  if (how === 'no' && value === 0) return { key: path, shown: 'no' };
+  return { key: path, shown: how === 'bare' && value !== null ? quantities.digitsOf(key, value) : quantities.shown(key, value) };
 }
 
 export function listPieces(path, plan, context) {
   const count = valueAt(plan, path).length;
   return Array.from({ length: count }, (_, i) => i).flatMap((i) => [
     ...(i ? [{ text: i === count - 1 ? ' and ' : ', ' }] : []),
-    numberPiece(`${path}.${i}`, plan, context, i < count - 1),
+    numberPiece(`${path}.${i}`, plan, context, i < count - 1 ? 'bare' : ''),
   ]);
+}
+
+function capital(text) {
+  return text.slice(0, 1).toUpperCase() + text.slice(1);
 }
 
 export function joined(pieces) {

@@ -26,7 +26,7 @@ export function createQuantities(grammar, units) {
   const shown = (key, value) => {
     if (value === null || value === undefined) return 'none';
     if (typeof value === 'boolean') return value ? 'yes' : 'no';
-    if (typeof value === 'string') return value;
+    if (typeof value === 'string') return key.words?.[key.choices.indexOf(value)] ?? value;
     const list = Array.isArray(value) ? value : [value];
     return withUnit(list.map((one) => digitsOf(key, one)).join(key.kind === 'interval' ? ' to ' : ', '), key);
   };

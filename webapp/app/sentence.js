@@ -1,5 +1,5 @@
 // The plan in words, as sentence.py says it: the same small interpreter of the same clauses, so that the sentence of an
-// opened link stands before Python does. Pieces are {text}, {key, shown}, {do, text} and {rail: cells of lines}.
+// opened link stands before Python does. Pieces are {text}, {key, shown}, {do, text, at?, name?} and {rail: cells of lines}.
 
 import { alsoPieces } from './also.js';
 import { valueAt } from './keys.js';
@@ -30,8 +30,9 @@ export function createSentence({ grammar, keys, quantities }) {
       if (taken.has(id) || Object.entries(when).some(([fact, values]) => !values.includes(known[fact]))) continue;
       taken.add(id);
       out.push({ id, short, pieces: fill(text, plan) });
+      if (id === 'sees') out.push(...each('must-see', 'must_see', plan, regionOf(grammar), context));
     }
-    out.push(...patches(plan, known, context));
+    if (known.rain === 'several') out.push(...each('rain', 'rain', plan, () => grammar.patch, context));
     const also = alsoPieces(plan, out, context);
     return also.length ? [...out, { id: 'also', short: false, pieces: joined(also) }] : out;
   };
@@ -55,12 +56,16 @@ function facts(plan, { keys, quantities, lists }) {
   };
 }
 
-function patches(plan, known, { grammar, fill }) {
-  if (known.rain !== 'several') return [];
-  return plan.rain.map((patch, i) => {
-    const end = i === plan.rain.length - 1 ? ' {do remove-rain|No rain}' : '';
-    return { id: `rain-${i}`, short: false, pieces: fill(grammar.patch.replaceAll('@', `rain.${i}`) + end, plan) };
+// One clause for each record of a list.
+function each(name, path, plan, template, { fill }) {
+  return plan[path].map((record, i) => {
+    const text = template(record).replaceAll('@', `${path}.${i}`).replaceAll('#', i);
+    return { id: `${name}-${i}`, short: false, pieces: fill(text, plan) };
   });
+}
+
+function regionOf({ region, region_reported: reported }) {
+  return ({ visible_pct: wanted }) => (wanted === null ? reported : region);
 }
 
 function slotPieces(slot, plan, context) {
@@ -70,12 +75,13 @@ function slotPieces(slot, plan, context) {
   if (slot === 'rail') return [{ rail: railCells(plan, context) }];
   if (slot in WORDS) return [{ text: WORDS[slot](plan) }];
   if (slot.includes('?')) return [{ text: wordFor(plan, ...slot.split('?')) }];
-  const [path, bare] = slot.split('|');
-  return [numberPiece(path, plan, context, Boolean(bare))];
+  return [numberPiece(...slot.split('|').toSpliced(1, 0, plan, context))];
 }
 
-function doPiece(action, text) {
-  return { do: action, text };
+// `remove-rain.2` is done to the third patch.
+function doPiece(deed, text, name) {
+  const [action, place] = deed.split('.');
+  return { do: action, text, ...(place ? { at: Number(place) } : {}), ...(name ? { name } : {}) };
 }
 
 function wordFor(plan, path, forms) {
@@ -84,15 +90,19 @@ function wordFor(plan, path, forms) {
 }
 
 function railCells(plan, context) {
-  const { keys, quantities, lists } = context;
+  const { grammar, keys, quantities, lists } = context;
   const key = keys.of('waveform.pri_us');
   const other = quantities.as({ pri: ['Hz', 'kHz'].includes(quantities.unitOf(key)) ? 'us' : 'Hz' });
   const differing = lists.filter((path) => Array.isArray(valueAt(plan, path)));
   return plan.waveform.pri_us.map((pri, i) => [
     numberPiece(`waveform.pri_us.${i}`, plan, context),
     { text: other.shown(key, pri) },
-    ...differing.map((path) => numberPiece(`${path}.${i}`, plan, context)),
+    ...differing.map((path) => differingLine(`${path}.${i}`, grammar.rail[path], plan, context)),
   ]);
+}
+
+function differingLine(path, [before, one, many] = ['', '', ''], plan, context) {
+  return { ...numberPiece(path, plan, context), before, after: valueAt(plan, path) === 1 ? one : many };
 }
 
 function goes(speed) {

@@ -10,7 +10,10 @@ export function createStrip(strip, plan) {
 
   function open(tapped) {
     number = tapped;
-    const { name, units, shown } = plan.entry(number.dataset.key);
+    const { name, units, shown, words, cell } = plan.entry(number.dataset.key);
+    for (const button of strip.querySelectorAll('[data-for="cell"]')) button.hidden = !cell;
+    for (const button of strip.querySelectorAll('[data-for="number"]')) button.hidden = words;
+    field.inputMode = words ? 'text' : 'decimal';
     label.textContent = name;
     unit.replaceChildren(...units.map((text) => new Option(text, text)));
     unit.hidden = units.length < 2;
@@ -28,7 +31,7 @@ export function createStrip(strip, plan) {
   }
 
   function commit() {
-    if (number && typed) plan.commit({ key: number.dataset.key, text: `${field.value.trim()} ${unit.hidden ? '' : unit.value}`.trim() });
+    if (number && typed) plan.commit({ key: number.dataset.key, text: textOf(field.value.trim(), unit) });
     typed = false;
   }
 
@@ -40,6 +43,13 @@ export function createStrip(strip, plan) {
     number = null;
   }
 
+  // What is done to a cell of the rail; the strip closes, for the cell may have gone.
+  function then(act) {
+    const path = number.dataset.key;
+    close();
+    act(path);
+  }
+
   const acts = {
     down: () => plan.step(number.dataset.key, { count: -1, size: 'step' }),
     up: () => plan.step(number.dataset.key, { count: 1, size: 'step' }),
@@ -49,6 +59,9 @@ export function createStrip(strip, plan) {
       commit();
     },
     done: close,
+    remove: () => then((path) => plan.remove(path)),
+    earlier: () => then((path) => plan.move(path, -1)),
+    later: () => then((path) => plan.move(path, 1)),
   };
 
   strip.addEventListener('click', (event) => {
@@ -67,6 +80,11 @@ export function createStrip(strip, plan) {
   for (const type of ['resize', 'scroll']) globalThis.visualViewport?.addEventListener(type, () => keepAbove(strip));
 
   return { open, update: () => { if (number && !typed) fill(plan.entry(number.dataset.key).shown); } };
+}
+
+// An empty field has no unit either: emptying a PRI removes it.
+function textOf(text, unit) {
+  return text && !unit.hidden ? `${text} ${unit.value}` : text;
 }
 
 function keepAbove(strip) {

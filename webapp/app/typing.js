@@ -3,14 +3,16 @@
 
 import { closeField, fieldText, isOpen, isTouched, openField, selectAll, touch } from './number.js';
 
+const SEVERAL = /\d[^\n\r\t;,]*(?:[\n\r\t;]|,\s)\s*\S/;
 const STARTS_A_NUMBER = /^[\d.,+\-\u2212]$/;
 
 export function listenToTyping(root, plan) {
   const on = (type, act) => root.addEventListener(type, (event) => {
-    const number = event.target.closest?.('.number[role="spinbutton"]');
+    const number = event.target.closest?.('.number[role]');
     if (number) act(number, event);
   });
   on('keydown', (number, event) => key(number, event, plan));
+  on('paste', (number, event) => pasted(number, event, plan));
   on('input', (number) => touch(number, true));
   // A new number is typed over the one that Enter has just committed: the first press leaves it selected.
   on('mousedown', (number, event) => { if (isOpen(number) && wasCommitted(number)) event.preventDefault(); });
@@ -26,10 +28,15 @@ function key(number, event, plan) {
   if (event.isComposing) return;
   const action = isOpen(number) ? openKeys[event.key] : closedKeys[event.key];
   if (arrows(number, event, plan) || (action && action(number, event, plan) !== false)) event.preventDefault();
-  else if (!isOpen(number) && STARTS_A_NUMBER.test(event.key) && !event.ctrlKey && !event.metaKey) {
+  else if (!isOpen(number) && starts(number, event.key) && !event.ctrlKey && !event.metaKey) {
     openField(number, event.key);
     event.preventDefault();
   }
+}
+
+// A number is begun by what a number begins with, a name by any character.
+function starts(number, pressed) {
+  return number.classList.contains('words') ? pressed.length === 1 && pressed !== ' ' : STARTS_A_NUMBER.test(pressed);
 }
 
 const openKeys = {
@@ -65,6 +72,15 @@ function arrows(number, event, plan) {
   touch(number, false);
   plan.step(number.dataset.key, { count, size, from });
   return true;
+}
+
+// Several PRIs, such as a spreadsheet's column, are the whole list, wherever in it they are pasted.
+function pasted(number, event, plan) {
+  const text = event.clipboardData?.getData('text/plain') ?? '';
+  if (!plan.isPri(number.dataset.key) || !SEVERAL.test(text.trim())) return;
+  event.preventDefault();
+  closeField(number);
+  plan.act('paste-pris', { text });
 }
 
 function commitField(number, plan) {

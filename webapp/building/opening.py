@@ -144,6 +144,9 @@ def grammar():
     return {
         'clauses': clauses.CLAUSES,
         'patch': clauses.PATCH,
+        'region': clauses.REGION,
+        'region_reported': clauses.REGION_REPORTED,
+        'rail': clauses.RAIL,
         'also': clauses.ALSO,
         'not_in_also': clauses.NOT_IN_ALSO,
         'judged': plan_keys.JUDGED,

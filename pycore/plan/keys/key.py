@@ -48,6 +48,8 @@ class Key:
         Heading it stands under; empty for what stands at the head of the note. [unitless]
     choices : tuple of str
         What a choice may be. [unitless]
+    words : tuple of str
+        How a choice is said, in the order of the choices; empty where they are words themselves. [unitless]
     longest : int
         Most characters of a text. [characters]
     """
@@ -69,7 +71,23 @@ class Key:
     decimals: int = 0
     group: str = ''
     choices: tuple[str, ...] = ()
+    words: tuple[str, ...] = ()
     longest: int = 0
+
+    def said(self, value):
+        """Return how a choice is said.
+
+        Parameters
+        ----------
+        value : str
+            One of the choices. [unitless]
+
+        Returns
+        -------
+        words : str
+            As an engineer says it.
+        """
+        return self.words[self.choices.index(value)] if self.words and value in self.choices else value
 
     @property
     def record(self):
@@ -113,7 +131,7 @@ interval = _measured('interval')
 numbers = _measured('numbers')
 
 
-def choice(path, short, label, help_text, choices, default):
+def choice(path, short, label, help_text, choices, default, words=()):
     """Return a key that is one of some words.
 
     Parameters
@@ -124,13 +142,15 @@ def choice(path, short, label, help_text, choices, default):
         The words. [unitless]
     default : str
         One of them. [unitless]
+    words : tuple of str
+        How each of them is said, where that is not the word itself. [unitless]
 
     Returns
     -------
     key : Key
         Without a heading.
     """
-    return Key(path, 'choice', short, label, help_text, default=default, choices=choices)
+    return Key(path, 'choice', short, label, help_text, default=default, choices=choices, words=words)
 
 
 def flag(path, short, label, help_text):
