@@ -2,7 +2,7 @@
 
 export function choiceField(key, path, commit) {
   const node = labelled('select', key, path);
-  node.append(...key.choices.map((choice) => new Option(choice, choice)));
+  node.append(...key.choices.map((choice, i) => new Option(key.words?.[i] ?? choice, choice)));
   node.addEventListener('change', () => commit({ value: node.value }));
   return { node, update: (value) => { if (document.activeElement !== node) node.value = value; } };
 }

@@ -76,7 +76,7 @@ export function createHands({ state, keys, quantities, typed, status, families, 
     remove(path) {
       const index = placeOf(path);
       if (index === null) return false;
-      act('remove-pri', { index });
+      act('remove-pri', { index }, Math.max(0, Math.min(index, state.now.plan.waveform.pri_us.length - 2)));
       return true;
     },
     move(path, by) {

@@ -91,7 +91,9 @@ function commitField(number, plan) {
 
 // Delete on an empty cell of the rail removes it.
 function removeEmpty(number, event, plan) {
-  return fieldText(number) === '' && plan.remove(number.dataset.key);
+  if (fieldText(number) !== '' || !plan.isPri(number.dataset.key)) return false;
+  closeField(number);
+  return plan.remove(number.dataset.key);
 }
 
 function wasCommitted(number) {
