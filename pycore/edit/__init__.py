@@ -15,6 +15,7 @@ from pycore.edit.actions import ACTIONS
 from pycore.edit.pris import remove_pri, rounded_pris, switched_kind, taken_pris
 from pycore.errors import InputError
 from pycore.plan.document import checked_number, shown
+from pycore.plan.keys import MOST_PRIS
 from pycore.plan.paths import known_key, put, value_at
 from pycore.plan.reading import filled, read
 from pycore.plan.records import Plan
@@ -124,7 +125,7 @@ def _typed(plan, path, text, units):
 
 def _is_list(text, key, path):
     """Say whether a text is several numbers and not one with its unit."""
-    if len(text.split()) < 2:
+    if not 2 <= len(text.split()) <= 4 * MOST_PRIS:
         return False
     try:
         typed(text, key, path)

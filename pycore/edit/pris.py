@@ -12,7 +12,7 @@ from pycore.errors import InputError
 from pycore.plan.document import checked_number, shown
 from pycore.plan.keys import BY_PATH, KEYS, MOST_PRIS
 from pycore.plan.paths import known_key, put, value_at
-from pycore.quantity import typed_list
+from pycore.quantity import typed_list, words
 from pycore.shown import shown_unit, shown_value
 from pycore.units import FAMILIES
 from pycore.wording import count_word
@@ -23,7 +23,7 @@ _NEXT_PRI = Fraction(115, 100)
 _LISTS = tuple(key.path for key in KEYS if key.per_prf)
 _KEPT = (_PRIS, *_LISTS, 'waveform.detect_m', 'doppler.delays', 'doppler.weights')
 """What dwells and a stagger each keep for themselves."""
-_LONGEST_PASTE = 20_000
+_LONGEST_PASTE = 200_000
 
 
 def _lists(plan):
@@ -192,10 +192,13 @@ def taken_pris(plan, text, units):
         How many were taken and in which unit, what was rounded, that M was lowered.
     """
     key = BY_PATH[_PRIS]
+    count = sum(word[:1].isdigit() for word in words(text[:_LONGEST_PASTE]))
+    if count > MOST_PRIS:  # ten thousand numbers are counted, not read
+        many = f'more than {count}' if len(text) > _LONGEST_PASTE else str(count)
+        raise InputError(_PRIS, f'PRI: 1 to {MOST_PRIS} are understood; got {many}.')
     found = typed_list(text[:_LONGEST_PASTE], key, _PRIS, shown_unit(key, units))
-    if not 1 <= len(found) <= MOST_PRIS:
-        many = f'more than {len(found)}' if len(text) > _LONGEST_PASTE else str(len(found))
-        raise InputError(_PRIS, f'PRI: 1 to {MOST_PRIS} are understood; got {many if found else "none"}.')
+    if not found:
+        raise InputError(_PRIS, f'PRI: 1 to {MOST_PRIS} are understood; got none.')
     said, pris = [], []
     for index, one in enumerate(found):
         checked_number(key, float(one.value), f'{_PRIS}.{index}')

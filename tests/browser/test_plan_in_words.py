@@ -171,3 +171,43 @@ def test_on_a_phone_a_cell_is_moved_and_removed_in_the_strip(chrome, site, watch
     page.locator(f'[data-key="{FIRST}"]').tap()
     page.get_by_role('group', name='Number', exact=True).get_by_role('button', name='Remove').tap()
     expect(page.locator('#paragraph')).to_have_text(re.compile('every 980'))
+
+
+PASTE = """([selector, text]) => {
+  const clipboardData = new DataTransfer();
+  clipboardData.setData('text/plain', text);
+  const pasted = new ClipboardEvent('paste', { clipboardData, bubbles: true, cancelable: true });
+  document.querySelector(selector).dispatchEvent(pasted);
+}"""
+TEN_THOUSAND = '\n'.join(str(900 + i % 97) for i in range(10_000))
+JUNK = ''.join(chr(code) for code in range(1, 50_000) if not 0xD800 <= code < 0xE000)
+
+
+@pytest.mark.parametrize('text', [TEN_THOUSAND, JUNK], ids=['ten thousand numbers', 'junk'])
+@pytest.mark.parametrize('selector', ['#paste', f'[data-key="{FIRST}"]', '[data-key="radar.pulse_us"]'])
+def test_whatever_is_pasted_is_answered_in_one_sentence_and_the_rest_stays_live(live, selector, text):
+    value = live.finding('visible').get_attribute('data-value')
+    live.page.evaluate(PASTE, [selector, text])
+    if selector == '#paste' and not text.isascii():
+        live.page.locator('#paste').fill(text)
+        live.page.keyboard.press('Enter')
+    told = live.page.locator('#status, #refused').filter(has_text=re.compile('must be|understood'))
+
+    expect(told).to_have_count(1)
+    expect(live.finding('visible')).to_have_attribute('data-value', value)
+    live.commit('doppler.notch_mps', '8')
+    expect(live.finding('visible')).not_to_have_attribute('data-value', value)
+
+
+@pytest.mark.parametrize(
+    'text', ['NaN', '1e999', '\U0001f6f0\ufe0f', '\u05e9\u05dc\u05d5\u05dd \u202e123', '\x01\x7f1', '1 2', '--3']
+)
+def test_nonsense_stays_as_it_was_typed_on_its_line(live, text):
+    line = live.number('waveform.pulses').bounding_box()['height']
+    live.number('waveform.pulses').click()
+    live.number('waveform.pulses').fill(text)
+    live.page.keyboard.press('Tab')
+
+    expect(live.number('waveform.pulses')).to_have_attribute('aria-invalid', 'true')
+    expect(live.number('waveform.pulses')).to_have_text(text)
+    assert live.number('waveform.pulses').bounding_box()['height'] < 1.5 * line  # it stays on its line

@@ -3,6 +3,8 @@
 
 import { valueAt } from './keys.js';
 
+const LONGEST_SHOWN = 200; // characters of a refused text
+
 export function createLooks({ state, keys, quantities, typed, engineState }) {
   function pendingShown(path, key) {
     const edit = state.now.pending.findLast((pending) => pending.key === path);
@@ -30,7 +32,7 @@ export function createLooks({ state, keys, quantities, typed, engineState }) {
       lowest: key?.lowest,
       highest: key?.highest,
       waiting: pending !== undefined && engineState() !== 'ready',
-      refused: refusal?.text,
+      refused: refusal && clipped(refusal.text),
       invalid: Boolean(refusal) || pair, // of two ends that do not agree either may be the wrong one
       plain: engineState() === 'failed',
     };
@@ -51,6 +53,11 @@ export function createLooks({ state, keys, quantities, typed, engineState }) {
   }
 
   return { look, refusals };
+}
+
+// What was typed stands as it was typed; of a book, its beginning.
+function clipped(text) {
+  return text.length > LONGEST_SHOWN ? `${text.slice(0, LONGEST_SHOWN)}…` : text;
 }
 
 function otherEnd(path) {

@@ -4,6 +4,7 @@
 import { closeField, fieldText, isOpen, isTouched, openField, selectAll, touch } from './number.js';
 
 const SEVERAL = /\d[^\n\r\t;,]*(?:[\n\r\t;]|,\s)\s*\S/;
+const LONG = 400; // characters of a paste that is no number
 const STARTS_A_NUMBER = /^[\d.,+\-\u2212]$/;
 
 export function listenToTyping(root, plan) {
@@ -74,11 +75,19 @@ function arrows(number, event, plan) {
   return true;
 }
 
+// What nobody would type is not laid out to be read: it is committed at once, to be answered in a sentence.
+function commitLong(number, text, plan) {
+  closeField(number);
+  plan.commit({ key: number.dataset.key, text });
+}
+
 // Several PRIs, such as a spreadsheet's column, are the whole list, wherever in it they are pasted.
 function pasted(number, event, plan) {
   const text = event.clipboardData?.getData('text/plain') ?? '';
-  if (!plan.isPri(number.dataset.key) || !SEVERAL.test(text.trim())) return;
+  const isList = plan.isPri(number.dataset.key) && SEVERAL.test(text.trim());
+  if (!isList && text.length < LONG) return;
   event.preventDefault();
+  if (!isList) return commitLong(number, text, plan);
   closeField(number);
   plan.act('paste-pris', { text });
 }
