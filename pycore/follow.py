@@ -104,12 +104,34 @@ def strip(computed, range_m, speed_m_s):
         For whole clock counts from half the shortest PRI to twice the longest, at most ``STRIP_PRIS`` of them, with
         the pulse, carrier and notch of the first PRF; none that is not longer than the pulse.
     """
-    plan, first = computed.plan, computed.echoes.parts[-1].cpis[0]
+    plan = computed.plan
     low, high = min(plan.pri_counts) // 2 + 1, 2 * max(plan.pri_counts)
     counts = np.unique(np.linspace(low, high, STRIP_PRIS).round())
     pri_s = counts / plan.clock_hz
-    longer = pri_s[pri_s > first.pulse_s]
-    return every_pri(longer, range_m, speed_m_s, first, plan.recovery_s, plan.guard_s, plan.received_min, plan.near)
+    return each_of(computed, pri_s[pri_s > float(plan.pulse_s[0])], range_m, speed_m_s)
+
+
+def each_of(computed, pri_s, range_m, speed_m_s):
+    """Return what some PRIs would make of one target, each alone.
+
+    Parameters
+    ----------
+    computed : Computed
+        What the plan gives. [unitless]
+    pri_s : float array, shape C
+        PRIs, each longer than the first PRF's pulse. [s]
+    range_m : float
+        True range. [m]
+    speed_m_s : float
+        True radial speed, positive closing. [m/s]
+
+    Returns
+    -------
+    each : EveryPri
+        With the pulse, carrier and notch of the first PRF.
+    """
+    plan, first = computed.plan, computed.echoes.parts[-1].cpis[0]
+    return every_pri(pri_s, range_m, speed_m_s, first, plan.recovery_s, plan.guard_s, plan.received_min, plan.near)
 
 
 def follow(computed, range_m, speed_m_s):

@@ -8,6 +8,7 @@ from pycore.columns import (
     doppler_filters,
     dwell,
     eclipsed_ranges,
+    every_pri,
     trade_line,
 )
 from pycore.columns.axes import range_axis, speed_axis
@@ -16,10 +17,13 @@ from pycore.columns.places import MEASURES, ZOOMED
 from pycore.columns.view import WHOLE
 
 _IN_ORDER = (blind_zones, trade_line, eclipsed_ranges, blind_speeds, decoding, doppler_filters, detection, dwell)
-_MODULES = {module.NAME: module for module in _IN_ORDER}
+_MODULES = {module.NAME: module for module in (*_IN_ORDER, every_pri)}
 
-FIGURES = tuple(_MODULES)
-"""Names of the figures, in the order in which a note of dwells shows them. [unitless]"""
+FIGURES = tuple(module.NAME for module in _IN_ORDER)
+"""Names of the numbered figures, in the order in which a note of dwells shows them. [unitless]"""
+
+APART = (every_pri.NAME,)
+"""Names of figures that stand elsewhere in the note and carry no number. [unitless]"""
 
 
 def order(kind):

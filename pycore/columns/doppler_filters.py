@@ -96,6 +96,7 @@ def picture(computed, units, size=None, view=WHOLE):
         'ranges': {'x': axis.ends, 'y': [-0.03, len(heard) - 1 + _HIGH + 0.06]},
         'labels': {'x': axis.label, 'y': 'level in a filter (dB above its noise)'},
         'units': {'x': axis.unit},
+        'folds': [] if computed.is_stagger else [axis.shown(float(lane.cpi.blind_speed_m_s)) for lane in heard],
         'ticks': {'y': _ticks(scale, size['height'])},
     }
 

@@ -9,6 +9,7 @@ from pycore import ambiguity, eclipsing
 from pycore.columns.axes import interval_name, range_axis, speed_axis
 from pycore.columns.looks import all_of
 from pycore.columns.prf_names import prf_names
+from pycore.columns.pri_axis import pri_axis
 from pycore.constants import SPEED_OF_LIGHT_M_S
 from pycore.follow import why
 from pycore.wording import THIN_SPACE, capitalised, count_word, listed, percent, trimmed, with_unit
@@ -96,6 +97,9 @@ def _each(point, states):
         return _with(*states[0])
     if clear == n:
         return f'clear on {all_of(n)}'
+    if n <= _FEW and len({state for state, _ in states}) == 1:
+        more = [with_it for _, with_it in states if with_it]
+        return _with(f'{states[0][0]} on {all_of(n)}', listed(more) if more else None)
     return f'{clear} of {n}. {_few(point, states) if n <= _FEW else _many(point, states)}'
 
 
@@ -211,6 +215,12 @@ def _detected(point, x, y):
     return _both(point, x, y) if y is not None else f'{_place(point.x, x)}.'
 
 
+def _sent(point, x, _):
+    """Say which PRI or PRF it is."""
+    axis = pri_axis(point.units, (0.0, 0.0))
+    return '' if x is None or x <= 0.0 else f'{axis.name(float(axis.plain(x)))}.'
+
+
 _SAID = {
     'blind-zones': _both,
     'detection': _detected,
@@ -218,4 +228,5 @@ _SAID = {
     'blind-speeds': _speed,
     'trade-line': _traded,
     'decoding': _folded,
+    'every-pri': _sent,
 }

@@ -6,6 +6,7 @@ MEASURES = {
     'eclipsed-ranges': {'x': 'range'},
     'blind-speeds': {'x': 'speed'},
     'decoding': {'x': 'range'},
+    'doppler-filters': {'x': 'speed'},
     'detection': {'x': 'range', 'y': 'speed'},
 }
 """For each figure that a target can be set in: what its axes measure of it. [unitless]"""

@@ -36,6 +36,18 @@ async ({ name, item, text, bytes, scheme }) => {
   figuresUnderTest.update(name, pictureOf({ text, bytes }));
 }
 """
+LISTEN = """
+(name) => {
+  const { pointIn, geometry } = figuresUnderTest;
+  pointIn(document.getElementById('plot'), geometry(name), {
+    drags: () => true,
+    onPick: (...place) => { window.picked = place; },
+    onHover: (...place) => { window.hovered = place; },
+    onDrag: () => {},
+    onNumber: (i) => { window.numbered = i; },
+  });
+}
+"""
 PAINTED = '() => new Promise((resolve) => requestAnimationFrame(() => requestAnimationFrame(resolve)))'
 
 
@@ -65,8 +77,8 @@ def blank(chrome):
     page.on('console', lambda message: errors.append(message.text) if message.type == 'error' else None)
     page.set_content(PAGE)
     page.add_script_tag(path=BOKEH_JS)
-    modules = ''.join((APP / name).read_text(encoding='utf-8') for name in ('figures.js', 'arrays.js'))
-    names = 'mount, update, setScheme, onPick, onHover, sizes, revived'
+    modules = ''.join((APP / name).read_text(encoding='utf-8') for name in ('figures.js', 'pointing.js', 'arrays.js'))
+    names = 'mount, update, setScheme, geometry, pointIn, sizes, revived'
     modules = re.sub(r'^export |^import .*\n', '', modules, flags=re.M)
     page.add_script_tag(
         content=f'const bokeh = () => globalThis.Bokeh;\n{modules}\nwindow.figuresUnderTest = {{ {names} }};'
@@ -125,22 +137,21 @@ def test_a_change_of_scheme_repaints_a_mounted_figure(blank):
 
 def test_a_click_tells_where_it_was_in_the_units_of_the_axes(blank):
     show(blank, 'blind-zones', document([980.0, 860.0]))
-    blank.evaluate('() => figuresUnderTest.onPick((...place) => { window.picked = place; })')
+    blank.evaluate(LISTEN, 'blind-zones')
     size = blank.evaluate('() => figuresUnderTest.sizes()["blind-zones"]')
     blank.mouse.click(629, 150)
-    name, x, y = blank.evaluate('() => window.picked')
-    assert name == 'blind-zones'
+    x, y = blank.evaluate('() => window.picked')
     assert x == pytest.approx(110, abs=2 * 108 / size['width'])
     assert 100 < y < 200
 
 
 def test_under_the_map_of_detection_a_pointer_has_a_range_and_no_speed(blank):
     show(blank, 'detection', document([980.0, 860.0]))
-    blank.evaluate('() => figuresUnderTest.onHover((...place) => { window.hovered = place; })')
+    blank.evaluate(LISTEN, 'detection')
     blank.mouse.move(330, 60)
-    assert 150 < blank.evaluate('() => window.hovered[2]') < 300
+    assert 150 < blank.evaluate('() => window.hovered[1]') < 300
     blank.mouse.move(330, 250)
-    name, x, y = blank.evaluate('() => window.hovered')
+    x, y = blank.evaluate('() => window.hovered')
     assert 40 < x < 70
     assert y is None
 
@@ -162,11 +173,11 @@ def test_a_followed_target_is_marked_in_the_colour_of_lines(blank):
 
 def test_leaving_the_plot_ends_the_hover(blank):
     show(blank, 'blind-zones', document([980.0, 860.0]))
-    blank.evaluate('() => figuresUnderTest.onHover((...place) => { window.hovered = place; })')
+    blank.evaluate(LISTEN, 'blind-zones')
     blank.mouse.move(300, 150)
-    assert blank.evaluate('() => window.hovered[1]') == pytest.approx(56, abs=10)
+    assert blank.evaluate('() => window.hovered[0]') == pytest.approx(56, abs=10)
     blank.mouse.move(300, 500)
-    assert blank.evaluate('() => window.hovered') == ['blind-zones', None, None]
+    assert blank.evaluate('() => window.hovered') == [None, None]
 
 
 def test_the_canvas_is_no_tab_stop(blank):

@@ -4,10 +4,10 @@
 import { bokeh } from './bokeh.js';
 
 const SCHEMES = ['light', 'dark']; // the order of the colours in a model's tags
+const RING = 'target'; // the source of the followed target
+const NUMBERS = 'holes'; // that of the holes' numbers
 
 const mounted = new Map();
-const listeners = { pick: () => {}, hover: () => {} };
-const own = new Map(); // listeners of one figure, instead of those of all
 let scheme = 'light';
 
 // Embed a figure's document in an element; it is as large as the element from then on.
@@ -17,18 +17,27 @@ export async function mount(name, element, item) {
   const manager = await Bokeh.embed.embed_item(item, element);
   const [view] = manager.roots;
   const models = [...view.model.references()];
-  mounted.set(name, { element, view, models, named: namesOf(models), said: {}, holds: {} });
+  mounted.set(name, { element, view, models, named: namesOf(models), said: {}, holds: {}, held: false });
   repaint(models);
   withoutTabStop(view);
-  listen(name, element);
   element.style.visibility = '';
 }
 
 // Show another picture of the same figure. Columns are typed arrays or lists; an image is a typed array with a `shape`.
 // `holds` gives the ends between which an axis measures what it says; beyond them lies another part of the figure.
+// A picture without ranges brings columns only. A ring that is being dragged stays where the hand is.
 export function update(name, { columns, ranges, labels, ticks, holds = {} }) {
-  const { named, said } = mounted.get(name);
-  mounted.get(name).holds = holds;
+  const figure = mounted.get(name);
+  if (ranges) setAxes(name, figure, { ranges, labels, ticks, holds });
+  for (const [source, data] of Object.entries(columns)) {
+    if (source !== RING || !figure.held) figure.named.get(`${name}/${source}`).data = columnsOf(data);
+  }
+  if (ranges) repaintIfMoved(figure.view);
+}
+
+function setAxes(name, figure, { ranges, labels, ticks, holds }) {
+  const { named, said } = figure;
+  figure.holds = holds;
   for (const side of ['x', 'y']) {
     const [start, end] = ranges[side];
     named.get(`${name}/${side}`).setv({ start, end });
@@ -38,8 +47,6 @@ export function update(name, { columns, ranges, labels, ticks, holds = {} }) {
     named.get(`${name}/x-axis`).axis_label = labels.x;
     named.get(`${name}/y-label`).text = labels.y;
   }
-  for (const [source, data] of Object.entries(columns)) named.get(`${name}/${source}`).data = columnsOf(data);
-  repaintIfMoved(mounted.get(name).view);
 }
 
 // Where the words beside an axis have become wider, the canvas keeps ticks of before until it is painted once more.
@@ -48,23 +55,16 @@ function repaintIfMoved(view) {
   requestAnimationFrame(() => requestAnimationFrame(() => { if (view.frame.bbox.left !== left) view.request_paint(); }));
 }
 
+// Put a figure's ring where a hand has dragged it; with null the next picture places it again.
+export function holdRing(name, at) {
+  const figure = mounted.get(name);
+  figure.held = Boolean(at);
+  if (at) figure.named.get(`${name}/${RING}`).data = { x: [at[0]], y: [at[1]] };
+}
+
 export function setScheme(name) {
   scheme = name;
   for (const { models } of mounted.values()) repaint(models);
-}
-
-// The callbacks get (figure, x, y) in the units on the axes; on leaving the plot, hover gets (figure, null, null).
-export function onPick(callback) {
-  listeners.pick = callback;
-}
-
-export function onHover(callback) {
-  listeners.hover = callback;
-}
-
-// One figure's own callbacks get (x, y), or (null, null) on leaving.
-export function listenTo(name, { pick, hover }) {
-  own.set(name, { pick: (_, x, y) => pick(x, y), hover: (_, x, y) => hover(x, y) });
 }
 
 // Width and height of each figure's plot, without its axes, in CSS pixels: what a map is computed for.
@@ -116,31 +116,47 @@ function withoutTabStop(view) {
   for (const node of parts(view.el.shadowRoot)) if (node.tabIndex === 0) node.tabIndex = -1;
 }
 
-function listen(name, element) {
-  const at = (event) => placeOf(mounted.get(name), event);
-  const tell = () => own.get(name) ?? listeners;
-  let inside = false;
-  element.addEventListener('click', (event) => {
-    const place = at(event);
-    if (place) tell().pick(name, ...place);
-  });
-  element.addEventListener('pointermove', (event) => {
-    const place = at(event);
-    if (place || inside) tell().hover(name, ...(place ?? [null, null]));
-    inside = Boolean(place);
-  });
-  element.addEventListener('pointerleave', () => {
-    if (inside) tell().hover(name, null, null);
-    inside = false;
-  });
-}
-
-// Where in the plot a pointer is, or null beside it; null on an axis that does not hold there.
-function placeOf({ view: { el, frame }, holds }, { clientX, clientY }) {
-  const { left, top } = el.getBoundingClientRect();
-  const [sx, sy] = [clientX - left, clientY - top];
-  if (!frame.bbox.contains(sx, sy)) return null;
-  return [within(holds.x, frame.x_scale.invert(sx)), within(holds.y, frame.y_scale.invert(sy))];
+// Where things are in a figure, in CSS pixels of its element and in the units on its axes.
+export function geometry(name) {
+  const { element, view, named } = mounted.get(name);
+  const shift = () => {
+    const [inner, outer] = [view.el.getBoundingClientRect(), element.getBoundingClientRect()];
+    return [inner.left - outer.left, inner.top - outer.top];
+  };
+  return {
+    box() {
+      const [dx, dy] = shift();
+      const { left, top, width, height } = view.frame.bbox;
+      return { left: left + dx, top: top + dy, width, height };
+    },
+    // null on an axis that does not hold there.
+    at(sx, sy) {
+      const { holds } = mounted.get(name);
+      const [x, y] = this.whole(sx, sy);
+      return [within(holds.x, x), within(holds.y, y)];
+    },
+    // In the axes' units, wherever it is.
+    whole(sx, sy) {
+      const [dx, dy] = shift();
+      return [view.frame.x_scale.invert(sx - dx), view.frame.y_scale.invert(sy - dy)];
+    },
+    place(x, y) {
+      const [dx, dy] = shift();
+      return [view.frame.x_scale.compute(x) + dx, view.frame.y_scale.compute(y) + dy];
+    },
+    ring() {
+      const { x, y } = named.get(`${name}/${RING}`)?.data ?? {};
+      return x?.length === 1 && y?.length === 1 ? this.place(x[0], y[0]) : null;
+    },
+    // The numbers of holes, as far as they are moved off their places.
+    numbers() {
+      const { x = [], y = [], dx, dy } = named.get(`${name}/${NUMBERS}`)?.data ?? {};
+      return Array.from(x, (at, i) => {
+        const [sx, sy] = this.place(at, y[i]);
+        return { spot: [sx, sy], shown: [sx + dx[i], sy + dy[i]] };
+      });
+    },
+  };
 }
 
 function within(ends, value) {

@@ -7,6 +7,7 @@ import { createConventions } from './conventions.js';
 import { listenToDragging } from './dragging.js';
 import { newestOf, startEngine } from './engine.js';
 import { sizes } from './figures.js';
+import { createFollowed, handsFor } from './followed.js';
 import { createHandOver } from './hand-over.js';
 import { createFinder } from './finder.js';
 import { createHands } from './hands.js';
@@ -18,6 +19,7 @@ import { createOpenedFindings } from './opened-findings.js';
 import { createOwnTable } from './own-table.js';
 import { createPage } from './page.js';
 import { packedPart } from './payload.js';
+import { createPoint } from './point.js';
 import { createQuantities } from './quantities.js';
 import { flipped } from './quiet.js';
 import { createState } from './state.js';
@@ -42,7 +44,10 @@ const state = createState(opening.answer.plan);
 const view = createView();
 const address = createAddress(openLink);
 const hands = createHands({ state, keys, quantities, typed, status, families: opening.units.families, redraw: () => page.redraw(), onAnswered: (count, act) => waiting.push({ count, act }), focus: (path, typing) => page.focus(path, typing) });
-const page = createPage({ opening, keys, quantities, typed, state, hands, choose: view.choose, ask: () => asking.ask(), onOpen: (name, shows) => (shows ? opened.open(name, shows) : opened.close(name)) });
+const lazily = { ask: (...given) => engine.ask(...given) }; // it starts below
+const followed = createFollowed({ keys: opening.followed, view, state, quantities, typed, engine: lazily, status, redraw: () => page.redraw() });
+const point = createPoint({ view, state, quantities, followed, keys: opening.followed, engine: lazily, show: (name, text) => page.pictures.read(name, text) });
+const page = createPage({ opening, keys, quantities, typed, state, hands, followed, point, choose: view.choose, ask: () => asking.ask(), onOpen: (name, shows) => (shows ? opened.open(name, shows) : opened.close(name)) });
 const travel = createTravel({ state, status, page, buttons: { undo: document.getElementById('undo'), redo: document.getElementById('redo') } });
 const head = createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening: () => asking.isOpening(), openExample });
 let findings = opening.answer.findings;
@@ -52,9 +57,9 @@ let waiting = []; // what is to be done when the answer to an edit stands on the
 let painted = null;
 const first = new Promise((resolve) => { painted = resolve; });
 const engine = startEngine({ payload: (name) => first.then(() => packedPart(name)), onFail: failed });
-const asking = createAsking({ engine, state, view, figures: page.pictures.visible, sizes, units: () => ({ ...units.now }), onLate: head.late, onAnswer: answered, onFault: fault });
+const asking = createAsking({ engine, state, view, figures: page.pictures.visible, sizes, units: () => ({ ...units.now }), onLate: head.late, onAnswer: answered, onLook: looked, onFault: fault });
 const finder = createFinder({ opening, engine, more: () => startEngine(), newest: newestOf(engine.ask), plan: () => state.now.plan, pending: () => state.now.pending.length > 0, quantities, typed, units: () => ({ ...units.now }), status, take: takePlan });
-const allHands = eitherHands(hands, finder.limits, finder.owns);
+const allHands = handsFor(eitherHands(hands, finder.limits, finder.owns), followed);
 
 const given = { engine, plan: () => state.now.plan, units: () => quantities.units, isBusy: () => state.now.pending.length > 0 || asking.isOpening() };
 const opened = createOpenedFindings(given);
@@ -68,7 +73,10 @@ function answered(answer, request) {
   if (answer.said.length + told.length) status.say([...told, ...answer.said].join(' '));
   for (const { act } of waiting.filter(({ count }) => count <= request.count)) act();
   waiting = waiting.filter(({ count }) => count > request.count);
-  if (request.opened !== null) head.opened(answer);
+  if (request.opened !== null) {
+    view.adopt({ target: answer.opened.target });
+    head.opened(answer);
+  }
   head.answered(answer);
   address.show(answer.link);
   if (request.opened !== null) handOver.opened(answer.plan);
@@ -76,6 +84,12 @@ function answered(answer, request) {
   finder.follow();
   const shown = state.committed(request.count);
   page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(shown, Number(root.dataset.shown)); });
+}
+
+function looked(answer) {
+  head.answered(answer);
+  address.show(answer.link);
+  page.look(answer).then(() => { root.dataset.looked = Number(root.dataset.looked ?? 0) + 1; });
 }
 
 function fault(error) {
@@ -96,6 +110,7 @@ async function openLink(text, name = 'The link') {
 
 async function readLink(text) {
   units.fromLink(text);
+  view.adopt({ target: null, zoom: null });
   page.clear();
   asking.open(text);
   return openedPlan(text, opening);
@@ -121,7 +136,11 @@ state.watch((cause) => {
   if (cause !== 'answer') asking.ask();
 });
 
-view.watch(() => asking.ask());
+view.watch((name, before) => {
+  if (name === 'target') asking.look();
+  else if (name === 'zoom') asking.look(point.changed(before));
+  else asking.ask();
+});
 units.watch(() => {
   page.outdate();
   page.redraw();

@@ -37,7 +37,7 @@ export function setNumber(number, look) {
     'aria-valuemin': look.lowest,
     'aria-valuemax': look.highest,
     'aria-invalid': look.invalid ? 'true' : null,
-    'aria-describedby': look.invalid ? 'refused' : null,
+    'aria-describedby': look.invalid ? look.reason ?? 'refused' : null,
   });
 }
 

@@ -13,13 +13,14 @@ import { createSentence } from './sentence.js';
 import { shownByKey, spoken } from './spoken.js';
 import { createCautions } from './cautions.js';
 import { stickWhenPassed } from './sticky.js';
+import { createTarget } from './target.js';
 import { createTitle } from './title.js';
 import { createVerdict } from './verdict.js';
 
 const at = (id) => document.getElementById(id);
 const engineState = () => document.documentElement.dataset.engine;
 
-export function createPage({ opening, keys, quantities, typed, state, hands, ask, onOpen, choose }) {
+export function createPage({ opening, keys, quantities, typed, state, hands, followed, point, ask, onOpen, choose }) {
   const numberFor = createNumbers();
   const looks = createLooks({ state, keys, quantities, typed, engineState });
   const sentence = createSentence({ grammar: opening.grammar, keys, quantities });
@@ -28,7 +29,8 @@ export function createPage({ opening, keys, quantities, typed, state, hands, ask
   const findings = createFindings(at('findings'), (name, text) => hands.act('remark', { finding: name, text }), onOpen);
   const refused = createRefused(at('refused'), hands.putBack);
   const title = createTitle(at('title'), { label: keys.of('title').label, longest: keys.of('title').longest, commit: (text) => hands.commit({ key: 'title', text }) });
-  const pictures = createPictures({ chief: at('chief'), rest: at('figures'), items: opening.items, titles: Object.fromEntries(Object.entries(opening.answer.figures).map(([name, { title }]) => [name, title])), onSeen: () => seen(), choose });
+  const pictures = createPictures({ chief: at('chief'), rest: at('figures'), items: opening.items, titles: opening.titles, apart: { 'every-pri': at('every-pri') }, onSeen: () => seen(), point, choose });
+  const target = createTarget({ place: at('target'), followed, quantities, keys: opening.followed, engineState });
   const table = createKeysTable({ box: at('quantities'), place: at('quantities-tables'), keys, numberFor, commit: hands.commit });
   const adding = createAdding({ node: at('adding'), keys, hands });
   const redraws = { running: false, wanted: false };
@@ -53,7 +55,7 @@ export function createPage({ opening, keys, quantities, typed, state, hands, ask
     pictures.arrange(opening.order[state.now.plan.waveform.kind]);
     const shown = shownByKey(said);
     table.update(state.now.plan, shown);
-    for (const number of document.querySelectorAll('.number:not([data-key^="find."])')) setNumber(number, looks.look(number.dataset.key, shown.get(number.dataset.key)));
+    for (const number of document.querySelectorAll('.number')) if (keys.of(number.dataset.key)) setNumber(number, looks.look(number.dataset.key, shown.get(number.dataset.key)));
     adding.update(state.now.plan);
     const refusals = looks.refusals();
     refused.update(refusals);
@@ -62,6 +64,7 @@ export function createPage({ opening, keys, quantities, typed, state, hands, ask
     at('findings-stale').hidden = !stale;
     pictures.stale(stale);
     title.update(state.now.plan.title);
+    target.redraw();
     if (engineState() === 'failed') stop();
     setText(at('marking'), state.now.plan.marking ?? '');
     at('marking').hidden = !state.now.plan.marking;
@@ -102,12 +105,19 @@ export function createPage({ opening, keys, quantities, typed, state, hands, ask
       verdict.update(answer.verdict);
       findings.update(answer.findings);
       cautions.update(answer.cautions);
+      target.answered(answer.target);
       painting = painting.then(() => pictures.show(answer.figures, count)).then(() => pictures.mark(painted));
       return painting.then(nextFrame);
     },
     outdate: () => pictures.outdate(),
+    look(answer) {
+      target.answered(answer.target);
+      painting = painting.then(() => pictures.look(answer.figures, painted));
+      return painting.then(nextFrame);
+    },
     clear() {
       verdict.clear();
+      target.answered(null);
       findings.clear();
       pictures.clear();
     },

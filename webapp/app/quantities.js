@@ -22,6 +22,8 @@ export function createQuantities(grammar, units) {
     return rounded('over' in how ? how.over / value : value / how.divide, figures[choice[key.family]]);
   };
   const digitsOf = (key, value) => (howOf(key) ? digits(inShown(key, value)) : digits(value, key.decimals));
+  // The other way: what a number on an axis is in the plan's unit.
+  const fromShown = (key, value) => Number((value * (howOf(key)?.divide ?? 1)).toPrecision(12));
   const withUnit = (text, key) => `${text}${['', '°'].includes(unitOf(key)) ? '' : NARROW}${unitOf(key)}`; // degrees close up
   const shown = (key, value) => {
     if (value === null || value === undefined) return 'none';
@@ -32,7 +34,7 @@ export function createQuantities(grammar, units) {
   };
   // Arrow steps are of the unit that is shown; `size` is 'step' or 'finest'.
   const step = (key, from, count, size, plan) => stepped({ key, how: howOf(key), figures: figures[choice[key.family]], shown: inShown(key, from), from, count, finest: size === 'finest', plan });
-  return { units, unitOf, digitsOf, shown, stepped: step, stepOf, finestOf, limit, as: (more) => createQuantities(grammar, { ...units, ...more }) };
+  return { units, unitOf, digitsOf, fromShown, shown, stepped: step, stepOf, finestOf, limit, as: (more) => createQuantities(grammar, { ...units, ...more }) };
 }
 
 function rounded(number, figures) {

@@ -1,8 +1,9 @@
 // The figure of what found plans give up for what. Its points are picked by pointer or with the arrow keys; a picked point is a
 // row of the list. Knows the figure's frame; figures.js draws it.
 
-import { listenTo, mount, update } from './figures.js';
+import { geometry, mount, update } from './figures.js';
 import { setText } from './number.js';
+import { pointIn } from './pointing.js';
 
 const NAME = 'trade-off';
 const REACH_PX = 24;
@@ -43,10 +44,11 @@ export function createTradeOff({ node, item, onPick, onAgainst }) {
     if (by) onPick(neighbour(by), false);
     else if (state.chosen !== null) onPick(state.chosen, true);
   });
-  listenTo(NAME, {
-    pick: (x, y) => { const i = nearest(x, y); if (i !== null) onPick(i, false); },
-    hover: (x, y) => read(nearest(x, y) ?? state.chosen),
-  });
+  const pointed = {
+    drags: () => false,
+    onPick: (x, y) => { const i = nearest(x, y); if (i !== null) onPick(i, false); },
+    onHover: (x, y) => read(nearest(x, y) ?? state.chosen),
+  };
 
   return {
     against: () => select.value,
@@ -54,7 +56,7 @@ export function createTradeOff({ node, item, onPick, onAgainst }) {
       Object.assign(state, { picture, rows });
       setText(label, `${picture.title}.`);
       setText(caption, picture.caption);
-      state.mounted ??= mount(NAME, plot, item);
+      state.mounted ??= mount(NAME, plot, item).then(() => pointIn(plot, geometry(NAME), pointed));
       await state.mounted;
       update(NAME, picture);
       node.classList.remove('pending');

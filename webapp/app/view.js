@@ -7,11 +7,14 @@ export function createView() {
   return {
     now: view,
     watch: (watcher) => watchers.push(watcher),
+    // What an opened link chooses: the answer that brings it is already of it.
+    adopt: (chosen) => Object.assign(view, chosen),
     // A choice of null is none. Nothing is told where nothing changes.
     choose(name, value) {
       if (JSON.stringify(view[name] ?? null) === JSON.stringify(value ?? null)) return;
+      const before = view[name] ?? null;
       view[name] = value ?? null;
-      watchers.forEach((watch) => watch(name));
+      watchers.forEach((watch) => watch(name, before));
     },
   };
 }

@@ -6,6 +6,7 @@ Run by the environment's Python: ``python -m webapp.building.opening``; prints t
 import json
 import subprocess
 import sys
+from dataclasses import asdict
 from pathlib import Path
 
 from webapp.building.cached import made
@@ -76,28 +77,34 @@ def opening():
     Returns
     -------
     opening : dict
-        answer, items (one Bokeh document for each figure) and their order, keys, grammar, units, finder, examples,
-        version, checksum.
+        answer, items (one Bokeh document for each figure) and their order, titles of the figures, keys, those of the
+        followed target, grammar, units, finder, examples, version, checksum.
     """
     from pycore import __version__, api
-    from pycore.columns import FIGURES, order, trade_off
+    from pycore.columns import APART, FIGURES, order, trade_off
     from pycore.plan import keys as plan_keys
+    from pycore.plan.keys import followed
     from pycore.wording import SHOWN_UNITS
     from webapp import figures
 
     plans = examples()
-    answer = api.note(plan=plans[EXAMPLES[0]]['plan'], figures=list(FIGURES), deep=True)
+    answer = api.note(plan=plans[EXAMPLES[0]]['plan'], figures=[*FIGURES, *APART], deep=True)
     pictures = answer['figures']
     items = {name: figures.build(name, picture) for name, picture in pictures.items()}
     items[trade_off.NAME] = figures.build(trade_off.NAME, trade_off.picture([], None, 'time', SHOWN_UNITS))
+    titles = {name: picture['title'] for name, picture in pictures.items()}
+    for name in APART:
+        del pictures[name]  # of a target, and none is followed yet
     for picture in pictures.values():
         del picture['columns']  # they are in the figure's own document
 
     return {
         'answer': answer,
         'items': items,
+        'titles': titles,
         'order': {kind: list(order(kind)) for kind in ('dwells', 'stagger')},
         'keys': plan_keys.table(),
+        'followed': [asdict(key) for key in followed.FOLLOWED.values()],
         'grammar': grammar(),
         'units': units(),
         'finder': finder(answer['plan']),

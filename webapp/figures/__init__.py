@@ -10,12 +10,13 @@ from webapp.figures import (
     doppler_filters,
     dwell,
     eclipsed_ranges,
+    every_pri,
     trade_line,
     trade_off,
 )
 
 _IN_ORDER = (blind_zones, trade_line, eclipsed_ranges, blind_speeds, decoding, doppler_filters, detection, dwell)
-_MODULES = {module.NAME: module for module in (*_IN_ORDER, trade_off)}
+_MODULES = {module.NAME: module for module in (*_IN_ORDER, trade_off, every_pri)}
 
 
 def drawn(name, picture):
