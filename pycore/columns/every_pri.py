@@ -21,8 +21,10 @@ from pycore.wording import significant
 
 NAME, TITLE = 'every-pri', 'Every PRI for this target'
 
-MOST_NAMED = 6
-"""PRIs of the plan that are named in the figure. [unitless]"""
+SIZE = {'width': 1100}
+"""The plot where the page has not said how large it is. [px]"""
+
+_NAME_PX = 42.0
 
 _RECEIVED, _NOTCH, _ECLIPSED, _UNTIL = (0.0, 0.8), (1.2, 1.5), (1.65, 1.95), (2.4, 3.6)
 _TOP = 3.95
@@ -55,7 +57,7 @@ def picture(computed, units, size=None, view=WHOLE):
     units : mapping
         Units that the reader prefers. [unitless]
     size : mapping or None
-        Not used: nothing here depends on the size. [px]
+        Width of the plot, by which names find room. [px]
     view : View
         What the reader has chosen to look at; without a target the figure is empty. [unitless]
 
@@ -71,7 +73,7 @@ def picture(computed, units, size=None, view=WHOLE):
     return {
         'title': TITLE,
         **words(computed, view.mark, found, axis, units),
-        'columns': _columns(computed, found, axis, most),
+        'columns': _columns(found, axis, most, (size or SIZE)['width']),
         'ranges': {'x': axis.ends, 'y': [-0.08, _TOP]},
         'labels': {'x': axis.label, 'y': 'stays clear for (s)'},
         'units': {'x': axis.unit},
@@ -101,7 +103,7 @@ def _ticks(most):
     return {'at': [*_RECEIVED, *lanes, *at], 'text': ['0', '1', 'notch', 'eclipsed', *text]}
 
 
-def _columns(computed, found, axis, most):
+def _columns(found, axis, most, width):
     if found is None:
         return _nothing()
     blind = [_bars(~clear, found, axis) for clear in (found.each.speed_clear, found.each.range_clear)]
@@ -116,7 +118,7 @@ def _columns(computed, found, axis, most):
             **dict(zip(('left', 'right'), np.concatenate(blind).T, strict=True)),
         },
         'own': upright(axis.shown(found.own.pri_s), -0.08, _UNTIL[1] + 0.1),
-        **_named(computed, found, axis, most),
+        **_named(found, axis, most, width),
     }
 
 
@@ -156,9 +158,9 @@ def _bars(marked, found, axis):
     return np.sort(np.column_stack(ends), axis=1)
 
 
-def _named(computed, found, axis, most):
+def _named(found, axis, most, width):
     """Return the names of the plan's PRIs and of the lowest strip, and the PRI that keeps the target clear longest."""
-    own = found.own.pri_s if found.own.pri_s.size <= MOST_NAMED else found.own.pri_s[:0]
+    own = np.array(_roomy(found.own.pri_s, axis, width))
     best = found.each.longest
     at = np.zeros(0, dtype=int) if best is None or math.isinf(most) else np.array([best])
     return {
@@ -172,3 +174,13 @@ def _named(computed, found, axis, most):
             [-3.0, *[-1.0] * own.size],
         ),
     }
+
+
+def _roomy(pri_s, axis, width):
+    """Return the plan's PRIs whose names have room beside those before them; the caption names the others."""
+    left, right = axis.ends
+    kept = []
+    for pri in sorted(set(pri_s.tolist())):
+        if all(abs(axis.shown(pri) - axis.shown(other)) / (right - left) * width > _NAME_PX for other in kept):
+            kept.append(pri)
+    return kept

@@ -8,6 +8,7 @@ from pycore.columns.axes import interval_name
 from pycore.wording import capitalised, count_word, listed, percent, significant, with_unit
 
 _FEW = 3
+_ALIKE = 1e-6
 
 
 def words(computed, mark, found, axis, units):
@@ -63,7 +64,7 @@ def _share(found, axis):
             if not some.any()
         ]
         why = f': it is {listed(blind)} on every one' if blind else ''
-        return f'None of the {span} would see this target{why}.'
+        return f'No {_noun(axis)} from {axis.span()} would see this target{why}.'
     return f'{percent(float(clear.mean()))} of the {span} would see this target.'
 
 
@@ -75,7 +76,9 @@ def _longest(found, axis):
     until = float(found.each.until_blind_s[best])
     if math.isinf(until):
         return ['It stands still: those that see it go on seeing it.']
-    return [f'{axis.name(float(found.each.pri_s[best]))} keeps it clear longest, for {with_unit(until, "s")}.']
+    name, alike = axis.name(float(found.each.pri_s[best])), found.each.until_blind_s >= until * (1.0 - _ALIKE)
+    others = ' and others' if alike.sum() > 1 else ''
+    return [f'The longest that it stays clear is {with_unit(until, "s")}, on {name}{others}.']
 
 
 def _own(computed, found, units):
@@ -85,7 +88,7 @@ def _own(computed, found, units):
     if n > _FEW:
         clear = int(own.clear.sum())
         which = 'all' if clear == n else count_word(clear) if clear else 'none'
-        return f"Of the plan's own {count_word(n)}, the upright lines, {which} {'does' if clear == 1 else 'do'}."
+        return f"Of the plan's own {count_word(n)}, the upright lines, {which} {'does' if clear < 2 else 'do'}."
     said = listed(f'{name} {_does(own, i)}' for i, name in enumerate(names))
     return f"The plan's own, {'the upright line' if n == 1 else 'the upright lines'}: {said}."
 

@@ -1,6 +1,6 @@
 """Every PRI for one target: how long it stays clear, where it is blind, how much of it is received, over the PRI."""
 
-from bokeh.models import HBar, Scatter, Segment, VArea
+from bokeh.models import HBar, Line, Scatter, Segment, VArea
 
 from pycore.columns import every_pri
 from webapp.figures.names import write
@@ -24,8 +24,10 @@ def build(picture):
     """
     made = plot(NAME, picture)
     made.yaxis[0].axis_line_alpha = 0
-    for strip, role in (('until', 'line'), ('received', 'pale')):
-        draw(made, source(NAME, picture, strip), VArea(x='x', y1='base', y2='top'), fill_color=role)
+    for strip in ('until', 'received'):
+        columns = source(NAME, picture, strip)
+        draw(made, columns, VArea(x='x', y1='base', y2='top'), fill_color='asked')
+        draw(made, columns, Line(x='x', y='top', line_width=1.25), line_color='line')
     bar = {'y': 'y', 'left': 'left', 'right': 'right', 'height': 0.3, 'line_alpha': 0}
     draw(made, source(NAME, picture, 'lanes'), HBar(**bar), fill_color='lane')
     draw(made, source(NAME, picture, 'blind'), HBar(**bar), fill_color='bar')
