@@ -4,7 +4,7 @@ import math
 
 import numpy as np
 
-from pycore.columns.axes import interval_name
+from pycore.columns.prf_names import prf_names
 from pycore.wording import capitalised, count_word, listed, percent, significant, with_unit
 
 _FEW = 3
@@ -83,7 +83,7 @@ def _longest(found, axis):
 
 def _own(computed, found, units):
     """Say what the plan's own PRIs do."""
-    names = [interval_name(pri, units) for pri in computed.plan.pri_s.tolist()]
+    names = prf_names(computed.plan, units)
     own, n = found.own, len(names)
     if n > _FEW:
         clear = int(own.clear.sum())
