@@ -8,6 +8,7 @@ that of its row.
 
 import numpy as np
 
+from pycore.columns.axes import round_ticks
 from pycore.columns.named import names_at
 from pycore.finder.front import front
 from pycore.wording import in_range_unit
@@ -49,7 +50,7 @@ def picture(some, own, against, units, chosen=None):
     label, low_is_good, place = _axis(against, some, units)
     points = np.array([(place(one), _worth(one)) for one in some], dtype=float).reshape(-1, 2)
     mine = np.array([(place(own), _worth(own))] if own is not None else [], dtype=float).reshape(-1, 2)
-    stagger = any(one.dip_db is not None for one in some)
+    stagger = any(one.dip_db is not None for one in (*some, own) if one is not None)
     shown = np.isfinite(points).all(axis=1)
     sign = (1.0 if low_is_good else -1.0), (-1.0 if stagger else 1.0)
     on_front = np.zeros(len(points), dtype=bool)
@@ -79,8 +80,13 @@ def picture(some, own, against, units, chosen=None):
         'points': {'x': points[:, 0], 'y': points[:, 1]},
         'ranges': {'x': ranges[0], 'y': ranges[1]},
         'labels': {'x': label, 'y': y_label},
-        'ticks': {},
+        'ticks': {side: _ticks(ends) for side, ends in zip('xy', ranges, strict=True)},
     }
+
+
+def _ticks(ends):
+    at, text = round_ticks(*ends)
+    return {'at': at, 'text': text}
 
 
 def _axis(against, some, units):

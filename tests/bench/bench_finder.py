@@ -4,17 +4,24 @@ Rates are of whole steps of a search, everything that belongs to them included, 
 exact share of every set. X band, 3 of 8, 0 to 185.2 km, 0 to 1500 m/s, unless a row says otherwise.
 """
 
+import importlib.util
 import time
 import timeit
+from concurrent.futures import ProcessPoolExecutor
 from dataclasses import replace
 from fractions import Fraction
+from pathlib import Path
 
 import numpy as np
+from playwright.sync_api import sync_playwright
 
+from pycore import link
 from pycore.constants import SPEED_OF_LIGHT_M_S
-from pycore.finder import Search, begun
+from pycore.finder import Search, begun, run_slice
 from pycore.finder.limits import Cycle, Limits, Place
 from pycore.response import binomial_weights
+from webapp.building.browser import OPTIONS, chromium
+from webapp.building.places import DIST
 
 PLACE = Place(0.03, 1e-6, 17.0, carrier_hz=SPEED_OF_LIGHT_M_S / 0.03)
 COARSE = Limits(
@@ -137,6 +144,86 @@ def growth():
     return {name: {'sets/s': rate(limits, 1.0)} for name, limits in rows.items()}
 
 
+IN_THE_BROWSER = {
+    'browser: sets/s, 50-95 us on 1 us (goal 20,000)': (1.0, 50, 95),
+    'browser: sets/s, 35-150 us on 0.1 us (goal 40,000)': (10.0, 35, 150),
+}
+TRIED = '() => Number(document.querySelector(`[data-finder="progress"]`).dataset.tried)'
+UNDER_WAY_MS, BROWSER_S = 6000, 6.0
+
+
+def in_the_browser():
+    """Return sets scored in a second by the note in a Chromium, from limits in words to the counted progress."""
+    start = _bench_start()
+    with sync_playwright() as playwright, start.address_of(DIST) as address:
+        browser = playwright.chromium.launch(executable_path=chromium(), args=list(OPTIONS))
+        table = {name: _page_rate(browser.new_page(), address, *case) for name, case in IN_THE_BROWSER.items()}
+        browser.close()
+    return table
+
+
+def _bench_start():
+    """Return the benchmark beside this one, which knows how to serve a folder."""
+    spec = importlib.util.spec_from_file_location('bench_start', Path(__file__).with_name('bench_start.py'))
+    module = importlib.util.module_from_spec(spec)
+    spec.loader.exec_module(module)
+    return module
+
+
+def _yardstick(clock_mhz):
+    """Return the yardstick as a plan."""
+    return {
+        'radar': {'carrier_ghz': SPEED_OF_LIGHT_M_S / 0.03 / 1e9, 'recovery_us': 10.0, 'clock_mhz': clock_mhz},
+        'coverage': {'range_km': [0.0, 185.2], 'speed_mps': [0.0, 1500.0]},
+        'wanted': {'decode_range': True},
+        'waveform': {'pri_us': [51, 53, 60, 63, 67, 84, 89, 93], 'pulses': 10, 'detect_m': 3},
+        'doppler': {'notch_mps': 17.0},
+    }
+
+
+def _page_rate(page, address, clock_mhz, low, high):
+    """Type the yardstick's limits, find plans, and count for some seconds once the search is under way."""
+    page.goto(f'{address}#{link.write(_yardstick(clock_mhz))}')
+    page.locator('html[data-engine="ready"]').wait_for(state='attached', timeout=180_000)
+    part = page.locator('#finder')
+    part.scroll_into_view_if_needed()
+    for key, value in (('pri_us.0', low), ('pri_us.1', high)):
+        number = part.locator(f'[data-key="find.{key}"]')
+        number.click()
+        number.fill(str(value))
+        number.press('Enter')
+    part.get_by_label('Decoding').select_option('exact')
+    page.wait_for_timeout(2000)
+    part.locator('[data-finder="start"]').click()
+    page.wait_for_timeout(UNDER_WAY_MS)  # a further worker is ready by then
+    first, began = page.evaluate(TRIED), time.perf_counter()
+    page.wait_for_timeout(1000 * BROWSER_S)
+    scored = (page.evaluate(TRIED) - first) / (time.perf_counter() - began)
+    page.close()
+    return scored
+
+
+def of_two_workers(seconds=6.0):
+    """Return how much more two processes do than one in the same time."""
+    done = []
+    for workers in (1, 2):
+        with ProcessPoolExecutor(workers) as pool:
+            list(pool.map(_slice, range(workers)))  # processes and tables are there before the clock runs
+            start, tried, waiting, number = time.perf_counter(), 0, [], workers
+            while time.perf_counter() - start < seconds:
+                while len(waiting) < 2 * workers:
+                    waiting.append(pool.submit(_slice, number))
+                    number += 1
+                tried += waiting.pop(0).result()
+            done.append(tried / (time.perf_counter() - start))
+            pool.shutdown(cancel_futures=True)
+    return done[1] / done[0]
+
+
+def _slice(number):
+    return run_slice(COARSE, 1, number).tried
+
+
 def measure():
     """Return rates, ratios to the grids in the same process, quality after some seconds, and how the rate grows."""
     coarse, fine = rate(COARSE), rate(FINE)
@@ -151,6 +238,8 @@ def measure():
         '35-150 us: times the int8 grid (goal 150)': fine / _grid_rate(grid_of_small_integers, FINE, fine_pris),
         '35-150 us: times the boolean array (goal 400)': fine / _grid_rate(grid_of_booleans, FINE, fine_pris),
         'differs from the grid by': abs(search.better(pris).visible_share - grid_of_small_integers(COARSE, pris)),
+        'two processes do, times one (goal 1.7 on two idle cores)': of_two_workers(),
+        **in_the_browser(),
         'quality': quality(),
         'growth': growth(),
     }

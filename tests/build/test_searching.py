@@ -169,6 +169,16 @@ def test_a_trade_off_has_a_point_for_every_row_and_marks_the_chosen_one(ask):
         assert columns['chosen']['x']['$'][1] == [1]
 
 
+@pytest.mark.parametrize('plan', [SKERRY, STAGGER], ids=['dwells', 'stagger'])
+def test_a_list_of_nothing_yet_has_the_plan_alone_in_its_figure(ask, plan):
+    ask('begin', plan=plan, asked={}, seed=1)
+    listed = ask('list', parts=[], taken=0)
+    assert listed['rows'] == []
+    assert listed['trade']['columns']['own']['x']['$'][1] == [1]
+    for low, high in listed['trade']['ranges'].values():
+        assert low < high
+
+
 def test_the_engine_starts_without_the_finder():
     code = 'import sys; import webapp.engine.bridge; print([n for n in sys.modules if n.startswith("pycore.finder")])'
     done = subprocess.run([sys.executable, '-c', code], cwd=ROOT, capture_output=True, text=True, check=True)

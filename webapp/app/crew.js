@@ -2,7 +2,7 @@
 // that whatever else is asked of an engine gets through between two of them. Knows the search's messages, nothing of the page.
 // What slices have found is kept here as the engine wrote it, so any worker can list what others have found.
 
-const STEP_MS = 25;
+const STEP_MS = { own: 25, further: 100 }; // between two steps the page's own engine answers edits; a further one need not
 const FOLD_AT = 12; // whole slices, after which they are put together at the next list
 
 // `more()` starts one more engine for the search alone, or gives null; `count` is how many of those there may be.
@@ -19,7 +19,7 @@ export function createCrew({ engine, more, count, onProgress, onEnd, onFault }) 
   }
 
   async function join(mine, worker) {
-    const member = { worker, number: null, tried: 0, idle: true };
+    const member = { worker, number: null, tried: 0, idle: true, ms: worker === engine ? STEP_MS.own : STEP_MS.further };
     member.facts = await worker.ask('find begin', mine.terms);
     mine.members.push(member);
     return member;
@@ -71,7 +71,7 @@ export function createCrew({ engine, more, count, onProgress, onEnd, onFault }) 
   }
 
   async function step(mine, member) {
-    const { tried, best, value, text, found } = await member.worker.ask('find run', { number: member.number, ms: STEP_MS });
+    const { tried, best, value, text, found } = await member.worker.ask('find run', { number: member.number, ms: member.ms });
     if (mine !== hunt) return;
     member.tried = tried;
     if (best !== undefined && (mine.best === null || best < mine.best.score)) mine.best = { score: best, value, text };

@@ -22,7 +22,7 @@ export function createFinder({ opening, engine, more, newest, plan, pending, qua
   const [start, stop] = [hook('start'), hook('stop')];
   const limits = createLimits({ ask: newest, plan, keys, quantities, typed, families: opening.units.families, units, status, opening: opening.finder.said, onChange: () => draw() });
   const refused = createRefused(at('finder-refused'), limits.putBack, (still) => `The search takes ${still}.`);
-  const sentence = createLimitsSentence({ node: at('finder-limits'), wants: at('finder-wants'), refused, limits, keys });
+  const sentence = createLimitsSentence({ node: at('finder-limits'), offers: at('finder-offers'), wants: at('finder-wants'), refused, limits, keys });
   const progress = createProgress(hook('progress'));
   const plans = createFoundPlans({ place: hook('plans'), colours: opening.finder.colours, onSelect: (i) => select(i), onUse: use });
   const trade = createTradeOff({ node: at('trade-off'), item: opening.items['trade-off'], onPick: select, onAgainst: () => list() });

@@ -5,7 +5,7 @@ import { quietButton } from './fields.js';
 import { createNumbers, setNumber } from './number.js';
 import { lay } from './paragraph.js';
 
-export function createLimitsSentence({ node, wants, refused, limits, keys }) {
+export function createLimitsSentence({ node, offers, wants, refused, limits, keys }) {
   const numberFor = createNumbers();
   const choices = new Map();
   const words = new Map();
@@ -17,18 +17,21 @@ export function createLimitsSentence({ node, wants, refused, limits, keys }) {
     return piece.text;
   }
 
-  function choiceFor({ choice, value, options }) {
+  function choiceFor({ choice, value, options, tail }) {
     if (!choices.has(choice)) {
+      const whole = document.createElement('span');
+      whole.className = 'kept';
       const select = document.createElement('select');
       select.className = 'in-line';
       select.setAttribute('aria-label', keys.of(choice).label);
       select.append(...options.map(([name, text]) => new Option(text, name)));
       select.addEventListener('change', () => limits.commit({ key: choice, value: select.value }));
-      choices.set(choice, select);
+      choices.set(choice, { whole, select });
     }
-    const select = choices.get(choice);
+    const { whole, select } = choices.get(choice);
     if (select.value !== value) select.value = value;
-    return select;
+    lay(whole, [select, tail]);
+    return whole;
   }
 
   function wordFor({ set, value, text, do: action }) {
@@ -41,7 +44,9 @@ export function createLimitsSentence({ node, wants, refused, limits, keys }) {
   return {
     draw() {
       const { said } = limits.now;
-      lay(node, joined(said.pieces).map(nodeFor));
+      const isOffer = (piece) => Boolean(piece.set ?? piece.do);
+      lay(node, joined(said.pieces.filter((piece) => !isOffer(piece))).map(nodeFor));
+      lay(offers, said.pieces.filter(isOffer).map(nodeFor));
       for (const { key } of said.pieces.filter((piece) => piece.key)) setNumber(numberFor(key), limits.look(key));
       wants.textContent = said.wants;
       refused.update([
@@ -52,12 +57,17 @@ export function createLimitsSentence({ node, wants, refused, limits, keys }) {
   };
 }
 
-// Neighbouring texts are one, so that a line of them can break and be read as a whole.
+// Neighbouring texts are one; the sign after a choice stays on its line.
 function joined(pieces) {
   const out = [];
   for (const piece of pieces) {
-    if ('text' in piece && !piece.set && !piece.do && out.at(-1)?.isText) out.at(-1).text += piece.text;
-    else out.push('text' in piece && !piece.set && !piece.do ? { text: piece.text, isText: true } : piece);
+    const last = out.at(-1);
+    if (piece.text === undefined) out.push({ ...piece, tail: '' });
+    else if (last?.choice && !last.tail && /^[,.]/.test(piece.text)) {
+      last.tail = piece.text.slice(0, 1);
+      out.push({ text: piece.text.slice(1) });
+    } else if (last?.text !== undefined) last.text += piece.text;
+    else out.push({ text: piece.text });
   }
   return out;
 }
