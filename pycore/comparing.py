@@ -7,7 +7,7 @@ from pycore.wording import THIN_SPACE, capitalised, count_word, listed, plural
 SIGNS = {'better': '+', 'worse': '\N{MINUS SIGN}', 'same': '=', 'new': '·', 'gone': '·'}
 """The sign beside each word, so that nothing is told by colour alone."""
 
-_WORDS = {'same': 'the same', 'new': 'only in this plan', 'gone': 'only in the kept plan'}
+_WORDS = {'same': 'the same', 'new': 'only in the present plan', 'gone': 'only in the kept plan'}
 _MOST_NAMED = 3
 
 
@@ -68,7 +68,7 @@ def _summary(inputs, changes):
 
 _COUNTED = (
     *(('better', 'better'), ('worse', 'worse'), ('same', 'the same')),
-    *(('new', 'only in this plan'), ('gone', 'only in the kept plan')),
+    *(('new', 'only in the present plan'), ('gone', 'only in the kept plan')),
 )
 
 

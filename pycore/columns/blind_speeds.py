@@ -97,7 +97,7 @@ def _words(computed, axis, names, notches, unseen, thin, units):
     where = 'outside the notch around zero' if len(floor) else ''
     everywhere, whole = within(notches, floor, axis.limits), outside(axis.limits, floor)
     first = zones_sentence(found, axis, 'speed', said, everywhere, whole, where)
-    against = thin.sentences(unseen)
+    against = thin.sentences(unseen, 'the notch around zero' if len(floor) else '')
     return {
         'caption': ' '.join([first, _first_blind_speeds(computed, axis), *against]),
         'short': first,

@@ -112,11 +112,12 @@ def _words(computed, axis, names, eclipsed, unseen, shared, thin, units):
         sentences += _beyond_the_cycle(computed, axis)
     elif computed.plan.n > 1 and not everywhere:
         sentences += _worst(computed, names)
-    sentences += thin.sentences(unseen) if thin.kept else [share_sentence(computed.plan, shared)]
+    against = thin.sentences(unseen, 'what lies before the first opening' if len(floor) else '')
+    sentences += against if thin.kept else [share_sentence(computed.plan, shared)]
     return {
         'caption': ' '.join(sentences),
         'short': sentences[0],
-        'summary': ' '.join([_summary(computed, axis, names, eclipsed, unseen), *thin.sentences(unseen)]),
+        'summary': ' '.join([_summary(computed, axis, names, eclipsed, unseen), *against]),
         'table': thin.table(_table(computed, axis, names, eclipsed), partial(_rows, axis), units),
     }
 

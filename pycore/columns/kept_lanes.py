@@ -70,13 +70,15 @@ class Beside:
             return ticks
         return {'at': [ALONE_AT, *ticks['at']], 'text': ['kept plan', *ticks['text']]}
 
-    def sentences(self, zones):
+    def sentences(self, zones, counted=''):
         """Say what the thin lanes are, and how much is lost now and with the kept plan.
 
         Parameters
         ----------
         zones : float array, shape (Z, 2)
             Where the present plan has too few. [m or m/s]
+        counted : str
+            What is counted that other sentences leave aside, such as ``'the notch around zero'``. [unitless]
 
         Returns
         -------
@@ -90,6 +92,7 @@ class Beside:
         now, then = (float(np.diff(some).sum()) for some in (zones, self.zones))
         if now == then == 0.0:
             return [f'{thin}: the kept plan{over}; like this one it loses nothing.']
+        over += f', {counted} counted' if counted else ''
         lengths = [self.axis.text(length) if length else 'nothing' for length in (now, then)]
         if abs(now - then) <= _CLOSE * (self.axis.limits[1] - self.axis.limits[0]) and lengths[0] == lengths[1]:
             return [f'{thin}: the kept plan{over}, which loses as much in all, {lengths[0]}.']

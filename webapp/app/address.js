@@ -6,6 +6,7 @@ const PAUSE_MS = 400;
 export function createAddress(onOpened) {
   let own = fragment();
   let timer = 0;
+  let isJump = false;
   const opened = () => {
     if (fragment() === own) return;
     clearTimeout(timer);
@@ -25,8 +26,15 @@ export function createAddress(onOpened) {
   };
   return {
     opened: own,
+    // The next link that is shown is a jump: it gets an entry of its own.
+    jump: () => { isJump = true; },
     show(text) {
       clearTimeout(timer);
+      if (isJump) {
+        isJump = false;
+        put(text, 'pushState');
+        return;
+      }
       timer = setTimeout(put, PAUSE_MS, text, 'replaceState');
     },
     add(text) {

@@ -26,7 +26,8 @@ export function createHead({ opening, state, status, address, hands, page, keys,
   }
 
   function standing() {
-    const { plan, pending } = state.now;
+    const { plan, pending, aside } = state.now;
+    if (aside) return [decided(plan.decided), 'as it was kept; its numbers rest while it is shown'].join(' · ');
     const changed = differing(plan, origin) + (pending.length && differing(plan, origin) === 0 ? 1 : 0);
     return [
       engineWord(pending.length),
@@ -38,7 +39,7 @@ export function createHead({ opening, state, status, address, hands, page, keys,
 
   function update() {
     setText(at('standing'), standing());
-    const untouched = !address.opened && differing(state.now.plan, opening.answer.plan) === 0;
+    const untouched = !state.now.aside && !address.opened && differing(state.now.plan, opening.answer.plan) === 0;
     const said = pasted && !untouched ? assumedText({ plan: state.now.plan, opening: opening.answer.plan, clauses: page.said(), keys, quantities }) : '';
     firstLine.update({ offered: untouched, said });
     setText(at('link-text'), address.whole(link));

@@ -34,7 +34,7 @@ export function createLooks({ state, keys, quantities, typed, engineState }) {
       waiting: pending !== undefined && engineState() !== 'ready',
       refused: refusal && clipped(refusal.text),
       invalid: Boolean(refusal) || pair, // of two ends that do not agree either may be the wrong one
-      plain: engineState() === 'failed',
+      plain: engineState() === 'failed' || state.now.aside !== null,
     };
   }
 

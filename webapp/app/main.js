@@ -3,6 +3,7 @@
 
 import { createAddress } from './address.js';
 import { createAsking } from './asking.js';
+import { createComparison } from './compare.js';
 import { createConventions } from './conventions.js';
 import { listenToDragging } from './dragging.js';
 import { newestOf, startEngine } from './engine.js';
@@ -12,6 +13,7 @@ import { createHandOver } from './hand-over.js';
 import { createFinder } from './finder.js';
 import { createHands } from './hands.js';
 import { createHead } from './head.js';
+import { createKeeping } from './keeping.js';
 import { createKeys } from './keys.js';
 import { eitherHands } from './limits.js';
 import { openedPlan } from './link.js';
@@ -22,6 +24,7 @@ import { packedPart } from './payload.js';
 import { createPoint } from './point.js';
 import { createQuantities } from './quantities.js';
 import { flipped } from './quiet.js';
+import { createSitting } from './sitting.js';
 import { createState } from './state.js';
 import { createStatus } from './status.js';
 import { followScheme } from './scheme.js';
@@ -50,7 +53,10 @@ const point = createPoint({ view, state, quantities, followed, keys: opening.fol
 const page = createPage({ opening, keys, quantities, typed, state, hands, followed, point, choose: view.choose, ask: () => asking.ask(), onOpen: (name, shows) => (shows ? opened.open(name, shows) : opened.close(name)) });
 const travel = createTravel({ state, status, page, buttons: { undo: document.getElementById('undo'), redo: document.getElementById('redo') } });
 const head = createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening: () => asking.isOpening(), openExample });
+const comparison = createComparison();
+const keeping = createKeeping({ state, status, address, comparison });
 let findings = opening.answer.findings;
+let isKept = false; // whether these are the kept plan's
 let waiting = []; // what is to be done when the answer to an edit stands on the page
 
 // The engine waits until the note is painted: on a busy machine both would be late.
@@ -65,10 +71,13 @@ const given = { engine, plan: () => state.now.plan, units: () => quantities.unit
 const opened = createOpenedFindings(given);
 const handOver = createHandOver({ ...given, status, opened: opening.answer.plan });
 const onRequest = [opened, handOver, createConventions(given), createOwnTable(given)]; // worked out when the edits pause
+const sitting = createSitting({ ...given, state, status, whole: address.whole, keep: keeping.keep, first: opening.answer.plan });
 
 function answered(answer, request) {
-  status.sayWhenQuiet(flipped(request.opened ? [] : findings, answer.findings));
+  const isOther = request.opened || isKept !== Boolean(state.now.aside);
+  status.sayWhenQuiet(flipped(isOther ? [] : findings, answer.findings));
   findings = answer.findings;
+  isKept = Boolean(state.now.aside);
   const told = answer.refused.filter(({ edit }) => edit.text === undefined || edit.do).map(({ message }) => message);
   if (answer.said.length + told.length) status.say([...told, ...answer.said].join(' '));
   for (const { act } of waiting.filter(({ count }) => count <= request.count)) act();
@@ -77,18 +86,28 @@ function answered(answer, request) {
     view.adopt({ target: answer.opened.target });
     head.opened(answer);
   }
-  head.answered(answer);
-  address.show(answer.link);
   if (request.opened !== null) handOver.opened(answer.plan);
+  if (request.opened !== null && answer.kept) state.keep(answer.kept.plan);
+  if (!state.now.aside) present(answer, request);
   if (request.deep) onRequest.forEach((part) => part.refresh());
   finder.follow();
   const shown = state.committed(request.count);
   page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(shown, Number(root.dataset.shown)); });
 }
 
-function looked(answer) {
+// What holds of the present plan only, not of the kept one while that is shown.
+function present(answer, request) {
   head.answered(answer);
   address.show(answer.link);
+  comparison.update(answer.kept);
+  sitting.answered(answer, request);
+}
+
+function looked(answer) {
+  if (!state.now.aside) {
+    head.answered(answer);
+    address.show(answer.link);
+  }
   page.look(answer).then(() => { root.dataset.looked = Number(root.dataset.looked ?? 0) + 1; });
 }
 
@@ -128,12 +147,17 @@ function takePlan(plan, link, name) {
 }
 
 state.watch((cause) => {
+  view.now.kept = state.now.aside ? null : state.now.kept;
   page.redraw();
+  keeping.update();
+  if (cause === 'resting') return keeping.rests();
+  if (cause === 'flip' || cause === 'kept') page.outdate();
   travel.update();
   head.update();
   if (cause !== 'answer') [opened, handOver].forEach((part) => part.wait());
   if (cause === 'travel') asking.open(null);
   if (cause !== 'answer') asking.ask();
+  return null;
 });
 
 view.watch((name, before) => {
