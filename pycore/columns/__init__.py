@@ -9,6 +9,7 @@ from pycore.columns import (
     dwell,
     eclipsed_ranges,
     every_pri,
+    speed_map,
     trade_line,
 )
 from pycore.columns.axes import range_axis, speed_axis
@@ -96,6 +97,8 @@ def marking(name, computed, units, size=None, view=WHOLE):
     picture : dict
         Of a map only the columns of the ring, as the map stays; of the others the whole figure, which costs little.
     """
+    if name == blind_speeds.NAME and speed_map.is_map(computed, view):
+        return {'columns': {'target': speed_map.marked(computed, units, view)}}
     if name not in ZOOMED:
         return picture(name, computed, units, size, view)
     x, y = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)

@@ -1,16 +1,17 @@
-"""Figure: the speeds at which each PRF is blind, or how a stagger answers at each speed.
+"""Figure: the speeds at which each PRF is blind, or how a stagger answers at each speed; or a map over what is moved.
 
 Sources: for dwells ``lanes``, ``notches`` (of each PRF), ``unseen`` (clear on fewer
 than M); for a stagger ``response``, ``threshold``, ``below`` (where the response is
 too low), ``speeds`` (marked speeds), ``dip`` and their names; of the kept plan ``kept-lanes``,
-``kept-blind`` and ``kept-unseen``, or ``kept-response``; ``target``. Those of the other kind are empty.
+``kept-blind`` and ``kept-unseen``, or ``kept-response``; for a map ``map``, ``own``, ``true-blind``
+(:mod:`pycore.columns.speed_map`); ``target``. Those of the other kinds are empty.
 """
 
 from functools import partial
 
 import numpy as np
 
-from pycore.columns import answering
+from pycore.columns import answering, speed_map
 from pycore.columns.axes import speed_axis
 from pycore.columns.blind_parts import avoidable, gaps, outside, within, zones
 from pycore.columns.kept_lanes import NO_LANES, beside
@@ -18,6 +19,7 @@ from pycore.columns.lanes import lane_bars, lane_range, lane_ticks, middles
 from pycore.columns.looks import looks
 from pycore.columns.mark import across
 from pycore.columns.prf_names import prf_names
+from pycore.columns.speed_rows import offered, shown_up
 from pycore.columns.speed_scales import choice, scale
 from pycore.columns.view import WHOLE
 from pycore.columns.zone_sentences import zones_sentence
@@ -39,7 +41,7 @@ def picture(computed, units, size=None, view=WHOLE):
     units : mapping
         Units that the reader prefers. [unitless]
     size : mapping or None
-        Width of the plot, for the curve of a stagger. [px]
+        Width and height of the plot, for a map. [px]
     view : View
         What the reader has chosen to look at. [unitless]
 
@@ -48,12 +50,30 @@ def picture(computed, units, size=None, view=WHOLE):
     picture : dict
         Columns, ranges, labels, ticks and words.
     """
-    axis = speed_axis(computed.plan.speed_m_s, units)
-    of_kind = _of_stagger if computed.is_stagger else _of_dwells
-    answer = of_kind(computed, axis, units, view.kept)
-    label, ticks = scale(computed, axis, view.axis)
-    answer['labels']['x'], answer['ticks']['x'], answer['choices'] = label, ticks, [choice(view.axis)]
+    axis, up = speed_axis(computed.plan.speed_m_s, units), shown_up(computed, view.up)
+    answer = _own(computed, axis, units, view.kept) if up == 'own' else _map(computed, axis, units, up, size, view.kept)
+    label, ticks = scale(computed, axis, view.axis, moves=up)
+    answer['labels']['x'], answer['ticks']['x'] = label, ticks
+    answer['choices'] = [choice(view.axis), _choice_up(computed, units, up)]
     answer['columns']['target'] = across(view.mark and view.mark.speed_m_s, axis, answer['ranges']['y'])
+    return answer
+
+
+def _choice_up(computed, units, up):
+    pairs = [list(pair) for pair in offered(computed, units)]
+    return {'name': 'up', 'said': 'Up the axis', 'now': up, 'of': pairs}
+
+
+def _own(computed, axis, units, kept):
+    answer = (_of_stagger if computed.is_stagger else _of_dwells)(computed, axis, units, kept)
+    answer['columns'] |= speed_map.nothing()
+    return answer
+
+
+def _map(computed, axis, units, up, size, kept):
+    answer = {'title': TITLE, **speed_map.picture(computed, axis, units, up, size, kept)}
+    empty = {'lanes': _NO_BARS, 'notches': _NO_BARS, 'unseen': _NO_BARS, **NO_LANES, **answering.nothing()}
+    answer['columns'] = {**empty, **answer['columns']}
     return answer
 
 

@@ -19,7 +19,7 @@ SCALES = {
 _KILO_FROM_HZ = 3000.0
 
 
-def scale(computed, axis, chosen):
+def scale(computed, axis, chosen, moves='own'):
     """Return how an axis of radial speed is labelled.
 
     Parameters
@@ -30,6 +30,8 @@ def scale(computed, axis, chosen):
         Of radial speed. [m/s]
     chosen : str
         One of ``SCALES``. [unitless]
+    moves : str
+        What goes up the axis; where the scale moves with it, the label says that it is this plan's. [unitless]
 
     Returns
     -------
@@ -38,30 +40,32 @@ def scale(computed, axis, chosen):
     ticks : dict
         ``at``, in the shown unit of speed, and ``text``.
     """
-    label, one = {'speed': _speed, 'doppler': _doppler, 'ratio': _ratio}[chosen](computed, axis)
+    label, one = {'speed': _speed, 'doppler': _doppler, 'ratio': _ratio}[chosen](computed, axis, moves)
     at, text = round_ticks(*(axis.shown(end) * axis.si / one for end in axis.limits))
     return label, {'at': [float(value * one / axis.si) for value in at], 'text': text}
 
 
-def _speed(_, axis):
+def _speed(_, axis, __):
     """Return the label, and one step of its unit. [m/s]"""
     return axis.label, axis.si
 
 
-def _doppler(computed, axis):
+def _doppler(computed, axis, moves):
     """Return the same for the Doppler frequency, at the first carrier where there are several."""
     carriers = computed.plan.carrier_hz
     per_hz = float(computed.plan.wavelength_m[0]) / 2.0
     kilo = max(map(abs, axis.limits)) / per_hz >= _KILO_FROM_HZ
-    at = '' if np.ptp(carriers) == 0 else f' at {trimmed(float(carriers[0]) / 1e9)}{THIN_SPACE}GHz'
+    same = np.ptp(carriers) == 0 and moves != 'carrier'
+    at = '' if same else f' at {trimmed(float(carriers[0]) / 1e9)}{THIN_SPACE}GHz'
     return f'Doppler frequency{at} ({"kHz" if kilo else "Hz"})', per_hz * (1e3 if kilo else 1.0)
 
 
-def _ratio(computed, _):
+def _ratio(computed, _, moves):
     """Return the same for blind speeds of a PRF at the mean PRI, at the first carrier."""
     plan = computed.plan
     first = float(plan.wavelength_m[0]) / (2.0 * float(plan.pri_s.mean()))
-    return 'radial speed, in first blind speeds of the mean PRI', first
+    whose = 'this plan’s' if moves in ('pri', 'carrier') else 'the'
+    return f'radial speed, in first blind speeds of {whose} mean PRI', first
 
 
 def choice(chosen):

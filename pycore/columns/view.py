@@ -5,6 +5,7 @@ from collections.abc import Mapping
 from dataclasses import dataclass, field, replace
 
 from pycore.columns.mark import Mark, marked
+from pycore.columns.speed_rows import UPS
 from pycore.columns.speed_scales import SCALES
 from pycore.computed import Computed
 from pycore.errors import InputError
@@ -25,12 +26,15 @@ class View:
         What the plan gives that was kept to compare with. [SI]
     axis : str
         What the axis of the blind speeds is read in, one of ``SCALES``. [unitless]
+    up : str
+        What goes up the axis of the blind speeds, one of ``UPS``. [unitless]
     """
 
     mark: Mark | None = None
     zoom: Mapping = field(default_factory=dict)
     kept: Computed | None = None
     axis: str = 'speed'
+    up: str = 'own'
 
     def part(self, name, x, y):
         """Return the axes that one figure is drawn on.
@@ -66,7 +70,7 @@ def seen(computed, chosen):
     chosen : mapping or None
         ``target``: ``range_km`` and ``speed_mps`` of the target that is followed; ``zoom``: for each figure of which
         a part is looked at, its ends ``x`` and ``y``; ``kept``: the plan to compare
-        with; ``axis`` of the blind speeds. [km, m/s]
+        with; ``axis`` of the blind speeds, and what goes ``up`` theirs. [km, m/s]
 
     Returns
     -------
@@ -84,14 +88,15 @@ def seen(computed, chosen):
         mark=marked(computed, chosen.get('target')),
         zoom=_zoomed(computed.plan, chosen.get('zoom') or {}),
         kept=None if kept is None else computed_of_document(kept, computed.with_echoes),
-        axis=_axis(chosen.get('axis') or 'speed'),
+        axis=_one_of('axis', chosen.get('axis') or 'speed', SCALES),
+        up=_one_of('up', chosen.get('up') or 'own', UPS),
     )
 
 
-def _axis(name):
-    if name not in SCALES:
-        raise InputError('axis', f'axis must be one of {", ".join(SCALES)}; got {name!r}.')
-    return name
+def _one_of(field_name, value, names):
+    if value not in tuple(names):
+        raise InputError(field_name, f'{field_name} must be one of {", ".join(names)}; got {value!r}.')
+    return value
 
 
 def _zoomed(plan, zoom):

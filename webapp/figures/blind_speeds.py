@@ -1,12 +1,15 @@
-"""Blind speeds: lanes with the notches of each PRF, or the response of a stagger."""
+"""Blind speeds: lanes with the notches of each PRF, the response of a stagger, or a map over what is moved."""
 
-from bokeh.models import HBar, Line, Scatter, Segment
+from bokeh.models import HBar, Image, Line, LinearColorMapper, Scatter, Segment
 
 from pycore.columns import blind_speeds
+from pycore.columns.classes import NAMES
+from pycore.columns.speed_map import STEPS
 from webapp.figures.lanes import lanes, thin_lanes
 from webapp.figures.marks import upright
 from webapp.figures.names import write
-from webapp.figures.style import draw, plot, source
+from webapp.figures.palette import CLASS_ROLES, STEP_ROLES
+from webapp.figures.style import draw, paint, plot, source
 
 NAME = blind_speeds.NAME
 
@@ -23,14 +26,30 @@ def build(picture):
     -------
     figure : bokeh figure
         Sources ``lanes``, ``notches``, ``unseen``; ``response``, ``threshold``, ``below``, ``speeds``, ``dip``,
-        ``names``; ``kept-lanes``, ``kept-blind``, ``kept-unseen``, ``kept-response``, ``target``.
+        ``names``; ``kept-lanes``, ``kept-blind``, ``kept-unseen``, ``kept-response``, ``map``,
+        ``own``, ``true-blind``, ``target``.
     """
     made = plot(NAME, picture)
+    _map(made, picture)
     lanes(made, NAME, picture, 'notches')
     thin_lanes(made, NAME, picture)
     _response(made, picture)
     upright(made, NAME, picture)
     return made
+
+
+def _map(made, picture):
+    """Draw the map, and on it lines that show on dark and on pale: true blind speeds, and the plan's own row."""
+    roles = [CLASS_ROLES[name] for name in NAMES] + [STEP_ROLES[name] for name in STEPS]
+    mapper = paint(LinearColorMapper(low=0, high=len(roles)), palette=roles)
+    image = Image(image='image', x='x', y='y', dw='dw', dh='dh', color_mapper=mapper)
+    draw(made, source(NAME, picture, 'map'), image, level='image')
+    blind, own = (source(NAME, picture, name) for name in ('true-blind', 'own'))
+    draw(made, blind, Line(x='x', y='y', line_width=4, line_alpha=0.85), line_color='paper')
+    draw(made, blind, Line(x='x', y='y', line_width=1.5), line_color='line')
+    ends = {'x0': 'x0', 'x1': 'x1', 'y0': 'y', 'y1': 'y'}
+    draw(made, own, Segment(**ends, line_width=4, line_alpha=0.85), line_color='paper')
+    draw(made, own, Segment(**ends, line_width=1.5, line_dash=[7, 4]), line_color='strong-text')
 
 
 def _response(made, picture):
