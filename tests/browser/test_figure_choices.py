@@ -23,3 +23,19 @@ def test_the_axis_of_the_blind_speeds_can_be_read_in_doppler_and_back(live):
     live.page.keyboard.press('Shift+Tab')
     live.page.keyboard.press('Enter')
     expect(speed).to_have_attribute('aria-pressed', 'true')
+
+
+def test_the_mean_interval_goes_up_the_axis_of_the_blind_speeds_and_the_caption_follows(live):
+    figure = live.page.locator('figure[data-figure="blind-speeds"]')
+    figure.scroll_into_view_if_needed()
+    up = figure.get_by_role('group', name='Up the axis')
+    expect(up.get_by_role('button')).to_have_text(['each PRF', 'mean PRI', 'carrier'])
+    expect(up.get_by_role('button', name='each PRF')).to_have_attribute('aria-pressed', 'true')
+    up.get_by_role('button', name='mean PRI').click()
+    caption = figure.locator('.figure-caption')
+    expect(caption).to_contain_text('All intervals are scaled together')
+    expect(up.get_by_role('button', name='mean PRI')).to_have_attribute('aria-pressed', 'true')
+    up.get_by_role('button', name='carrier').click()
+    expect(caption).to_contain_text('Only the carrier is moved')
+    up.get_by_role('button', name='each PRF').click()
+    expect(caption).to_contain_text('first blind speeds')
