@@ -101,7 +101,9 @@ def marked(mark):
     if mark is None:
         return ''
     chance = mark.followed.probability
-    return f'The target, ringed, has {significant(chance) if chance >= _LEAST else f"below {_LEAST}"}.'
+    if _LEAST <= chance <= 1.0 - _LEAST:
+        return f'The target, ringed, has {significant(chance)}.'
+    return f'The target, ringed, has {f"below {_LEAST}" if chance < _LEAST else f"above {1.0 - _LEAST}"}.'
 
 
 def _shares(computed, x, y, found, cut):

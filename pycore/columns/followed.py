@@ -157,7 +157,9 @@ def _cells(one, name, x, y):
 
 
 def _chance(probability):
-    return significant(probability) if probability >= _LEAST else f'below {_LEAST}'
+    if _LEAST <= probability <= 1.0 - _LEAST:
+        return significant(probability)
+    return f'below {_LEAST}' if probability < _LEAST else f'above {1.0 - _LEAST}'
 
 
 def _decibels(level):

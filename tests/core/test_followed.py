@@ -48,6 +48,11 @@ def test_a_target_in_the_notch_of_both_is_not_seen_and_the_table_says_why():
     assert {row[-1] for row in table['rows']} == {'no, in the notch'}
 
 
+def test_what_is_all_but_certain_is_never_said_to_be_certain():
+    near = {**PLAN, 'rain': [], 'coverage': {'range_km': [1.0, 110.0], 'speed_mps': [-50.0, 300.0]}}
+    assert 'with probability above 0.9995.' in said(near, 1.5, 80.0)['text']
+
+
 def test_a_target_under_rain_is_said_to_be_so():
     table = said(PLAN, 30.0, -10.0)
     assert [row[-1] for row in table['rows']] == ['no, under clutter'] * 2
