@@ -42,11 +42,9 @@ def clear_pieces(cpis, patches, first_opening_m, factor, clear, range_m, speed_m
     reach_m = np.array([0.5 * SPEED_OF_LIGHT_M_S * cpi.pri_s for cpi in cpis])
     edges, ratio = range_pieces(patches, reach_m, first_opening_m, factor, range_m)
     width = half_widths(cpis, patches, ratio)
-    known, pieces = {}, []
+    left, pieces = _SpeedsLeft(cpis, patches, clear, speed_m_s), []
     for low, high, half in zip(edges[:-1].tolist(), edges[1:].tolist(), width, strict=True):
-        speeds = known.get(half.tobytes())
-        if speeds is None:
-            speeds = known[half.tobytes()] = _speeds_left(cpis, patches, half, clear, speed_m_s)
+        speeds = left.of(half)
         if pieces and pieces[-1].speeds is speeds:
             low = pieces.pop().range_m[0]
         pieces.append(Piece((low, high), speeds))
@@ -74,19 +72,35 @@ def half_widths(cpis, patches, ratio):
     for prf, patch in np.ndindex(*ratio.shape[1:]):
         leak = leakage(cpis[prf], patches[patch].spread_m_s)
         values, place = np.unique(ratio[:, prf, patch], return_inverse=True)
-        width[:, prf, patch] = np.array([covered_half_width(leak, value) for value in values])[place]
+        width[:, prf, patch] = covered_half_width(leak, values)[place]
     return width
 
 
-def _speeds_left(cpis, patches, half, clear, speed_m_s):
-    """Return the clear speeds of all PRFs without those that the patches cover."""
-    speed = np.array([patch.speed_m_s for patch in patches])
-    parts = [
-        left_clear(clear.of(prf), covered_spans(speed, half[prf], cpi.blind_speed_m_s, speed_m_s))
-        for prf, cpi in enumerate(cpis)
-    ]
-    owner = np.repeat(np.arange(len(cpis)), [len(start) for start, _ in parts])
-    return Spans(owner, *(np.concatenate(ends) for ends in zip(*parts, strict=True)))
+class _SpeedsLeft:
+    """The clear speeds of all PRFs without those that the patches cover; each PRF's and each set's worked out once."""
+
+    def __init__(self, cpis, patches, clear, speed_m_s):
+        self._blind_m_s = [cpi.blind_speed_m_s for cpi in cpis]
+        self._clear = [clear.of(prf) for prf in range(len(cpis))]
+        self._middle_m_s = np.array([patch.speed_m_s for patch in patches])
+        self._axis_m_s = speed_m_s
+        self._known, self._known_of_prf = {}, {}
+
+    def of(self, half):
+        """Return the Spans that half widths, shape N × P, leave."""
+        if half.tobytes() not in self._known:
+            parts = [self._of_prf(prf, one) for prf, one in enumerate(half)]
+            owner = np.repeat(np.arange(len(parts)), [len(start) for start, _ in parts])
+            ends = (np.concatenate(ends) for ends in zip(*parts, strict=True))
+            self._known[half.tobytes()] = Spans(owner, *ends)
+        return self._known[half.tobytes()]
+
+    def _of_prf(self, prf, half):
+        key = prf, half.tobytes()
+        if key not in self._known_of_prf:
+            covered = covered_spans(self._middle_m_s, half, self._blind_m_s[prf], self._axis_m_s)
+            self._known_of_prf[key] = left_clear(self._clear[prf], covered)
+        return self._known_of_prf[key]
 
 
 def range_pieces(patches, unambiguous_range_m, first_opening_m, factor, range_m):
@@ -159,7 +173,7 @@ def covered_spans(speed_m_s, half_width_m_s, blind_speed_m_s, axis_m_s):
     speed_m_s : float array, shape P
         Mean closing speeds of the patches. [m/s]
     half_width_m_s : float array, shape P
-        Of :func:`covered_half_width`. [m/s]
+        Of :func:`pycore.covered.covered_half_width`. [m/s]
     blind_speed_m_s : float
         The PRF's first blind speed. [m/s]
     axis_m_s : tuple of two floats

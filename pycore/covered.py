@@ -15,6 +15,9 @@ from pycore.bank import lag_weights
 
 _POINTS_PER_FILTER = 32
 _GUESS_ERROR = 1e-4  # a parabola through three of those points misses a sidelobe's top by less than 1e-5 of it
+_SMALLEST = 1e-300
+_MOST_STEPS = 60
+_CLOSE = 1e-13  # of v_b
 
 
 @dataclass(frozen=True, slots=True)
@@ -40,16 +43,32 @@ class Leakage:
 
         Parameters
         ----------
-        turn : float
+        turn : float or array, shape S
             Offset over v_b. [unitless]
 
         Returns
         -------
-        passed : float
+        passed : float or array, shape S
             Share of the clutter's one-pulse power, against the noise's.
         """
-        lags = np.arange(1, len(self.coefficients))
-        return self.coefficients[0] + 2.0 * float(np.cos(2.0 * np.pi * turn * lags) @ self.coefficients[1:])
+        angle = np.multiply.outer(turn, 2.0 * np.pi * np.arange(1, len(self.coefficients)))
+        return self.coefficients[0] + 2.0 * (np.cos(angle) @ self.coefficients[1:])
+
+    def slope_at(self, turn):
+        """Return how fast the share passed changes with the offset.
+
+        Parameters
+        ----------
+        turn : float or array, shape S
+            Offset over v_b. [unitless]
+
+        Returns
+        -------
+        slope : float or array, shape S
+            Of the share passed, for one turn.
+        """
+        turns = 2.0 * np.pi * np.arange(1, len(self.coefficients))
+        return -2.0 * (np.sin(np.multiply.outer(turn, turns)) @ (turns * self.coefficients[1:]))
 
 
 def leakage(cpi, spread_m_s):
@@ -81,37 +100,66 @@ def covered_half_width(leak, clutter_to_noise):
     ----------
     leak : Leakage
         The CPI's filters on this patch. [unitless]
-    clutter_to_noise : float
+    clutter_to_noise : float or array, shape S
         One-pulse power ratio C. [unitless]
 
     Returns
     -------
-    half_width_m_s : float
+    half_width_m_s : float or array, shape S
         h: 0 where no filter is above the noise, v_b/2 where every filter is. [m/s]
     """
-    low, high = _last_fall(leak, clutter_to_noise)
-    # One step of the sampled response, halved so often, is far below 1e-9 of a blind speed.
-    for _ in range(36):
-        middle = 0.5 * (low + high)
-        low, high = (middle, high) if clutter_to_noise * leak.at(middle) > 1.0 else (low, middle)
-    return min(high, 0.5) * leak.blind_speed_m_s
+    # C × passed > 1, put the other way about: no ratio is too small to be turned over.
+    level = 1.0 / np.maximum(np.asarray(clutter_to_noise, dtype=float), _SMALLEST)
+    crossing = _crossing(leak, level.ravel(), *_last_falls(leak, level.ravel()))
+    return crossing.reshape(level.shape)[()] * leak.blind_speed_m_s
 
 
-def _last_fall(leak, ratio):
-    """Return two offsets, in turns, between which the residue falls below the noise for good; 0, 0 if it never does."""
-    passed = leak.passed * ratio
+def _crossing(leak, level, low, high):
+    """Return where the response crosses a level between two offsets: Newton's steps, halvings where they lead out."""
+    turn = 0.5 * (low + high)
+    for _ in range(_MOST_STEPS):
+        over = leak.at(turn) - level
+        low, high = np.where(over > 0.0, turn, low), np.where(over > 0.0, high, turn)
+        slope = leak.slope_at(turn)
+        aim = turn - over / np.where(slope < 0.0, slope, -math.inf)
+        after = np.where((aim > low) & (aim < high), aim, 0.5 * (low + high))
+        if np.all(np.abs(after - turn) <= _CLOSE):
+            return after
+        turn = after
+    return turn
+
+
+def _last_falls(leak, level):
+    """Return offsets, in turns, between which the response falls below each level for good; 0, 0 if it never does."""
+    passed = leak.passed
     step = 0.5 / (len(passed) - 1)
-    above = np.flatnonzero(passed > 1.0)
-    last = int(above[-1]) if above.size else -1
+    loudest_beyond = np.maximum.accumulate(passed[::-1])  # rising: from half of v_b inward
+    last = len(passed) - 1 - np.searchsorted(loudest_beyond, level, side='right')
+    low, high = np.maximum(last, 0) * step, np.minimum((last + 1) * step, 0.5)
+    low = np.where(last == len(passed) - 1, high, low)
+    tops, guess = _tops(passed)
+    hidden = (guess > (1.0 - _GUESS_ERROR) * level[:, None]) & (tops > last[:, None] + 1)
+    for one in np.flatnonzero(hidden.any(axis=1)).tolist():
+        low[one], high[one] = _beside_a_top(leak, level[one], tops[hidden[one]], (low[one], high[one]), step)
+    return low, high
+
+
+def _tops(passed):
+    """Return where a sampled response has tops, and a guess of their heights from a parabola through three points."""
     left, inner, right = passed[:-2], passed[1:-1], passed[2:]
     bend = np.minimum(left - 2.0 * inner + right, -math.ulp(1.0))
     guess = inner - (right - left) ** 2 / (8.0 * bend)
-    tops = np.flatnonzero((inner >= left) & (inner >= right) & (guess > 1.0 - _GUESS_ERROR)) + 1
-    for top in tops[tops > last + 1][::-1]:
+    at = np.flatnonzero((inner >= left) & (inner >= right))
+    return at + 1, guess[at]
+
+
+def _beside_a_top(leak, level, tops, otherwise, step):
+    """Return the fall beside the last sidelobe that reaches a level between two samples."""
+    for top in tops[::-1].tolist():
         turn, height = _vertex(leak, (top - 1) * step, (top + 1) * step)
-        if ratio * height > 1.0:
+        if height > level:
             return turn, (top + 1) * step
-    return max(last, 0) * step, (last + 1) * step
+    return otherwise
 
 
 def _vertex(leak, low, high):

@@ -111,7 +111,7 @@ def _shared_strength(cells, m, table, shift, weight):
     place = np.rint((np.minimum(level, _STRONGEST) - _WEAKEST) * _PER_E_FOLD).astype(np.intp)
     total = np.zeros(cells.shape[1])
     for step, share in zip(shift, weight, strict=True):
-        total += share * at_least(np.moveaxis(table[place + step], 0, -1), m)
+        total += share * at_least(np.moveaxis(table.take(place + step), 0, -1), m)
     return total
 
 

@@ -14,7 +14,7 @@ from pycore.rough_need import rough_factor_log
 from pycore.speed_samples import best_gain, sampled_speeds
 
 _SHARED = ('swerling1', 'swerling3')
-_DOUBT = 0.004  # of the logarithm of the needed factor, at first
+_DOUBT = 0.0015  # of the logarithm of the needed factor, at first
 _NEAREST_M = 1e-3
 
 

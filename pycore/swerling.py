@@ -56,9 +56,12 @@ class SteadyCurve:
         """Return the probability at each signal-to-noise ratio (sum over the outputs)."""
         place = np.minimum(np.sqrt(signal_to_noise) / self._step, _NODES * (1.0 - 1e-15))
         index = place.astype(np.intp)
-        place -= index
-        value, slope, square, cube = (part[index] for part in self._pieces)
-        return value + place * (slope + place * (square + place * cube))
+        place = place - index
+        found = self._pieces[3].take(index)
+        for part in (2, 1, 0):
+            found *= place
+            found += self._pieces[part].take(index)
+        return found
 
 
 @lru_cache(maxsize=16)

@@ -74,6 +74,13 @@ def test_a_sidelobe_that_just_rises_above_the_noise_is_covered_to_its_top():
     assert below < place - 0.5 * cpi.blind_speed_m_s / 13
 
 
+@pytest.mark.parametrize('name', ['rectangular', 'hamming', 'chebyshev'])
+def test_many_ratios_at_once_cover_what_each_covers_alone(name):
+    leak, ratios = covered.leakage(a_cpi(pulses=16, name=name), 0.3), 10 ** np.linspace(-3.0, 7.0, 40)
+    each = [covered.covered_half_width(leak, ratio) for ratio in ratios.tolist()]
+    assert covered.covered_half_width(leak, ratios) == pytest.approx(each, abs=1e-9)
+
+
 @settings(deadline=None)
 @given(st.floats(-20.0, 80.0), st.floats(0.0, 10.0), st.floats(0.0, 4.0))
 def test_stronger_clutter_never_covers_less(db, more_db, spread):

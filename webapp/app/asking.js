@@ -18,11 +18,12 @@ export function createAsking({ engine, state, view, figures, sizes, units, onLat
     late('');
   };
 
+  // What is worked out in a pause is findings; the figures stand already, and an edit must not wait for them.
   function ask(deep = false) {
     clearTimeout(pause);
     passed = false;
     const request = { ...state.request(), opened };
-    const args = { edits: request.edits.map(plain), figures: figures(), size: sizes(), units: units(), view: view.now, deep };
+    const args = { edits: request.edits.map(plain), figures: deep ? [] : figures(), size: sizes(), units: units(), view: view.now, deep };
     if (waits === 0) timers = [setTimeout(late, LATE_MS, 'late'), setTimeout(late, LONG_MS, 'long')];
     waits += 1;
     engine.newest('note', opened === null ? { ...args, plan: request.plan } : { ...args, opened })

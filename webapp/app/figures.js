@@ -6,6 +6,7 @@ import { bokeh } from './bokeh.js';
 const SCHEMES = ['light', 'dark']; // the order of the colours in a model's tags
 const RING = 'target'; // the source of the followed target
 const NUMBERS = 'holes'; // that of the holes' numbers
+const UNCOMPARED = { check_eq: false }; // a map is new with nearly every edit: to compare its cells takes half as long as to draw it
 
 const mounted = new Map();
 let scheme = 'light';
@@ -25,14 +26,17 @@ export async function mount(name, element, item) {
 
 // Show another picture of the same figure. Columns are typed arrays or lists; an image is a typed array with a `shape`.
 // `holds` gives the ends between which an axis measures what it says; beyond them lies another part of the figure.
-// A picture without ranges brings columns only. A ring that is being dragged stays where the hand is.
+// A picture without ranges brings columns only. A ring that is being dragged stays where the hand is. The promise of a whole
+// picture ends when it is painted.
 export function update(name, { columns, ranges, labels, ticks, holds = {} }) {
   const figure = mounted.get(name);
+  if (ranges) figure.view.pause();
   if (ranges) setAxes(name, figure, { ranges, labels, ticks, holds });
   for (const [source, data] of Object.entries(columns)) {
-    if (source !== RING || !figure.held) figure.named.get(`${name}/${source}`).data = columnsOf(data);
+    if (source === RING && figure.held) continue;
+    figure.named.get(`${name}/${source}`).setv({ data: columnsOf(data) }, data.image ? UNCOMPARED : {});
   }
-  if (ranges) repaintIfMoved(figure.view);
+  return ranges ? paintedOnce(figure.view) : null;
 }
 
 function setAxes(name, figure, { ranges, labels, ticks, holds }) {
@@ -73,6 +77,25 @@ export function sizes() {
     const { width, height } = view.frame.bbox;
     return [name, { width: Math.round(width), height: Math.round(height) }];
   }));
+}
+
+// On the canvas once, when all its sources are taken in, which they are a few promises later. Left to itself, the view would
+// paint in the next frame what has come by then, and perhaps again in the one after it.
+async function paintedOnce(view) {
+  await tasksDone();
+  view.unpause(true);
+  if (view.is_paused) return; // another picture is already on its way
+  view.invalidate_painters();
+  repaintIfMoved(view);
+  view.repaint();
+}
+
+function tasksDone() {
+  return new Promise((resolve) => {
+    const { port1, port2 } = new MessageChannel();
+    port1.onmessage = () => { port1.close(); resolve(); };
+    port2.postMessage(null);
+  });
 }
 
 function namesOf(models) {

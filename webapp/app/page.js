@@ -107,7 +107,7 @@ export function createPage({ opening, keys, quantities, typed, state, hands, fol
       cautions.update(answer.cautions);
       target.answered(answer.target);
       painting = painting.then(() => pictures.show(answer.figures, count)).then(() => pictures.mark(painted));
-      return painting.then(nextFrame);
+      return painting.then(onScreen);
     },
     outdate: () => pictures.outdate(),
     look(answer) {
@@ -124,6 +124,11 @@ export function createPage({ opening, keys, quantities, typed, state, hands, fol
   };
 }
 
-function nextFrame() {
-  return new Promise((resolve) => { requestAnimationFrame(() => requestAnimationFrame(resolve)); });
+// What has been painted by now is on the screen once the next frame is out; a message comes after that frame, not in it.
+function onScreen() {
+  return new Promise((resolve) => {
+    const { port1, port2 } = new MessageChannel();
+    port1.onmessage = () => { port1.close(); resolve(); };
+    requestAnimationFrame(() => port2.postMessage(null));
+  });
 }

@@ -91,7 +91,7 @@ async function draw(frame, name, picture, item, count, listen) {
   caption(frame, picture);
   frame.mounted ??= mount(name, frame.plot, item).then(() => listen(name, frame));
   await frame.mounted;
-  if (picture.columns) update(name, picture);
+  if (picture.columns) await update(name, picture);
   frame.cross.refresh();
   frame.node.classList.remove('pending');
 }
