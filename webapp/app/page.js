@@ -113,7 +113,7 @@ export function createPage({ opening, keys, quantities, typed, state, hands, fol
     look(answer) {
       target.answered(answer.target);
       painting = painting.then(() => pictures.look(answer.figures, painted));
-      return painting.then(nextFrame);
+      return painting.then(onScreen);
     },
     clear() {
       verdict.clear();
