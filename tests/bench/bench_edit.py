@@ -61,7 +61,7 @@ LISTEN = """() => {
 KEYS = """async () => {
   document.getElementById('quantities').open = true;
   await new Promise((resolve) => { setTimeout(resolve, 500); }); // the table is filled when it has been opened
-  const numbers = [...document.querySelectorAll('.number[role="spinbutton"]')];
+  const numbers = [...document.querySelectorAll(':is(#plan, #quantities) .number[role="spinbutton"]')];
   return [...new Set(numbers.map((number) => number.dataset.key))];
 }"""
 PRESS = """([key, x, type]) => document.querySelector(`.number[data-key="${CSS.escape(key)}"]`).dispatchEvent(
