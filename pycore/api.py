@@ -8,7 +8,7 @@ from pycore import edit, link
 from pycore.assessment import assessment, finite
 from pycore.cautions import cautions
 from pycore.checks_here import conventions_here
-from pycore.columns import followed, marking, picture
+from pycore.columns import FIGURES, followed, marking, picture
 from pycore.columns.here import here_words
 from pycore.columns.view import seen
 from pycore.comparing import comparison, moved
@@ -103,7 +103,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     kept = None if looked.kept is None else looked.kept.plan.document
     return {
         'plan': computed.plan.document,
-        'link': _link(computed, looked, units),
+        'link': _link(computed, looked, units, view),
         'opened': None if start is None else _as_opened(start),
         'said': said,
         'refused': refused,
@@ -140,7 +140,7 @@ def look(plan, figures=(), marked=(), size=None, units=None, view=None):
     looked = seen(computed, view)
     sizes = size or {}
     return {
-        'link': _link(computed, looked, units),
+        'link': _link(computed, looked, units, view),
         'figures': {
             **{name: picture(name, computed, units, sizes.get(name), looked) for name in figures},
             **{name: marking(name, computed, units, sizes.get(name), looked) for name in marked if name not in figures},
@@ -200,13 +200,14 @@ def typed_target(name, text, current=None, units=None):
     return {'value': read_number(text, key, f'followed.{name}', unit, current)}
 
 
-def _link(computed, looked, units):
-    """Write the link, which carries the followed target, the reader's units, and the kept plan."""
+def _link(computed, looked, units, view):
+    """Write the link: with the followed target, the reader's units, the kept plan and how the page is shown."""
     mark, text = looked.mark, units_text(units)
-    view = {} if mark is None else {'target': link.target_text(mark.target)}
-    view |= {'units': text} if text else {}
-    view |= {} if looked.kept is None else beside(looked.kept.plan.document)
-    return link.written(computed.plan.document, view=view)
+    items = link.page_items(view or {}, FIGURES)
+    items |= {} if mark is None else {'target': link.target_text(mark.target)}
+    items |= {'units': text} if text else {}
+    items |= {} if looked.kept is None else beside(looked.kept.plan.document)
+    return link.written(computed.plan.document, view=items)
 
 
 def _with_kept(start, view):

@@ -42,7 +42,7 @@ def picture(computed, units, size=None, view=WHOLE):
     units : mapping
         Units that the reader prefers. [unitless]
     size : mapping or None
-        Width and height of the plot. [px]
+        Width and height of the plot; ``fine``, cells along each side of a pixel, is more than one for paper. [px]
     view : View
         What the reader has chosen to look at. [unitless]
 
@@ -53,15 +53,16 @@ def picture(computed, units, size=None, view=WHOLE):
     """
     whole = range_axis(computed.plan.range_m, units), speed_axis(computed.plan.speed_m_s, units)
     x, y = part = view.part(NAME, *whole)
+    size = size or SIZE
     if view.kept is not None:
-        return _compared(computed, view, whole, part, size or SIZE)
-    count, blind, with_clutter = _counted(computed, part, size or SIZE)
-    numbers, boxes = _numbers(computed, x, y, blind)
+        return _compared(computed, view, whole, part, size)
+    count, with_clutter = _counted(computed, part, *_cells_for(size))
+    numbers, boxes = _numbers(computed, x, y, _Blind(computed, part, count))
     return _figure(
         part,
         words(computed, *whole, shown_part(*whole, part)),
         {
-            'map': {'image': classes(count, computed.looks, computed.m, with_clutter), **_frame(x, y)},
+            'map': {'image': _image(computed, part, size, count, with_clutter), **_frame(x, y)},
             **_regions(computed, x, y),
             'holes': numbers,
             'target': ring(view.mark, x, y),
@@ -111,16 +112,20 @@ def _frame(x, y):
     }
 
 
-def _counted(computed, part, size):
-    """Return the clear PRFs in every cell, the cells that another plan could see, and the count with clutter."""
-    width, height = _cells_for(size)
+def _image(computed, part, size, count, with_clutter):
+    """Return the class of every cell, counted anew where a pixel holds several."""
+    fine = int(size.get('fine', 1))
+    if fine > 1:
+        count, with_clutter = _counted(computed, part, *(fine * cells for cells in _cells_for(size)))
+    return classes(count, computed.looks, computed.m, with_clutter, fine)
+
+
+def _counted(computed, part, width, height):
+    """Return the clear PRFs in every cell, and the count with clutter."""
     seen = computed.sight
     at_range, at_speed = (zones.centres(axis.limits, cells) for axis, cells in zip(part, (width, height), strict=True))
     count = zones.count_map(seen.ranges, seen.speeds, at_range, at_speed)
-    could = [
-        zones.clear_marks(spans, at) for spans, at in ((seen.floor_ranges, at_range), (seen.floor_speeds, at_speed))
-    ]
-    return count, _Blind(count < seen.m, *could, seen.m), _with_clutter(computed, at_range, at_speed)
+    return count, _with_clutter(computed, at_range, at_speed)
 
 
 def _with_clutter(computed, at_range, at_speed):
@@ -141,8 +146,11 @@ def _cells_for(size):
 class _Blind:
     """Cells of a map that are blind and outside the floor, looked at piece by piece."""
 
-    def __init__(self, blind, on_range, on_speed, m):
-        self.blind, self.on_range, self.on_speed, self.m = blind, on_range, on_speed, m
+    def __init__(self, computed, part, count):
+        seen, (height, width), (x, y) = computed.sight, count.shape, part
+        self.blind, self.m = count < seen.m, seen.m
+        self.on_range = zones.clear_marks(seen.floor_ranges, zones.centres(x.limits, width))
+        self.on_speed = zones.clear_marks(seen.floor_speeds, zones.centres(y.limits, height))
 
     def within(self, rows, columns):
         could = np.bitwise_count(self.on_speed[rows, None] & self.on_range[columns]) >= self.m

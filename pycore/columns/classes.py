@@ -38,7 +38,7 @@ def _class_of_count(n, m):
     return table.tobytes()
 
 
-def classes(count, n, m, with_clutter=None):
+def classes(count, n, m, with_clutter=None, fine=1):
     """Return the class of every cell.
 
     Parameters
@@ -51,6 +51,8 @@ def classes(count, n, m, with_clutter=None):
         Number that must be clear. [unitless]
     with_clutter : uint8 array, shape (V, R), or None
         Number of PRFs that are clear of clutter too; none where there is no clutter. [unitless]
+    fine : int
+        Cells along each side of a pixel: hatch and dots stay as large as they are. [unitless]
 
     Returns
     -------
@@ -65,13 +67,13 @@ def classes(count, n, m, with_clutter=None):
     inner[:-1] &= blind[1:]
     inner[:, 1:] &= blind[:, :-1]
     inner[:, :-1] &= blind[:, 1:]
-    row, column = np.arange(count.shape[0]) % PITCH, np.arange(count.shape[1]) % PITCH
+    row, column = (np.arange(cells) // fine % PITCH for cells in count.shape)
     code[(code == NONE) & inner & (row[:, None] == column)] = NONE_HATCH
     if m > 1:
         code[(code == TOO_FEW) & ~inner] = TOO_FEW_EDGE
     if with_clutter is not None:
         lost = (with_clutter < m) & ~blind
-        code[lost & _dots(count.shape)] = DOT
+        code[lost & _dots(count.shape, fine)] = DOT
     return code
 
 
@@ -107,8 +109,8 @@ def _marks(shape):
 
 
 @lru_cache(maxsize=4)
-def _dots(shape):
+def _dots(shape, fine):
     """Return a lattice of dots, every second row of them moved by half a step; kept, as a map keeps its size."""
-    row, column = np.arange(shape[0])[:, None], np.arange(shape[1])
+    row, column = np.arange(shape[0])[:, None] // fine, np.arange(shape[1]) // fine
     moved = column + (row // (DOT_PITCH // 2)) % 2 * (DOT_PITCH // 2)
     return (row % (DOT_PITCH // 2) < _DOT) & (moved % DOT_PITCH < _DOT)

@@ -74,7 +74,8 @@ def picture(computed, units, size=None, view=WHOLE):
     units : mapping
         Units that the reader prefers. [unitless]
     size : mapping or None
-        Width and height of the plot. [px]
+        Width and height of the plot; with ``fine`` above one the map for paper has more cells, and the words are still
+        those of the screen. [px]
     view : View
         What the reader has chosen to look at. [unitless]
 
@@ -89,13 +90,14 @@ def picture(computed, units, size=None, view=WHOLE):
     span = top - bottom
     strip = _Strip(bottom - (_GAP + _STRIP) / _MAP * span, bottom - _GAP / _MAP * span)
     wanted = computed.plan.target.pd_wanted
-    found = probabilities(computed, size or SIZE, part)
+    size = size or SIZE
+    found = probabilities(computed, {**size, 'fine': 1}, part)
     return {
         'title': TITLE,
         **words(computed, *whole, found, shown_part(*whole, part), view.kept),
         'marked': marked(view.mark),
         'columns': {
-            'map': {'image': _classes(found, wanted), **_frame(x, y)},
+            'map': {'image': _classes(_finer(computed, size, part, found), wanted), **_frame(x, y)},
             **_strip_of(computed, x, strip, wanted),
             'kept': _kept(view.kept, x, strip),
             'frame': _frames(x, y, strip),
@@ -105,7 +107,7 @@ def picture(computed, units, size=None, view=WHOLE):
         'labels': {'x': x.label, 'y': y.label},
         'units': {'x': x.unit, 'y': y.unit},
         'holds': {'y': y.ends},
-        'ticks': {'y': _ticks(y, strip, wanted, (size or SIZE)['height'])},
+        'ticks': {'y': _ticks(y, strip, wanted, size['height'])},
     }
 
 
@@ -117,7 +119,7 @@ def probabilities(computed, size, part):
     computed : Computed
         What the plan gives. [SI]
     size : mapping
-        Width and height of the whole plot. [px]
+        Width and height of the whole plot; ``fine`` divides the cells further. [px]
     part : pair of Axis
         Ranges and radial speeds of the map. [m, m/s]
 
@@ -127,11 +129,16 @@ def probabilities(computed, size, part):
         One row for each speed. The more PRFs, the coarser the cells: the work stays the same.
     """
     width, height = max(size['width'], 16.0), max(_MAP * size['height'], 16.0)
+    fine = size.get('fine', 1)
     most = _CELLS / max(computed.looks, 1) * (_CLUTTERED if computed.echoes.patches else 1.0)
-    cell = max(np.sqrt(width * height / most), _SMALLEST_PX)
+    cell = max(np.sqrt(width * height / most), _SMALLEST_PX) / fine
     at_range = zones.centres(part[0].limits, max(int(width / cell), 8))
     at_speed = zones.centres(part[1].limits, max(int(height / cell), 8))
     return detected.probability_over(computed, at_range, at_speed).T
+
+
+def _finer(computed, size, part, found):
+    return probabilities(computed, size, part) if size.get('fine', 1) > 1 else found
 
 
 def _classes(found, wanted):

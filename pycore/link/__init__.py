@@ -18,7 +18,7 @@ from pycore.link.items import value_text
 from pycore.link.names import LISTS, RECORDS, REMARK, SEE, TEXTS
 from pycore.link.reading import plan_of
 from pycore.link.text import LONGEST, checksum, deflated, fragment_of, inflated
-from pycore.link.view import target_of, target_text
+from pycore.link.view import page_items, target_of, target_text
 from pycore.plan.document import filled, shown
 from pycore.plan.keys import KEYS
 from pycore.plan.paths import value_at
@@ -29,6 +29,7 @@ __all__ = [
     'Opened',
     'checksum',
     'fragment_of',
+    'page_items',
     'read_link',
     'target_of',
     'target_text',

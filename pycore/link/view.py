@@ -1,4 +1,4 @@
-"""Items of a link that say how a plan is looked at: the target that is followed."""
+"""Items of a link that say how a plan is looked at: the target that is followed, and how the page is shown."""
 
 from pycore.errors import InputError
 from pycore.link.items import read_value, value_text
@@ -47,3 +47,26 @@ def target_of(text):
         name: checked_number(key, read_value(key, part, f'target.{name}'), f'target.{name}')
         for part, (name, key) in zip(parts, FOLLOWED.items(), strict=True)
     }
+
+
+THEMES = ('light', 'dark')
+"""What a page may be shown in, other than what its reader's system prefers. [unitless]"""
+
+
+def page_items(chosen, figures):
+    """Return the items that say how the page is shown; what is no such choice is left out.
+
+    Parameters
+    ----------
+    chosen : mapping
+        ``theme``, one of ``THEMES``; ``present``, the figure of the meeting view. [unitless]
+    figures : sequence of str
+        Names of all figures. [unitless]
+
+    Returns
+    -------
+    items : dict of str
+        Ready for a link.
+    """
+    allowed = {'theme': THEMES, 'present': figures}
+    return {name: chosen[name] for name, choices in allowed.items() if chosen.get(name) in choices}

@@ -199,6 +199,30 @@ def test_hatching_runs_at_45_degrees_and_never_touches_the_edge_of_a_zone():
     assert (rows.min(), rows.max(), cols.min(), cols.max()) == (6, 23, 6, 33)
 
 
+def test_hatching_and_dots_on_paper_are_as_large_as_on_the_screen_and_finer_at_their_edges():
+    count = np.zeros((70, 70), dtype=np.uint8)
+    count[:, 35:] = 2
+    plain = classes.classes(count, 2, 1, np.zeros_like(count))
+    fine = classes.classes(count.repeat(2, axis=0).repeat(2, axis=1), 2, 1, np.zeros((140, 140), np.uint8), fine=2)
+    for kind in (classes.NONE_HATCH, classes.DOT):
+        assert np.mean(fine == kind) == pytest.approx(np.mean(plain == kind), rel=0.1)
+        assert np.mean((fine[::2, ::2] == kind) == (plain == kind)) > 0.98  # all but the edges, which are finer
+
+
+def test_a_map_for_paper_has_more_cells_and_its_numbers_where_they_were():
+    size = {'width': 300, 'height': 100}
+    plain, fine = (pictures(OPENING, size={**size, **more})['blind-zones']['columns'] for more in ({}, {'fine': 2}))
+    assert fine['map']['image'].shape == (200, 600)
+    assert str(fine['holes']) == str(plain['holes'])
+
+
+def test_on_paper_the_map_of_detection_is_finer_and_its_words_are_those_of_the_screen():
+    size = {'width': 600, 'height': 150}
+    plain, fine = (pictures(OPENING, size={**size, **more})['detection'] for more in ({}, {'fine': 2}))
+    assert fine['columns']['map']['image'].size == pytest.approx(4 * plain['columns']['map']['image'].size, rel=0.1)
+    assert (fine['caption'], fine['summary']) == (plain['caption'], plain['summary'])
+
+
 def test_the_blind_side_of_the_m_of_n_edge_is_a_line():
     count = np.full((20, 20), 3, dtype=np.uint8)
     count[:, :9] = 1

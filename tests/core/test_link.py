@@ -364,3 +364,9 @@ def test_a_number_is_spelt_with_digits_on_both_sides_of_its_point(value):
     text = number_text(value)
     assert re.fullmatch(r'-?\d+(\.\d+)?(e-?\d+)?', text)
     assert float(text) == value or math.isclose(float(text), value, rel_tol=0)
+
+
+def test_a_link_carries_how_the_page_is_shown_and_nothing_that_is_no_such_choice():
+    chosen = {'theme': 'dark', 'present': 'dwell', 'target': None, 'zoom': {}}
+    assert link.page_items(chosen, ('dwell',)) == {'theme': 'dark', 'present': 'dwell'}
+    assert link.page_items({'theme': 'sepia', 'present': '<b>'}, ('dwell',)) == {}

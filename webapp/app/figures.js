@@ -10,6 +10,8 @@ const UNCOMPARED = { check_eq: false }; // a map is new with nearly every edit: 
 
 const mounted = new Map();
 let scheme = 'light';
+const factors = new Map(); // of figures that are shown larger than they were made
+const DRAWN_LARGER = ['text_font_size', 'major_label_text_font_size', 'axis_label_text_font_size', 'line_width', 'size'];
 
 // Embed a figure's document in an element; it is as large as the element from then on.
 export async function mount(name, element, item) {
@@ -19,7 +21,8 @@ export async function mount(name, element, item) {
   const [view] = manager.roots;
   const models = [...view.model.references()];
   mounted.set(name, { element, view, models, named: namesOf(models), said: {}, holds: {}, held: false });
-  repaint(models);
+  repaint(models, scheme);
+  scale(mounted.get(name), factors.get(name) ?? 1);
   withoutTabStop(view);
   element.style.visibility = '';
 }
@@ -37,6 +40,12 @@ export function update(name, { columns, ranges, labels, ticks, holds = {} }) {
     figure.named.get(`${name}/${source}`).setv({ data: columnsOf(data) }, data.image ? UNCOMPARED : {});
   }
   return ranges ? paintedOnce(figure.view) : null;
+}
+
+// Give the models of a figure, wherever it is drawn, all that a picture says.
+export function fill(name, figure, { columns, ...axes }) {
+  setAxes(name, figure, axes);
+  for (const [source, data] of Object.entries(columns)) figure.named.get(`${name}/${source}`).data = columnsOf(data);
 }
 
 function setAxes(name, figure, { ranges, labels, ticks, holds }) {
@@ -68,7 +77,13 @@ export function holdRing(name, at) {
 
 export function setScheme(name) {
   scheme = name;
-  for (const { models } of mounted.values()) repaint(models);
+  for (const { models } of mounted.values()) repaint(models, scheme);
+}
+
+// Letters and lines of a figure larger than they were made, or as they were with a factor of one.
+export function enlarge(name, factor) {
+  factors.set(name, factor);
+  if (mounted.has(name)) scale(mounted.get(name), factor);
 }
 
 // Width and height of each figure's plot, without its axes, in CSS pixels: what a map is computed for.
@@ -98,7 +113,7 @@ function tasksDone() {
   });
 }
 
-function namesOf(models) {
+export function namesOf(models) {
   return new Map(models.filter(({ name }) => name).map((model) => [model.name, model]));
 }
 
@@ -125,12 +140,24 @@ function image(pixels) {
   return ndarray(pixels, { shape: pixels.shape, dtype: 'uint8' });
 }
 
-function repaint(models) {
-  const at = SCHEMES.indexOf(scheme);
+function repaint(models, inScheme) {
+  const at = SCHEMES.indexOf(inScheme);
   for (const model of models) {
     const paint = model.tags?.[0]?.paint;
     if (paint) model.setv(Object.fromEntries(Object.entries(paint).map(([property, colours]) => [property, colours[at]])));
   }
+}
+
+function scale(figure, factor) {
+  figure.made ??= new Map(figure.models.map((model) => [model, DRAWN_LARGER.filter((property) => property in model).map((property) => [property, model[property]])]));
+  for (const [model, properties] of figure.made) model.setv(Object.fromEntries(properties.map(([property, value]) => [property, larger(value, factor)])));
+}
+
+// A number, a length such as "12px", or either as the one value of a column.
+function larger(value, factor) {
+  if (typeof value === 'number') return value * factor;
+  if (typeof value === 'string' && value.endsWith('px')) return `${Number.parseFloat(value) * factor}px`;
+  return value && typeof value === 'object' && 'value' in value ? { ...value, value: larger(value.value, factor) } : value;
 }
 
 // The canvas has no use of the keyboard: what a figure offers to it, the page offers.

@@ -10,7 +10,7 @@ import { setText } from './number.js';
 const LONG_FOR_CHAT = 1900; // characters of a link; some chats cut what is longer
 const at = (id) => document.getElementById(id);
 
-export function createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening, openExample }) {
+export function createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening, openExample, print }) {
   let origin = opening.answer.plan;
   let link = address.opened || opening.answer.link;
   let pasted = false;
@@ -30,15 +30,14 @@ export function createHead({ opening, state, status, address, hands, page, keys,
     if (aside) return [decided(plan.decided), 'as it was kept; its numbers rest while it is shown'].join(' · ');
     const changed = differing(plan, origin) + (pending.length && differing(plan, origin) === 0 ? 1 : 0);
     return [
-      engineWord(pending.length),
       decided(plan.decided),
       isOpening() ? '' : changed ? `${changed} ${changed === 1 ? 'input differs' : 'inputs differ'} from what was opened` : 'as it was opened',
-      'everything underlined can be typed, stepped or dragged',
     ].filter(Boolean).join(' · ');
   }
 
   function update() {
-    setText(at('standing'), standing());
+    setText(at('standing-said'), standing());
+    setText(at('standing-now'), [engineWord(state.now.pending.length), 'everything underlined can be typed, stepped or dragged'].filter(Boolean).join(' · '));
     const untouched = !state.now.aside && !address.opened && differing(state.now.plan, opening.answer.plan) === 0;
     const said = pasted && !untouched ? assumedText({ plan: state.now.plan, opening: opening.answer.plan, clauses: page.said(), keys, quantities }) : '';
     firstLine.update({ offered: untouched, said });

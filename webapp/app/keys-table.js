@@ -70,7 +70,7 @@ function startOf({ default: usual, start }) {
 function group(groups, name, rows) {
   if (!groups.has(name)) {
     const node = document.createElement('section');
-    node.appendChild(document.createElement('h3')).textContent = name;
+    node.appendChild(document.createElement('h2')).textContent = name;
     const body = node.appendChild(document.createElement('table')).appendChild(document.createElement('tbody'));
     body.parentNode.setAttribute('aria-label', name);
     groups.set(name, { node, body });

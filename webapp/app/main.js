@@ -7,7 +7,7 @@ import { createComparison } from './compare.js';
 import { createConventions } from './conventions.js';
 import { listenToDragging } from './dragging.js';
 import { newestOf, startEngine } from './engine.js';
-import { sizes } from './figures.js';
+import { enlarge, sizes } from './figures.js';
 import { createFollowed, handsFor } from './followed.js';
 import { createHandOver } from './hand-over.js';
 import { createFinder } from './finder.js';
@@ -17,9 +17,11 @@ import { createKeeping } from './keeping.js';
 import { createKeys } from './keys.js';
 import { eitherHands } from './limits.js';
 import { openedPlan } from './link.js';
+import { createMeeting } from './meeting.js';
 import { createOpenedFindings } from './opened-findings.js';
 import { createOwnTable } from './own-table.js';
 import { createPage } from './page.js';
+import { createPaper } from './paper.js';
 import { packedPart } from './payload.js';
 import { createPoint } from './point.js';
 import { createQuantities } from './quantities.js';
@@ -52,7 +54,7 @@ const followed = createFollowed({ keys: opening.followed, view, state, quantitie
 const point = createPoint({ view, state, quantities, followed, keys: opening.followed, engine: lazily, show: (name, text) => page.pictures.read(name, text) });
 const page = createPage({ opening, keys, quantities, typed, state, hands, followed, point, choose: view.choose, ask: () => asking.ask(), onOpen: (name, shows) => (shows ? opened.open(name, shows) : opened.close(name)) });
 const travel = createTravel({ state, status, page, buttons: { undo: document.getElementById('undo'), redo: document.getElementById('redo') } });
-const head = createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening: () => asking.isOpening(), openExample });
+const head = createHead({ opening, state, status, address, hands, page, keys, quantities, isOpening: () => asking.isOpening(), openExample, print: () => paper.printNow() });
 const comparison = createComparison();
 const keeping = createKeeping({ state, status, address, comparison });
 let findings = opening.answer.findings;
@@ -72,6 +74,32 @@ const opened = createOpenedFindings(given);
 const handOver = createHandOver({ ...given, status, opened: opening.answer.plan });
 const onRequest = [opened, handOver, createConventions(given), createOwnTable(given)]; // worked out when the edits pause
 const sitting = createSitting({ ...given, state, status, whole: address.whole, keep: keeping.keep, first: opening.answer.plan });
+const paper = createPaper({ items: opening.items, figures: opening.answer.figures, engine, engineState: () => root.dataset.engine, names: printedFigures, shown, write: page.pictures.write, status });
+
+// How a link says that the page is to be shown; where it says nothing, the page stays as it is.
+function shownAs(text) {
+  return Object.fromEntries([...new URLSearchParams(text)].filter(([item]) => item === 'theme' || item === 'present'));
+}
+
+function shownFigures() {
+  return opening.order[state.now.plan.waveform.kind];
+}
+
+// Those that stand elsewhere in the note are printed where they are shown.
+function printedFigures() {
+  return [...document.querySelectorAll('figure[data-figure]')].filter((figure) => !figure.closest('[hidden]')).map((figure) => figure.dataset.figure);
+}
+
+function actionsOf(...pairs) {
+  return Object.fromEntries(pairs.map((pair) => pair.split(':')).map(([name, id]) => [name, document.getElementById(id)]));
+}
+
+// All that the figures depend on, as a request and as a stamp to tell one state of the note from another.
+function shown() {
+  const chosen = Object.entries(view.now).filter(([name, value]) => value !== null && !['theme', 'present'].includes(name)); // those change no figure
+  const request = { plan: state.now.plan, units: { ...units.now }, view: Object.fromEntries(chosen) };
+  return { request, stamp: JSON.stringify(request) };
+}
 
 function answered(answer, request) {
   const isOther = request.opened || isKept !== Boolean(state.now.aside);
@@ -92,6 +120,7 @@ function answered(answer, request) {
   if (request.deep) onRequest.forEach((part) => part.refresh());
   finder.follow();
   const shown = state.committed(request.count);
+  paper.changed();
   page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(shown, Number(root.dataset.shown)); });
 }
 
@@ -130,6 +159,8 @@ async function openLink(text, name = 'The link') {
 async function readLink(text) {
   units.fromLink(text);
   view.adopt({ target: null, zoom: null });
+  view.adopt(shownAs(text));
+  theme.update();
   page.clear();
   asking.open(text);
   return openedPlan(text, opening);
@@ -155,6 +186,7 @@ state.watch((cause) => {
   travel.update();
   head.update();
   if (cause !== 'answer') [opened, handOver].forEach((part) => part.wait());
+  meeting.update();
   if (cause === 'travel') asking.open(null);
   if (cause !== 'answer') asking.ask();
   return null;
@@ -177,7 +209,8 @@ createUnitsLine({ button: document.getElementById('units'), line: document.getEl
 const wasDragged = listenToDragging(document.body, allHands);
 const strip = createStrip(document.getElementById('strip'), allHands);
 listenToTyping(document.body, { ...allHands, wasDragged, strip });
-followScheme();
+const theme = followScheme({ button: document.getElementById('theme'), view });
+const meeting = createMeeting({ view, names: shownFigures, enlarge, status, ask: () => asking.ask(), actions: actionsOf('enter:meeting', 'earlier:earlier-figure', 'later:later-figure', 'place:figure-place') });
 page.redraw();
 head.update();
 
@@ -186,8 +219,10 @@ async function begin() {
   if (address.opened) state.begin(await readLink(address.opened) ?? opening.answer.plan);
   else await page.paint(opening.answer, 0);
   painted();
+  paper.changed();
   await engine.ready;
   root.dataset.engine = 'ready';
+  paper.changed();
   page.redraw();
   finder.follow();
   head.update();

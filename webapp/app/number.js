@@ -32,13 +32,19 @@ export function setNumber(number, look) {
     role: look.words ? 'textbox' : 'spinbutton',
     tabindex: '0',
     'aria-label': look.label,
-    'aria-valuenow': Number.isFinite(look.value) ? look.value : null,
+    'aria-valuenow': spelt(look.value),
     'aria-valuetext': look.words ? null : look.waiting ? `${text}, waiting for the engine` : text,
-    'aria-valuemin': look.lowest,
-    'aria-valuemax': look.highest,
+    'aria-valuemin': spelt(look.lowest),
+    'aria-valuemax': spelt(look.highest),
     'aria-invalid': look.invalid ? 'true' : null,
     'aria-describedby': look.invalid ? look.reason ?? 'refused' : null,
   });
+}
+
+// Digits only: what reads a page aloud knows no powers of ten.
+function spelt(value) {
+  if (!Number.isFinite(value)) return null;
+  return /e/.test(value) ? value.toLocaleString('en-US', { useGrouping: false, maximumFractionDigits: 20 }) : value;
 }
 
 const PLAIN = Object.fromEntries(['role', 'tabindex', 'aria-label', 'aria-valuenow', 'aria-valuetext', 'aria-valuemin',

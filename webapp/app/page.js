@@ -6,6 +6,7 @@ import { createFindings } from './findings.js';
 import { createKeysTable } from './keys-table.js';
 import { createLooks } from './looks.js';
 import { createNumbers, openField, setNumber, setText } from './number.js';
+import { createPageBoxes } from './page-boxes.js';
 import { createParagraph } from './paragraph.js';
 import { createPictures } from './pictures.js';
 import { createRefused } from './refused.js';
@@ -33,6 +34,7 @@ export function createPage({ opening, keys, quantities, typed, state, hands, fol
   const target = createTarget({ place: at('target'), followed, quantities, keys: opening.followed, engineState });
   const table = createKeysTable({ box: at('quantities'), place: at('quantities-tables'), keys, numberFor, commit: hands.commit });
   const adding = createAdding({ node: at('adding'), keys, hands });
+  const boxes = createPageBoxes();
   const redraws = { running: false, wanted: false };
   let painted = 0;
   let painting = Promise.resolve();
@@ -66,6 +68,8 @@ export function createPage({ opening, keys, quantities, typed, state, hands, fol
     title.update(state.now.plan.title);
     target.redraw();
     if (engineState() === 'failed') stop();
+    boxes.update(state.now.plan);
+    for (const node of [document.body, at('marking')]) node.dataset.marking = state.now.plan.marking ?? '';
     setText(at('marking'), state.now.plan.marking ?? '');
     at('marking').hidden = !state.now.plan.marking;
   }

@@ -61,6 +61,8 @@ export function createPictures({ chief, rest, apart = {}, items, titles, onSeen,
         setText(label, `${titles[name]}.`);
       }
     },
+    // Of a figure that is off the screen only the words, where its drawing is made for paper.
+    write: (name, picture) => caption(frameFor(name), picture),
     visible: () => [...frames].filter(([, frame]) => frame.seen).map(([name]) => name),
     mark: (count) => { for (const { node, count: drawn } of frames.values()) node.classList.toggle('outdated', drawn !== count); },
     outdated: (count) => [...frames].some(([, frame]) => frame.seen && frame.count !== count),
