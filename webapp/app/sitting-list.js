@@ -12,6 +12,7 @@ export function createSittingList({ act, most }) {
   const rows = new Map();
   at('minutes-text').addEventListener('click', () => act('text'));
   at('minutes-markdown').addEventListener('click', () => act('markdown'));
+  listen(parts.body, rows, act);
   setText(parts.left, `Only the last ${most} lines are kept; older ones are left out.`);
 
   return {
@@ -25,7 +26,7 @@ export function createSittingList({ act, most }) {
         rows.delete(id);
       }
       for (const line of lines) {
-        if (!rows.has(line.id)) rows.set(line.id, build(line, act));
+        if (!rows.has(line.id)) rows.set(line.id, build(line));
         const row = rows.get(line.id);
         if (!row.node.isConnected) parts.body.append(row.node);
         fill(row, line);
@@ -34,19 +35,33 @@ export function createSittingList({ act, most }) {
   };
 }
 
-function build({ id, at: time, remark }, act) {
+// One ear for all lines: a long sitting has no more listeners than a short one.
+function listen(body, rows, act) {
+  const idOf = ({ target }) => Number(target.closest('tr')?.dataset.line);
+  body.addEventListener('click', (event) => {
+    const { what } = event.target.dataset;
+    if (what === 'remark') openField(rows.get(idOf(event)).field);
+    else if (what) act(what, idOf(event));
+  });
+  body.addEventListener('change', (event) => act('remark', idOf(event), event.target.value.trim()));
+  body.addEventListener('focusout', ({ target }) => { if (target.matches('.sitting-remark')) target.hidden = !target.value.trim(); });
+  body.addEventListener('keydown', ({ key, target }) => { if (target.matches('.sitting-remark') && (key === 'Enter' || key === 'Escape')) target.blur(); });
+}
+
+function build({ id, at: time, remark }) {
   const node = document.createElement('tr');
+  node.dataset.line = id;
   const cell = (tag) => node.appendChild(document.createElement(tag));
   const head = cell('th');
   head.scope = 'row';
   head.textContent = clock(time);
-  const row = { node, what: cell('td'), moved: cell('td'), field: field(remark, (text) => act('remark', id, text)) };
-  row.buttons = ACTS.map(([what, word]) => button(word, () => (what === 'remark' ? row.field.open() : act(what, id))));
+  const row = { node, what: cell('td'), moved: cell('td'), field: field(remark) };
+  row.buttons = ACTS.map(([what, word]) => button(what, word));
   row.said = row.what.appendChild(document.createElement('span'));
   const acts = document.createElement('div');
   acts.className = 'sitting-acts';
   acts.append(...row.buttons);
-  row.what.append(row.field.node, acts);
+  row.what.append(row.field, acts);
   return row;
 }
 
@@ -75,27 +90,23 @@ function moved(told) {
 }
 
 // What is written beside a line; hidden while there is nothing.
-function field(text, onText) {
+function field(text) {
   const node = document.createElement('input');
   Object.assign(node, { type: 'text', value: text, maxLength: 300, placeholder: 'such as: asked by operations', hidden: !text, className: 'sitting-remark' });
   node.setAttribute('aria-label', 'Remark');
-  node.addEventListener('change', () => onText(node.value.trim()));
-  node.addEventListener('blur', () => { node.hidden = !node.value.trim(); });
-  node.addEventListener('keydown', ({ key }) => { if (key === 'Enter' || key === 'Escape') node.blur(); });
-  return {
-    node,
-    open: () => {
-      node.hidden = false;
-      node.focus();
-    },
-  };
+  return node;
 }
 
-function button(word, act) {
+function openField(node) {
+  node.hidden = false;
+  node.focus();
+}
+
+function button(what, word) {
   const node = document.createElement('button');
   node.type = 'button';
   node.className = 'quiet';
+  node.dataset.what = what;
   node.textContent = word;
-  node.addEventListener('click', act);
   return node;
 }
