@@ -8,8 +8,9 @@ from pycore import edit, link
 from pycore.assessment import assessment, finite
 from pycore.cautions import cautions
 from pycore.checks_here import conventions_here
-from pycore.columns import FIGURES, followed, marking, picture
+from pycore.columns import FIGURES, blind_speeds, followed, marking, picture, speed_map
 from pycore.columns.here import here_words
+from pycore.columns.here_moved import here_moved_words
 from pycore.columns.view import seen
 from pycore.comparing import comparison, moved
 from pycore.computed import Computed
@@ -93,7 +94,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
     units = {**SHOWN_UNITS, **(units or {})}
     start = None if opened is None else link.read_link(opened)
     if start is not None:
-        view = {**(view or {}), 'target': start.target}
+        view = {**(view or {}), 'target': start.target, **start.choices}
     edited, said, refused = _edited(plan if start is None else start.document, edits, units)
     computed = computed_of(edited, with_echoes=deep)
     found = findings_of(computed, units)
@@ -149,7 +150,7 @@ def look(plan, figures=(), marked=(), size=None, units=None, view=None):
     }
 
 
-def here(plan, figure, x=None, y=None, units=None):
+def here(plan, figure, x=None, y=None, units=None, up=None):
     """Return in one line what is at one point of a figure: for the map of blind zones, why it is blind.
 
     Parameters
@@ -162,13 +163,19 @@ def here(plan, figure, x=None, y=None, units=None):
         The point; ``None`` on an axis that does not hold there. [units on the axes]
     units : mapping or None
         Units that the reader prefers. [unitless]
+    up : str or None
+        What goes up the axis of the blind speeds. [unitless]
 
     Returns
     -------
     here : dict
         ``text``, empty where there is nothing to say.
     """
-    return {'text': here_words(computed_of_document(plan), figure, x, y, {**SHOWN_UNITS, **(units or {})})}
+    units, computed = {**SHOWN_UNITS, **(units or {})}, computed_of_document(plan)
+    looked = seen(computed, {'up': up})
+    if figure == blind_speeds.NAME and speed_map.is_map(computed, looked):
+        return {'text': here_moved_words(computed, looked.up, x, y, units)}
+    return {'text': here_words(computed, figure, x, y, units)}
 
 
 def typed_target(name, text, current=None, units=None):
@@ -206,6 +213,7 @@ def _link(computed, looked, units, view):
     items = link.page_items(view or {}, FIGURES)
     items |= {} if mark is None else {'target': link.target_text(mark.target)}
     items |= {'units': text} if text else {}
+    items |= link.choices_view({'axis': looked.axis, 'up': looked.up})
     items |= {} if looked.kept is None else beside(looked.kept.plan.document)
     return link.written(computed.plan.document, view=items)
 
@@ -233,7 +241,7 @@ def _edited(document, edits, units):
 
 def _as_opened(start):
     said = [*start.said, *unknown_units(start.view.get('units', ''))]
-    kept = {name: getattr(start, name) for name in ('cut', 'edited', 'refused', 'view', 'target')}
+    kept = {name: getattr(start, name) for name in ('cut', 'edited', 'refused', 'view', 'target', 'choices')}
     return {**kept, 'said': said}
 
 

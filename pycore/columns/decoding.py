@@ -19,6 +19,7 @@ from pycore.columns.mark import across
 from pycore.columns.named import names_at
 from pycore.columns.prf_names import prf_names
 from pycore.columns.view import WHOLE
+from pycore.exact_spans import FARTHEST_M, exact_span_text
 from pycore.follow import blur_half_widths, ghosts_of
 
 NAME, TITLE = 'decoding', 'Decoding'
@@ -185,7 +186,8 @@ def _spans(computed, axis):
     span, (low, high) = computed.decode_range, axis.limits
     values = [span.exact, np.inf if span.blurred is None else span.blurred]
     reach = np.clip(values, low, high)
-    text = [span_text(span.exact, span, axis), span_text(span.blurred, span, axis)]
+    exact = exact_span_text(span.exact, FARTHEST_M, axis.si, axis.unit)
+    text = [f'to {exact}', span_text(span.blurred, span, axis)]
     if computed.is_stagger:
         values, reach, text = values[1:], reach[1:], text[1:]
     at = _SPANS_AT[: len(reach)] * (1.0 if computed.is_stagger else _apart(computed.plan.n))

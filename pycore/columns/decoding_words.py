@@ -1,6 +1,7 @@
 """The words of decoding: how far range and speed decode, and what else a target would be taken for."""
 
 from pycore.columns.axes import speed_axis
+from pycore.exact_spans import FARTHEST_M, exact_span_text
 from pycore.wording import capitalised, count_word, plural, significant
 
 
@@ -73,8 +74,8 @@ def _range_span(computed, axis):
     if span.blurred == 0:
         return 'With this blur range does not decode at all.'
     side = 'beyond' if span.blurred >= wanted else 'short of'
-    exact = f' ({axis.text(span.exact)} without error)'
-    exact = '' if axis.text(span.exact) == axis.text(span.blurred) else exact
+    exact = exact_span_text(span.exact, FARTHEST_M, axis.si, axis.unit)
+    exact = '' if exact == axis.text(span.blurred) else f' ({exact} without error)'
     return f'With blur range decodes to {axis.text(span.blurred)}{exact}, {side} the {far} of the coverage.'
 
 

@@ -15,9 +15,6 @@ from pycore.columns.axes import round_ticks
 from pycore.plan.keys import BY_PATH
 from pycore.wording import THIN_SPACE, significant, trimmed
 
-UPS = ('own', 'pri', 'carrier', 'stagger')
-"""What can be chosen: the plan's own rows or curve, the mean PRI, the carrier, the stagger ratio. [unitless]"""
-
 _LEAST_RATIO = 1.1
 _HARDLY_LONGER = 1.0 + 1e-9
 """How much longer than its pulse an interval must be, at the least. [unitless]"""
@@ -85,7 +82,7 @@ def offered(computed, units):
     Returns
     -------
     pairs : list of pairs of str
-        Each of ``UPS`` that means something for the plan, with the words that offer it.
+        Each of ``speed_choices.UP`` that means something for the plan, with the words that offer it.
     """
     one = computed.plan.n == 1
     own = 'the response' if computed.is_stagger else 'the PRF' if one else 'each PRF'
@@ -110,7 +107,7 @@ def shown_up(computed, asked):
     computed : Computed
         What the plan gives. [SI]
     asked : str
-        One of ``UPS``. [unitless]
+        One of ``speed_choices.UP``. [unitless]
 
     Returns
     -------
@@ -130,7 +127,7 @@ def up_axis(computed, units, up):
     units : mapping
         Units that the reader prefers. [unitless]
     up : str
-        One of ``UPS`` but ``'own'``, as :func:`shown_up` gives it. [unitless]
+        One of ``speed_choices.UP`` but ``'own'``, as :func:`shown_up` gives it. [unitless]
 
     Returns
     -------

@@ -5,11 +5,10 @@ from collections.abc import Mapping
 from dataclasses import dataclass, field, replace
 
 from pycore.columns.mark import Mark, marked
-from pycore.columns.speed_rows import UPS
-from pycore.columns.speed_scales import SCALES
 from pycore.computed import Computed
 from pycore.errors import InputError
 from pycore.remembered import computed_of_document
+from pycore.speed_choices import CHOICES
 
 
 @dataclass(frozen=True, slots=True)
@@ -25,9 +24,9 @@ class View:
     kept : Computed or None
         What the plan gives that was kept to compare with. [SI]
     axis : str
-        What the axis of the blind speeds is read in, one of ``SCALES``. [unitless]
+        What the axis of the blind speeds is read in, as ``speed_choices.ALONG`` has it. [unitless]
     up : str
-        What goes up the axis of the blind speeds, one of ``UPS``. [unitless]
+        What goes up the axis of the blind speeds, as ``speed_choices.UP`` has it. [unitless]
     """
 
     mark: Mark | None = None
@@ -88,13 +87,12 @@ def seen(computed, chosen):
         mark=marked(computed, chosen.get('target')),
         zoom=_zoomed(computed.plan, chosen.get('zoom') or {}),
         kept=None if kept is None else computed_of_document(kept, computed.with_echoes),
-        axis=_one_of('axis', chosen.get('axis') or 'speed', SCALES),
-        up=_one_of('up', chosen.get('up') or 'own', UPS),
+        **{name: _one_of(name, chosen.get(name) or values[0], values) for name, values in CHOICES.items()},
     )
 
 
 def _one_of(field_name, value, names):
-    if value not in tuple(names):
+    if value not in names:
         raise InputError(field_name, f'{field_name} must be one of {", ".join(names)}; got {value!r}.')
     return value
 

@@ -1,7 +1,8 @@
 """Findings on how far range and speed decode without ambiguity."""
 
+from pycore.exact_spans import FARTHEST_M, FASTEST_M_S, exact_span_text
 from pycore.findings.finding import Finding, at_least
-from pycore.wording import as_typed, in_range_unit, in_speed_unit, significant, with_unit
+from pycore.wording import DISTANCE, SPEED, as_typed, in_range_unit, in_speed_unit, significant, with_unit
 
 
 def decode_range(computed, units):
@@ -92,10 +93,11 @@ def _blur_text(span, units, axis, computed):
     """Say which PRFs must be able to decode, with what blur, and what the span would be without any error."""
     if computed.is_stagger:
         return 'the shortest unambiguous range of its intervals'
-    exact = (in_range_unit if axis == 'range' else in_speed_unit)(span.exact, units)[0]
+    sizes, most = (DISTANCE, FARTHEST_M) if axis == 'range' else (SPEED, FASTEST_M_S)
+    exact = exact_span_text(span.exact, most, sizes[units[axis]], units[axis])
     cell = 'gate' if axis == 'range' else 'filter'
     blur = f'{_gates(computed.decode_blur)} {cell}{"s" if computed.decode_blur > 1 else ""} of blur'
-    return f'{_whichever(computed)}with {blur}; without any error {with_unit(exact, units[axis])}'
+    return f'{_whichever(computed)}with {blur}; without any error {exact}'
 
 
 def _whichever(computed):

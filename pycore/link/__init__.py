@@ -18,16 +18,18 @@ from pycore.link.items import value_text
 from pycore.link.names import LISTS, RECORDS, REMARK, SEE, TEXTS
 from pycore.link.reading import plan_of
 from pycore.link.text import LONGEST, checksum, deflated, fragment_of, inflated
-from pycore.link.view import page_items, target_of, target_text
+from pycore.link.view import choice_of, choices_view, page_items, target_of, target_text
 from pycore.plan.document import filled, shown
 from pycore.plan.keys import KEYS
 from pycore.plan.paths import value_at
+from pycore.speed_choices import CHOICES
 
 __all__ = [
     'LISTS',
     'RECORDS',
     'Opened',
     'checksum',
+    'choices_view',
     'fragment_of',
     'page_items',
     'read_link',
@@ -41,7 +43,7 @@ VERSION = '1'
 """Number of the link's format; the defaults belong to it and never change under it."""
 LONGEST_READABLE = 1900
 """A longer readable text is deflated: some chats cut what is longer. [characters]"""
-VIEW = ('view', 'edit', 'seen', 'present', 'theme', 'units', 'with', 'target')
+VIEW = ('view', 'edit', 'seen', 'present', 'theme', 'units', 'with', 'target', *CHOICES)
 """Items that say how the plan is shown, not what it is."""
 _IGNORED = ('secret', 'end')
 """Items that others may add to an address, and an end that is not at the end."""
@@ -68,6 +70,8 @@ class Opened:
         Items that say how the plan is shown, still encoded. [unitless]
     target : dict or None
         The target that is followed: ``range_km`` and ``speed_mps``. [km, m/s]
+    choices : dict
+        What is chosen for the figure of blind speeds, each of ``speed_choices.CHOICES``. [unitless]
     """
 
     document: dict
@@ -77,6 +81,7 @@ class Opened:
     refused: list = field(default_factory=list)
     view: dict = field(default_factory=dict)
     target: dict | None = None
+    choices: dict = field(default_factory=lambda: {name: values[0] for name, values in CHOICES.items()})
 
     def refuse(self, key, text, message):
         """Name an item that cannot be used.
@@ -214,12 +219,18 @@ def read_link(text):
 
 
 def _follow(opened):
-    """Take the target that the link follows, or name it as refused."""
-    text = opened.view.get('target')
-    try:
-        opened.target = None if text is None else target_of(text)
-    except InputError as error:
-        opened.refuse(error.field, text, error.message)
+    """Take the target that the link follows and what it chooses in figures, or name them as refused."""
+    for name in ('target', *CHOICES):
+        text = opened.view.get(name)
+        try:
+            if text is None:
+                continue
+            if name == 'target':
+                opened.target = target_of(text)
+            else:
+                opened.choices[name] = choice_of(name, text)
+        except InputError as error:
+            opened.refuse(error.field, text, error.message)
 
 
 def _may_be_short(item):

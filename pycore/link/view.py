@@ -1,9 +1,10 @@
-"""Items of a link that say how a plan is looked at: the target that is followed, and how the page is shown."""
+"""Items of a link that say how a plan is looked at: the target, what is chosen in a figure, how the page is shown."""
 
 from pycore.errors import InputError
 from pycore.link.items import read_value, value_text
-from pycore.plan.document import checked_number
+from pycore.plan.document import checked_number, shown
 from pycore.plan.keys.followed import FOLLOWED
+from pycore.speed_choices import CHOICES
 
 
 def target_text(target):
@@ -70,3 +71,45 @@ def page_items(chosen, figures):
     """
     allowed = {'theme': THEMES, 'present': figures}
     return {name: chosen[name] for name, choices in allowed.items() if chosen.get(name) in choices}
+
+
+def choices_view(looked):
+    """Return the view items of what is chosen for the figure of blind speeds.
+
+    Parameters
+    ----------
+    looked : mapping
+        Each of ``speed_choices.CHOICES``. [unitless]
+
+    Returns
+    -------
+    view : dict of str
+        Such as ``{'axis': 'doppler', 'up': 'pri'}``; nothing for what stands there anyway.
+    """
+    return {name: looked[name] for name, values in CHOICES.items() if looked[name] != values[0]}
+
+
+def choice_of(name, text):
+    """Return what an item of a link chooses.
+
+    Parameters
+    ----------
+    name : str
+        One of ``speed_choices.CHOICES``. [unitless]
+    text : str
+        What stands after it. [unitless]
+
+    Returns
+    -------
+    value : str
+        One of its values.
+
+    Raises
+    ------
+    InputError
+        Where it is none of them.
+    """
+    if text not in CHOICES[name]:
+        known = ', '.join(CHOICES[name])
+        raise InputError(name, f'{name} in a link must be one of {known}; got {shown(text)}.')
+    return text

@@ -343,3 +343,55 @@ def test_what_cannot_go_up_the_axis_is_refused_by_name(value):
     with pytest.raises(InputError) as refused:
         seen(Computed(read(example('opening'))), {'up': value})
     assert refused.value.field == 'up'
+
+
+def test_what_is_chosen_for_the_blind_speeds_travels_in_the_link():
+    fragment = api.note(example('opening'), view={'axis': 'doppler', 'up': 'carrier'})['link']
+    assert '&axis=doppler&up=carrier&end=' in fragment
+    answer = api.note(opened=fragment, figures=['blind-speeds'])
+    assert answer['link'] == fragment
+    assert answer['opened']['choices'] == {'axis': 'doppler', 'up': 'carrier'}
+    assert [choice['now'] for choice in answer['figures']['blind-speeds']['choices']] == ['doppler', 'carrier']
+
+
+def test_a_link_that_chooses_nothing_opens_to_what_stands_there_anyway():
+    fragment = api.note(example('opening'))['link']
+    assert 'axis=' not in fragment
+    assert 'up=' not in fragment
+    answer = api.note(opened=fragment, figures=['blind-speeds'], view={'axis': 'ratio', 'up': 'pri'})
+    assert [choice['now'] for choice in answer['figures']['blind-speeds']['choices']] == ['speed', 'own']
+
+
+@pytest.mark.parametrize(('name', 'text'), [('up', 'colour'), ('axis', ''), ('up', 'PRI')])
+def test_a_choice_in_a_link_that_is_none_is_named_and_the_plan_opens_without(name, text):
+    opened = api.note(opened=f'v=1&pri=980,860us&{name}={text}')['opened']
+    assert [(one['key'], one['text']) for one in opened['refused']] == [(name, text)]
+    assert opened['refused'][0]['message'].startswith(f'{name} in a link must be one of ')
+    assert opened['choices'] == {'axis': 'speed', 'up': 'own'}
+
+
+@pytest.mark.parametrize(
+    ('name', 'up', 'x', 'y', 'said'),
+    [
+        ('opening', 'pri', 70.0, 700.0, '70 m/s at a mean PRI of 700 µs: clear on one of two.'),
+        ('opening', 'pri', 29.0, 1840.0, '29 m/s at a mean PRI of 1840 µs: in the notch on both.'),
+        ('opening', 'carrier', 25.0, 2.0, '25 m/s at a carrier of 2 GHz: clear on both.'),
+        ('opening', 'carrier', 0.0, None, '0 m/s at a carrier of 2.8 GHz: in the notch on both.'),
+        (
+            'four-pulse-stagger',
+            'stagger',
+            45.0,
+            1.0,
+            '45 m/s at a stagger ratio of 1: response −51.9 dB, below the least.',
+        ),
+        ('opening', 'pri', None, 700.0, ''),
+    ],
+)
+def test_the_line_under_the_map_speaks_of_the_row_that_is_pointed_at(name, up, x, y, said):
+    assert api.here(example(name), 'blind-speeds', x, y, up=up)['text'].replace(THIN_SPACE, ' ') == said
+
+
+def test_without_a_map_the_line_speaks_of_the_plan_itself():
+    plain = api.here(example('opening'), 'blind-speeds', 70.0, 2.0)
+    assert api.here(example('opening'), 'blind-speeds', 70.0, 2.0, up='stagger') == plain
+    assert plain['text'].endswith('clear on both.')

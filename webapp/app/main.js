@@ -111,7 +111,7 @@ function answered(answer, request) {
   for (const { act } of waiting.filter(({ count }) => count <= request.count)) act();
   waiting = waiting.filter(({ count }) => count > request.count);
   if (request.opened !== null) {
-    view.adopt({ target: answer.opened.target });
+    view.adopt({ target: answer.opened.target, ...answer.opened.choices });
     head.opened(answer);
   }
   if (request.opened !== null) handOver.opened(answer.plan);
@@ -158,7 +158,7 @@ async function openLink(text, name = 'The link') {
 
 async function readLink(text) {
   units.fromLink(text);
-  view.adopt({ target: null, zoom: null });
+  view.adopt({ target: null, zoom: null, axis: null, up: null });
   view.adopt(shownAs(text));
   theme.update();
   page.clear();

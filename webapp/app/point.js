@@ -6,7 +6,7 @@ import { createZooming } from './zooming.js';
 export function createPoint({ view, state, quantities, followed, keys, engine, show }) {
   const zooming = createZooming({ view, coverage: () => state.now.plan.coverage });
   const isReady = () => document.documentElement.dataset.engine === 'ready';
-  const read = createReading({ engine, plan: () => state.now.plan, units: () => quantities.units, isReady, show });
+  const read = createReading({ engine, plan: () => state.now.plan, units: () => quantities.units, up: () => view.now.up ?? null, isReady, show });
   const [range, speed] = keys;
 
   function inPlanUnits({ x, y }) {

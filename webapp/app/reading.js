@@ -5,7 +5,7 @@ import { newestOf } from './engine.js';
 
 const PATIENCE_MS = 120; // the place alone stands after this
 
-export function createReading({ engine, plan, units, isReady, show }) {
+export function createReading({ engine, plan, units, up, isReady, show }) {
   const newest = newestOf(engine.ask);
   let wanted = null;
   let timer = 0;
@@ -17,7 +17,7 @@ export function createReading({ engine, plan, units, isReady, show }) {
     if (!isReady()) return show(figure, place);
     const asked = wanted;
     timer = setTimeout(() => asked === wanted && show(figure, place), PATIENCE_MS);
-    return newest('here', { plan: plan(), figure, x, y, units: units() }).then((answer) => {
+    return newest('here', { plan: plan(), figure, x, y, units: units(), up: up() }).then((answer) => {
       if (!answer || asked !== wanted) return;
       clearTimeout(timer);
       show(figure, answer.text || place);
