@@ -280,11 +280,8 @@ def _fill(computed, needed, what):
 
 def _rotor(computed, units):
     """Rotor or propeller lines that fold onto the body."""
-    plan, spread = computed.plan, computed.plan.target.own_spread_m_s
-    if spread is None or computed.is_stagger:
-        return ''
-    width = computed.blind_speed_m_s / plan.pulses
-    folds = np.flatnonzero(motion.rotor_folds_onto_body(spread, computed.blind_speed_m_s, width))
+    spread, found = computed.plan.target.own_spread_m_s, computed.rotor_folds
+    folds = np.flatnonzero(found) if found is not None else np.zeros(0)
     if not folds.size:
         return ''
     return (

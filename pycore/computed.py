@@ -14,6 +14,7 @@ from pycore import ambiguity, decoding, dwell, eclipsing, floor, holes, patterns
 from pycore.crossings import clear_speeds
 from pycore.decoding.blur import default_blur, gate_counts, motion_counts, range_half_widths
 from pycore.echoes import Echoes
+from pycore.motion import rotor_folds_onto_body
 from pycore.spans import Spans
 
 
@@ -120,6 +121,14 @@ class Computed:
     def prf_speeds(self):
         """Clear speeds of each PRI on its own, by its notch, as Spans. [m/s]"""
         return stagger.notch_clear_speeds(self.blind_speed_m_s, self.plan.notch_m_s, self.plan.speed_m_s)
+
+    @cached_property
+    def rotor_folds(self):
+        """On which PRFs lines of the target's rotor or propeller fold onto its body, shape N; ``None`` without any."""
+        spread = self.plan.target.own_spread_m_s
+        if not spread or self.is_stagger:
+            return None
+        return rotor_folds_onto_body(spread, self.blind_speed_m_s, self.blind_speed_m_s / self.plan.pulses)
 
     @cached_property
     def response(self):

@@ -5,6 +5,7 @@ Sources: ``lanes``, ``notch`` (bars along the foot of a lane), ``noise`` (0 dB),
 ``ground`` and ``rain`` (as a filter steered there passes them) with ``clutter-edge``,
 ``lobes`` (every filter outside the notch), ``filter`` (the one that hears the target
 best, whole), ``kept-filter`` (that of the kept plan), ``names``,
+``rotor`` and ``rotor-folded`` (strips of its rotor's lines) with ``rotor-name``,
 ``target`` (its apparent speed) and ``level`` (its level in that filter). Of a stagger: its
 canceller over the true speed.
 """
@@ -20,6 +21,7 @@ from pycore.columns.kept import is_alike
 from pycore.columns.mark import Mark, upright
 from pycore.columns.named import names_at
 from pycore.columns.prf_names import prf_names
+from pycore.columns.rotor_lines import strips
 from pycore.columns.view import WHOLE
 
 NAME, TITLE = 'doppler-filters', 'Doppler filters'
@@ -31,6 +33,7 @@ _LOWEST_DB, _LEAST_TOP_DB, _ROOM_DB = -30.0, 30.0, 6.0
 _FLOOR = 10.0 ** (_LOWEST_DB / 10.0)
 _HIGH = 0.86
 _BAR = 0.045
+_ROTOR, _ROTOR_GAP = 0.07, 0.015
 _NEAR_AN_END = 0.06
 _LEFT = 0.3
 _PX_PER_LOBE, _PX_PER_TICK = 3.5, 30.0
@@ -78,19 +81,20 @@ def picture(computed, units, size=None, view=WHOLE):
     axis = speed_axis(
         (min(lane.speed_m_s[0] for lane in heard), max(lane.speed_m_s[-1] for lane in heard)), units, name
     )
-    names = prf_names(computed.plan, units)
-    names = [names[lane.prf] for lane in heard]
+    every = prf_names(computed.plan, units)
+    names = [every[lane.prf] for lane in heard]
     others = _kept_lanes(view.kept, computed, heard, view.mark)
     scale = _Scale(len(heard), _top([*heard, *others.values()]))
     return {
         'title': TITLE,
-        **words(computed, heard, axis, names, view.mark, None if view.kept is None else len(others)),
+        **words(computed, heard, axis, every, view.mark, None if view.kept is None else len(others)),
         'columns': {
             **_grounds(heard, axis, scale),
             **_clutter(computed, heard, axis, scale),
             **_filters(heard, axis, scale, size['width']),
             'kept-filter': _kept_filters(others, axis, scale),
             'names': _names(computed, heard, axis, scale, names),
+            **_rotor(computed, heard, axis, scale),
             **_target(heard, axis, scale),
         },
         'ranges': {'x': axis.ends, 'y': [-0.03, len(heard) - 1 + _HIGH + 0.06]},
@@ -155,6 +159,12 @@ def _grounds(heard, axis, scale):
         'noise': {'x0': left, 'x1': right, 'y': np.array([scale.level(lane, 0.0) for lane in range(len(heard))])},
         'notch': {'left': -half, 'right': half, 'bottom': foot[some], 'top': foot[some] + _BAR},
     }
+
+
+def _rotor(computed, heard, axis, scale):
+    """Return the strips of the target's rotor lines, above the notches."""
+    foot = [scale.foot(place) + _BAR + _ROTOR_GAP for place in range(len(heard))]
+    return strips(computed, heard, axis, foot, _ROTOR)
 
 
 def _clutter(computed, heard, axis, scale):

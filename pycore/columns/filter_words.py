@@ -2,10 +2,11 @@
 
 import math
 
+from pycore.columns.rotor_lines import rotor_words
 from pycore.wording import THIN_SPACE, capitalised, count_word, listed, percent, plural, significant, with_unit
 
 
-def words(computed, heard, axis, names, mark=None, kept=None):
+def words(computed, heard, axis, every, mark=None, kept=None):
     """Return caption, short caption, summary and table of the Doppler filters.
 
     Parameters
@@ -16,8 +17,8 @@ def words(computed, heard, axis, names, mark=None, kept=None):
         What the lanes show. [unitless]
     axis : Axis
         Of apparent speed. [m/s]
-    names : sequence of str
-        Names of the PRFs that have a lane. [unitless]
+    every : sequence of str, length N
+        Names of all PRFs. [unitless]
     mark : Mark or None
         The target that is followed. [m, m/s]
     kept : int or None
@@ -28,8 +29,10 @@ def words(computed, heard, axis, names, mark=None, kept=None):
     words : dict
         caption, short, summary, table.
     """
+    names = [every[lane.prf] for lane in heard]
     first = ' '.join(_clutter(computed, heard, names, mark))
     rest = [*_target(computed, heard, names, mark), *_bank(computed, heard, axis, names), _key(computed, mark)]
+    rest += rotor_words(computed, every, axis, mark)
     rest += _dashed(computed, kept, mark)
     what = 'the canceller' if computed.is_stagger else 'the filters of each PRF'
     return {

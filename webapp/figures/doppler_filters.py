@@ -24,7 +24,7 @@ def build(picture):
     -------
     figure : bokeh figure
         Sources ``lanes``, ``notch``, ``noise``, ``ground``, ``rain``, ``clutter-edge``, ``lobes``, ``filter``,
-        ``kept-filter``, ``names``, ``target``, ``level``.
+        ``kept-filter``, ``rotor``, ``rotor-folded``, ``rotor-name``, ``names``, ``target``, ``level``.
     """
     made = plot(NAME, picture)
     made.yaxis[0].axis_line_alpha = 0
@@ -33,6 +33,7 @@ def build(picture):
     across = Segment(x0='x0', x1='x1', y0='y', y1='y', line_width=1, line_dash=[5, 4])
     draw(made, source(NAME, picture, 'noise'), across, line_color='text')
     draw(made, source(NAME, picture, 'lobes'), Line(x='x', y='y', line_width=1), line_color='axis')
+    _rotor(made, picture)
     upright(made, NAME, picture)
     kept = Line(x='x', y='y', line_width=1.5, line_dash=[7, 4])
     draw(made, source(NAME, picture, 'kept-filter'), kept, line_color='strong-text')
@@ -41,8 +42,16 @@ def build(picture):
     draw(made, source(NAME, picture, 'notch'), notch, fill_color='ink', hatch_color='hatch')
     level = Scatter(x='x', y='y', size=11, line_width=2.25)
     draw(made, source(NAME, picture, 'level'), level, fill_color='paper', line_color='line')
+    write(made, NAME, picture, 'rotor-name', role='line', ground=0.6)
     write(made, NAME, picture, 'names', role='strong-text', ground=0.6)
     return made
+
+
+def _rotor(made, picture):
+    """Draw the target's own lines as quiet stripes: upright where they are, leaning where they have folded."""
+    for label, pattern in (('rotor', 'vertical_line'), ('rotor-folded', 'left_diagonal_line')):
+        strip = Quad(**_BOX, fill_alpha=0, line_width=0.75, hatch_pattern=pattern, hatch_scale=5, hatch_weight=1)
+        draw(made, source(NAME, picture, label), strip, hatch_color='line', line_color='line')
 
 
 def _clutter(made, picture):
