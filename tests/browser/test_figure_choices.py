@@ -1,5 +1,7 @@
 """What can be chosen in a figure, chosen as a person does it."""
 
+import re
+
 import pytest
 from playwright.sync_api import expect
 
@@ -37,7 +39,7 @@ def test_the_mean_interval_goes_up_the_axis_of_the_blind_speeds_and_the_caption_
     expect(up.get_by_role('button', name='mean PRI')).to_have_attribute('aria-pressed', 'true')
     up.get_by_role('button', name='carrier').click()
     expect(caption).to_contain_text('Only the carrier is moved')
-    live.page.wait_for_function("location.hash.includes('up=carrier')")
+    expect(live.page).to_have_url(re.compile('up=carrier'))
     live.page.reload()
     live.ready()
     figure.scroll_into_view_if_needed()
