@@ -90,7 +90,9 @@ def rotor_words(computed, names, axis, mark):
     on = 'fold onto the body' if computed.plan.n == 1 else f'fold onto the body on {_prfs(names, folds)}'
     if not folds.any():
         on = 'do not fold onto the body'
-    return [f'Striped: lines of a rotor or propeller, {reach} to either side of {body}; they {on}.']
+    return [
+        f'Striped, leaning where folded: lines of a rotor or propeller, {reach} to either side of {body}; they {on}.'
+    ]
 
 
 def _prfs(names, folds):

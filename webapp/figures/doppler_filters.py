@@ -42,7 +42,7 @@ def build(picture):
     draw(made, source(NAME, picture, 'notch'), notch, fill_color='ink', hatch_color='hatch')
     level = Scatter(x='x', y='y', size=11, line_width=2.25)
     draw(made, source(NAME, picture, 'level'), level, fill_color='paper', line_color='line')
-    write(made, NAME, picture, 'rotor-name', role='line', ground=0.6)
+    write(made, NAME, picture, 'rotor-name', ground=0.6)
     write(made, NAME, picture, 'names', role='strong-text', ground=0.6)
     return made
 
@@ -50,8 +50,8 @@ def build(picture):
 def _rotor(made, picture):
     """Draw the target's own lines as quiet stripes: upright where they are, leaning where they have folded."""
     for label, pattern in (('rotor', 'vertical_line'), ('rotor-folded', 'left_diagonal_line')):
-        strip = Quad(**_BOX, fill_alpha=0, line_width=0.75, hatch_pattern=pattern, hatch_scale=5, hatch_weight=1)
-        draw(made, source(NAME, picture, label), strip, hatch_color='line', line_color='line')
+        strip = Quad(**_BOX, fill_alpha=0, line_width=0.75, hatch_pattern=pattern, hatch_scale=6, hatch_weight=0.75)
+        draw(made, source(NAME, picture, label), strip, hatch_color='bar', line_color='axis')
 
 
 def _clutter(made, picture):
