@@ -49,9 +49,11 @@ def build(picture):
 
 def _rotor(made, picture):
     """Draw the target's own lines as quiet stripes: upright where they are, leaning where they have folded."""
-    for label, pattern in (('rotor', 'vertical_line'), ('rotor-folded', 'left_diagonal_line')):
-        strip = Quad(**_BOX, fill_alpha=0, line_width=0.75, hatch_pattern=pattern, hatch_scale=6, hatch_weight=0.75)
-        draw(made, source(NAME, picture, label), strip, hatch_color='bar', line_color='axis')
+    for label, pattern, ground in (('rotor', 'vertical_line', 1.0), ('rotor-folded', 'left_diagonal_line', 0.0)):
+        strip = Quad(
+            **_BOX, fill_alpha=ground, line_width=0.75, hatch_pattern=pattern, hatch_scale=6, hatch_weight=0.75
+        )
+        draw(made, source(NAME, picture, label), strip, fill_color='paper', hatch_color='line', line_color='axis')
 
 
 def _clutter(made, picture):
