@@ -109,7 +109,7 @@ def test_a_flipped_verdict_is_boxed_and_said(meeting):
 
 def test_the_marking_stands_in_the_four_corners(note):
     note.page.set_viewport_size(LAPTOP)
-    note.open('v=1&pri=980,860us&marking=For%20review').ready()
+    note.open('v=1&pri=980,860us&marking=For%20review&end=0000').ready()
     note.page.get_by_role('button', name='Meeting view').click()
 
     corners = note.page.evaluate("""() => [[document.body, '::before'], [document.body, '::after'],

@@ -1,5 +1,5 @@
-// The figures on the screen: embedded once, afterwards only their data, ends, labels and colours change. The only file that
-// knows how BokehJS is used. It knows neither plans nor the page: what it shows comes as a picture from the core.
+// The figures on the screen: embedded once, afterwards only their data, ends, labels and colours change. With vectors.js
+// the only file that knows how BokehJS is used. It knows neither plans nor the page: what it shows comes as a picture from the core.
 
 import { bokeh } from './bokeh.js';
 

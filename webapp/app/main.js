@@ -58,6 +58,7 @@ const head = createHead({ opening, state, status, address, hands, page, keys, qu
 const comparison = createComparison();
 const keeping = createKeeping({ state, status, address, comparison });
 let findings = opening.answer.findings;
+let beforeRun = null; // the findings before the run of edits that is going on
 let isKept = false; // whether these are the kept plan's
 let waiting = []; // what is to be done when the answer to an edit stands on the page
 
@@ -103,7 +104,7 @@ function shown() {
 
 function answered(answer, request) {
   const isOther = request.opened || isKept !== Boolean(state.now.aside);
-  status.sayWhenQuiet(flipped(isOther ? [] : findings, answer.findings));
+  tellFlipped(isOther ? null : findings, answer.findings);
   findings = answer.findings;
   isKept = Boolean(state.now.aside);
   const told = answer.refused.filter(({ edit }) => edit.text === undefined || edit.do).map(({ message }) => message);
@@ -122,6 +123,12 @@ function answered(answer, request) {
   const shown = state.committed(request.count);
   paper.changed();
   page.paint(answer, request.count).then(() => { root.dataset.shown = Math.max(shown, Number(root.dataset.shown)); });
+}
+
+// After a run of edits: what flipped since it began, and nothing where another plan was opened.
+function tellFlipped(before, after) {
+  beforeRun = before && (beforeRun ?? before);
+  status.sayWhenQuiet(flipped(beforeRun, after), () => { beforeRun = null; });
 }
 
 // What holds of the present plan only, not of the kept one while that is shown.

@@ -20,9 +20,12 @@ export function createStatus(region) {
       clearTimeout(speak);
       if (sentence) show(sentence, actions);
     },
-    sayWhenQuiet(sentence) {
+    sayWhenQuiet(sentence, onQuiet = () => {}) {
       clearTimeout(speak);
-      speak = setTimeout(() => sentence && show(sentence, []), QUIET_MS);
+      speak = setTimeout(() => {
+        onQuiet();
+        if (sentence) show(sentence, []);
+      }, QUIET_MS);
     },
     clear,
   };
