@@ -14,6 +14,7 @@ if sys.version_info < (3, 11):  # noqa: UP036 - this file alone must run on any 
     )
 
 import argparse  # noqa: E402 - after the check
+import os  # noqa: E402
 import shutil  # noqa: E402
 import subprocess  # noqa: E402
 from pathlib import Path  # noqa: E402
@@ -108,7 +109,10 @@ def test(python, selected):
             print(f'The style check failed: ruff {" ".join(verb)}')
             status = 1
 
-    return subprocess.run([python, '-m', 'pytest', *selected], cwd=ROOT).returncode or status
+    # Most of the time goes into browsers that start an engine each: as many tests at once as there are processors.
+    at_once = ['-n', str(min(4, os.cpu_count() or 1)), '--dist', 'worksteal']
+
+    return subprocess.run([python, '-m', 'pytest', *at_once, *selected], cwd=ROOT).returncode or status
 
 
 def main():
