@@ -13,6 +13,8 @@ from playwright.sync_api import expect, sync_playwright
 from webapp.building.browser import MISSING, OPTIONS, chromium
 from webapp.building.places import DIST
 
+# Every test starts an engine of its own and ends it soon: compiling it a second time, better, costs more than it gives.
+ONE_COMPILER = '--js-flags=--liftoff-only'
 START_MS = 60_000  # the engine's start on a busy machine
 STEP_MS = 15_000  # anything else
 
@@ -134,7 +136,7 @@ def launch(engine):
     running = []
 
     def start(*options):
-        running.append(engine.chromium.launch(executable_path=chromium(), args=[*OPTIONS, *options]))
+        running.append(engine.chromium.launch(executable_path=chromium(), args=[*OPTIONS, ONE_COMPILER, *options]))
         return running[-1]
 
     yield start
