@@ -131,7 +131,7 @@ def test_figures_are_lines_and_letters_and_only_maps_have_cells_finer_than_a_scr
 
 def test_the_browsers_own_print_holds_all_figures_once_the_page_has_come_to_rest(note, on_paper):
     note.open(marked('opening')).ready()
-    for _ in range(40):
+    for _ in range(60):
         pages = on_paper()
         if NOT_DRAWN not in pages.text:
             break

@@ -3,7 +3,7 @@
 
 import { drawing, placeFor } from './vectors.js';
 
-const IDLE_MS = 2500; // after the last answer
+const IDLE_MS = 8000; // after the last answer: who edits must not wait for a drawing that may never be printed
 const LATE_MS = 400; // from here on it is said that the figures are being drawn
 const TRIES = 4; // an edit in the middle begins again
 
