@@ -263,7 +263,7 @@ def test_more_than_four_pris_stand_in_a_rail_that_grows_and_shrinks(live):
 
 def test_a_remark_accepts_a_finding_that_is_not_met(live):
     finding = live.finding('must-see.0')
-    finding.get_by_role('button').click()
+    finding.get_by_role('button', name='Say why').click()
     finding.get_by_role('textbox').fill('The site radar covers it.')
     finding.get_by_role('textbox').press('Enter')
 
