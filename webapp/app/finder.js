@@ -125,7 +125,7 @@ export function createFinder({ opening, engine, more, newest, plan, pending, qua
     if (!answer) return;
     run.shown = best?.score ?? null;
     hook('plans').dataset.tried = answer.merged.tried;
-    if (!crew.running) progress.end({ ...run.told, tried: answer.merged.tried });
+    if (!crew.running) progress.end({ ...run.told, tried: Math.max(run.told.tried, answer.merged.tried) }); // a list asked for before the stop may come after it
     const kept = run.rows?.[plans.chosen]?.pris.join();
     run.rows = answer.rows;
     at('finder-found').hidden = answer.rows.length === 0;
