@@ -65,4 +65,5 @@ def table():
     table : list of dict
         One for each key, ready for JSON.
     """
-    return [asdict(key) for key in KEYS]
+    rows = [asdict(key).items() for key in KEYS]
+    return [{name: list(value) if isinstance(value, tuple) else value for name, value in row} for row in rows]
