@@ -1,20 +1,19 @@
 """The actions: plain dictionaries in, plain dictionaries and arrays out.
 
 The command line, the worker in the browser and notebooks all go through these.
-No mathematics lives here.
+No mathematics lives here. What a page does not need before somebody opens it is
+imported when it is first asked for: a page is usable the sooner.
 """
 
 from pycore import edit, link
 from pycore.assessment import assessment, finite
 from pycore.cautions import cautions
-from pycore.checks_here import conventions_here
 from pycore.columns import FIGURES, blind_speeds, followed, marking, picture, speed_map
 from pycore.columns.here import here_words
 from pycore.columns.here_moved import here_moved_words
 from pycore.columns.view import seen
 from pycore.comparing import comparison, moved
 from pycore.computed import Computed
-from pycore.conventions import conventions
 from pycore.errors import InputError
 from pycore.findings import verdict
 from pycore.follow import follow, strip
@@ -22,18 +21,13 @@ from pycore.hand_over import hand_over
 from pycore.holds_over import judged
 from pycore.link.beside import beside, read_beside
 from pycore.link.reader_units import units_text, unknown_units
-from pycore.margins import margins_shown
-from pycore.margins.slices import margins_in_words
-from pycore.own_table import agreement, read_table
 from pycore.plan.keys.followed import FOLLOWED
 from pycore.plan.reading import read
 from pycore.quantity import read_number
 from pycore.remembered import computed_of, computed_of_document, findings_of
 from pycore.shown import shown_unit
 from pycore.timing import columns, timing_table
-from pycore.variation import steps, varied
-from pycore.wording import SHOWN_UNITS
-from pycore.workings import workings
+from pycore.wording import SHOWN_UNITS, reader_units
 
 
 def assess(plan, margins=False):
@@ -91,7 +85,7 @@ def note(plan=None, opened=None, edits=(), figures=(), size=None, units=None, de
         The plan, its link, what was said and refused, verdict, findings, cautions, figures, what becomes of the
         target, and how the plan differs from the kept one.
     """
-    units = {**SHOWN_UNITS, **(units or {})}
+    units = reader_units(units)
     start = None if opened is None else link.read_link(opened)
     if start is not None:
         view = {**(view or {}), 'target': start.target, **start.choices}
@@ -136,7 +130,7 @@ def look(plan, figures=(), marked=(), size=None, units=None, view=None):
     looked : dict
         ``link``, ``figures`` (of the marked ones only what moves), ``target``.
     """
-    units = {**SHOWN_UNITS, **(units or {})}
+    units = reader_units(units)
     computed = computed_of_document(plan)
     looked = seen(computed, view)
     sizes = size or {}
@@ -171,7 +165,7 @@ def here(plan, figure, x=None, y=None, units=None, up=None):
     here : dict
         ``text``, empty where there is nothing to say.
     """
-    units, computed = {**SHOWN_UNITS, **(units or {})}, computed_of_document(plan)
+    units, computed = reader_units(units), computed_of_document(plan)
     looked = seen(computed, {'up': up})
     if figure == blind_speeds.NAME and speed_map.is_map(computed, looked):
         return {'text': here_moved_words(computed, looked.up, x, y, units)}
@@ -203,7 +197,7 @@ def typed_target(name, text, current=None, units=None):
         Where it is no such number.
     """
     key = FOLLOWED[name]
-    unit = shown_unit(key, {**SHOWN_UNITS, **(units or {})})
+    unit = shown_unit(key, reader_units(units))
     return {'value': read_number(text, key, f'followed.{name}', unit, current)}
 
 
@@ -269,7 +263,7 @@ def compare(plan, other, units=None):
     comparison : dict
         ``inputs``, ``findings``, ``differ`` (whether any verdict does), and ``summary``, one sentence.
     """
-    units = {**SHOWN_UNITS, **(units or {})}
+    units = reader_units(units)
     return comparison(computed_of_document(plan), computed_of_document(other), units)
 
 
@@ -288,7 +282,7 @@ def moved_between(plan, before, units=None):
     moved : dict
         ``what``, ``findings``, and ``link``, which opens the plan after it.
     """
-    units = {**SHOWN_UNITS, **(units or {})}
+    units = reader_units(units)
     now, then = (computed_of_document(one) for one in (plan, before))
     return {**moved(now, then, units), 'link': link.written(now.plan.document)}
 
@@ -309,6 +303,8 @@ def vary(plan, inputs):
         ``head`` and ``rows``: the inputs, then value and verdict of each finding; where a plan is refused, only
         the reason.
     """
+    from pycore.variation import steps, varied
+
     axes = [(one['key'], steps(one['key'], one['from'], one['to'], one['by'])) for one in inputs]
     if not 1 <= len(axes) <= 2:
         raise InputError('', f'One input or two can be varied; got {len(axes)}.')
@@ -435,6 +431,8 @@ def margins_of(plan, finding):
         ``finding``, ``met``, ``margins`` (``key``, ``label``, ``unit``, ``value``, ``from``, ``to``; tightest first;
         ``None`` where no flip was found), ``note``.
     """
+    from pycore.margins import margins_shown
+
     return margins_shown(read(plan), finding)
 
 
@@ -459,7 +457,9 @@ def margins_told(plan, finding, so_far=None, tries=1, units=None):
     margins : dict
         ``done``; until then ``so_far`` and ``part``; at the end ``sentence``, ``head``, ``rows``, ``notes``.
     """
-    return margins_in_words(read(plan), finding, so_far, tries, {**SHOWN_UNITS, **(units or {})})
+    from pycore.margins.slices import margins_in_words
+
+    return margins_in_words(read(plan), finding, so_far, tries, reader_units(units))
 
 
 def workings_of(plan, finding):
@@ -477,6 +477,8 @@ def workings_of(plan, finding):
     workings : dict
         ``finding``, ``lines`` (each ``formula``, ``numbers``, ``result``, ``source``), ``value``, ``notes``.
     """
+    from pycore.workings import workings
+
     return workings(Computed(read(plan)), finding)
 
 
@@ -499,7 +501,20 @@ def hand_over_of(plan, opened=None, units=None):
     """
     before = None if opened is None else read(opened).document
     checksum = link.write(plan).rpartition('=')[2]
-    return hand_over(read(plan), checksum, before, {**SHOWN_UNITS, **(units or {})})
+    return hand_over(read(plan), checksum, before, reader_units(units))
+
+
+def conventions():
+    """Return the conventions, each with a check by pocket calculator.
+
+    Returns
+    -------
+    rows : list of dict
+        ``name``, ``text``, ``check``, ``result``, ``unit``.
+    """
+    from pycore import conventions as table
+
+    return table.conventions()
 
 
 def conventions_of(plan):
@@ -515,6 +530,8 @@ def conventions_of(plan):
     shown : dict
         ``left_out`` and ``rows`` (``name``, ``text``, ``check``, ``result``, ``here``).
     """
+    from pycore.checks_here import conventions_here
+
     return conventions_here(Computed(read(plan)))
 
 
@@ -535,7 +552,9 @@ def agreement_with(plan, text, units=None):
     agreement : dict
         ``cells``, ``agree``, ``sentences``, and the first cells that disagree as ``head`` and ``rows``.
     """
-    return agreement(Computed(read(plan)), read_table(text, {**SHOWN_UNITS, **(units or {})}))
+    from pycore.own_table import agreement, read_table
+
+    return agreement(Computed(read(plan)), read_table(text, reader_units(units)))
 
 
 ACTIONS = {

@@ -8,7 +8,6 @@ import math
 
 from pycore import dwell
 from pycore.holds_over import as_rows, held
-from pycore.margins import all_margins
 from pycore.wording import SHOWN_UNITS
 
 FORMAT = 1
@@ -33,7 +32,7 @@ def assessment(computed, with_margins=False):
     """
     each = held(computed, SHOWN_UNITS)
     found = [one.finding for one in each]
-    margins = {'margins': all_margins(computed.plan, found)} if with_margins else {}
+    margins = {'margins': _margins(computed.plan, found)} if with_margins else {}
     return {
         'pulsewright': FORMAT,
         'plan': computed.plan.document,
@@ -52,6 +51,13 @@ def assessment(computed, with_margins=False):
         'holds_over': as_rows(computed, each),
         'findings': [as_dict(finding) for finding in found],
     }
+
+
+def _margins(plan, found):
+    """Return the margins; only who asks for them waits until they are imported."""
+    from pycore.margins import all_margins
+
+    return all_margins(plan, found)
 
 
 def as_dict(finding):

@@ -27,6 +27,22 @@ SHOWN_UNITS = {'range': 'km', 'speed': 'm/s', 'pri': 'us'}
 """Units that the page shows unless the reader prefers others."""
 
 
+def reader_units(preferred):
+    """Return the units that a reader sees.
+
+    Parameters
+    ----------
+    preferred : mapping or None
+        Units that the reader prefers, by ``range``, ``speed``, ``pri``. [unitless]
+
+    Returns
+    -------
+    units : dict
+        One for each of them. [unitless]
+    """
+    return {**SHOWN_UNITS, **(preferred or {})}
+
+
 def significant(value, figures=3):
     """Return a number rounded to some significant figures, whole digits never lost.
 

@@ -21,7 +21,7 @@ from pycore.finder.found import Found, merged
 from pycore.finder.judge import Judge
 from pycore.finder.limits import check
 from pycore.finder.report import better, marked
-from pycore.finder.search import Descent
+from pycore.finder.search import SetDescent
 from pycore.finder.stagger import StaggerDescent, StaggerJudge, stagger_better
 
 SLICE_STEPS = 300
@@ -100,7 +100,7 @@ def begun(limits, seed, number):
 
     Returns
     -------
-    slice : Descent, Exhaustion or StaggerDescent
+    slice : SetDescent, Exhaustion or StaggerDescent
         Has ``step()`` and ``ledger``.
     """
     judge = judge_of(limits)
@@ -108,7 +108,7 @@ def begun(limits, seed, number):
         return StaggerDescent(judge, seed, number)
     if number and proves(limits):
         return Exhaustion(judge, (number - 1) * SLICE_STEPS, SLICE_STEPS)
-    return Descent(judge, seed, number)
+    return SetDescent(judge, seed, number)
 
 
 def run_slice(limits, seed, number, steps=None):
@@ -142,7 +142,7 @@ def goes_on(one):
 
     Parameters
     ----------
-    one : Descent, Exhaustion or StaggerDescent
+    one : SetDescent, Exhaustion or StaggerDescent
         From ``begun``. [mixed]
 
     Returns

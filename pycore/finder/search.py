@@ -11,8 +11,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from pycore.finder.blocks import Block, Weighed
-from pycore.finder.chance import Chance
-from pycore.finder.found import Ledger
+from pycore.finder.descent import Descent
 from pycore.finder.shortfalls import DIGITS
 
 _STARTS = 12
@@ -179,7 +178,7 @@ def _first(total, score, some):
     return least[score[least].argmin()]
 
 
-class Descent:
+class SetDescent(Descent):
     """A slice of a seeded search; it does not end by itself.
 
     Parameters
@@ -193,31 +192,10 @@ class Descent:
     """
 
     def __init__(self, judge, seed, number):
-        self.judge, self.ledger = judge, Ledger()
+        super().__init__(judge, seed, number)
         self._record = Recorder(judge, self.ledger)
-        self._chance = Chance(seed, number)
-        kept = dict(judge.limits.keep)
-        self._kept = kept
-        self._free = [place for place in range(judge.limits.n) if place not in kept]
-        self._pris, self._key, self._queue = None, None, []
-        self._base, self._kicks, self._failed = None, 0, 0
-
-    def step(self):
-        """Take one step.
-
-        Returns
-        -------
-        more : bool
-            True: a descent never ends by itself.
-        """
-        self.ledger.steps += 1
-        if self._pris is None:
-            self._begin()
-        elif self._queue:
-            self._improve(self._queue.pop())
-        else:
-            self._turn()
-        return True
+        self._free = [place for place in range(judge.limits.n) if place not in self._kept]
+        self._key, self._failed = None, 0
 
     def _begin(self):
         """Draw a set, one PRI at a time, each so that what there is so far decodes."""

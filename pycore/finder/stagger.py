@@ -6,10 +6,9 @@ from itertools import combinations
 import numpy as np
 
 from pycore.eclipsing import METRES_PER_SECOND_OF_DELAY
-from pycore.finder.chance import Chance
 from pycore.finder.cycle import StaggerJudge
 from pycore.finder.decode import pulses_of
-from pycore.finder.found import Ledger
+from pycore.finder.descent import Descent
 from pycore.finder.report import Better, tightest
 from pycore.finder.shortfalls import DIGITS
 from pycore.holes import holes
@@ -29,7 +28,7 @@ _AT_ONCE = 512
 _SWAPS = (-1, -1)
 
 
-class StaggerDescent:
+class StaggerDescent(Descent):
     """A slice of a seeded search for staggers.
 
     Parameters
@@ -43,28 +42,8 @@ class StaggerDescent:
     """
 
     def __init__(self, judge, seed, number):
-        self.judge, self.ledger = judge, Ledger()
-        self._chance = Chance(seed, number)
-        self._kept = dict(judge.limits.keep)
-        self._pris, self._depth, self._queue = None, np.inf, []
-        self._base, self._kicks = None, 0
-
-    def step(self):
-        """Take one step.
-
-        Returns
-        -------
-        more : bool
-            True: a descent never ends by itself.
-        """
-        self.ledger.steps += 1
-        if self._pris is None:
-            self._begin()
-        elif self._queue:
-            self._improve(self._queue.pop())
-        else:
-            self._turn()
-        return True
+        super().__init__(judge, seed, number)
+        self._depth = np.inf
 
     def _begin(self):
         """Draw a cycle, and bring its mean to where it must be."""

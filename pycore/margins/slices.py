@@ -9,7 +9,6 @@ from pycore.margins import NOTE, asked_for
 from pycore.margins.inputs import inputs_of
 from pycore.margins.plans import Tried
 from pycore.margins.words import HEADS, NONE_FOUND, told
-from pycore.plan.reading import read
 
 _NOT_JUDGED = 'Nothing is asked of this, so nothing is judged, and there is no margin to it.'
 _NOTHING_FOUND = {
@@ -94,23 +93,3 @@ def _ended(document, state):
     notes += [_UP_TO_THE_LIMITS] if any(NONE_FOUND in row for row in rows) else []
     notes += [_OWN_CARRIER] if document['holds_over'] is not None else []
     return {'done': True, 'sentence': sentence, 'head': HEADS[met] if rows else [], 'rows': rows, 'notes': notes}
-
-
-def at_once(document, name, units):
-    """Return the margins of one finding in words, however long that takes.
-
-    Parameters
-    ----------
-    document : dict
-        A plan. [plan's units]
-    name : str
-        Name of the finding. [unitless]
-    units : mapping
-        The reader's preferences. [unitless]
-
-    Returns
-    -------
-    margins : dict
-        As :func:`margins_in_words` gives them at the end.
-    """
-    return margins_in_words(read(document), name, None, 10**9, units)

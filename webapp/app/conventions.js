@@ -1,6 +1,7 @@
 // Assumptions and conventions: what the model leaves out, and a table of conventions with a check by pocket calculator for each.
 
 import { createDisclosure } from './disclosure.js';
+import { element } from './element.js';
 import { formula } from './formula.js';
 import { createOnDemand } from './on-demand.js';
 
@@ -38,11 +39,4 @@ function tableOfChecks(rows) {
     body.append(element('tr', '', head, element('td', 'check', check, ...(here ? [] : [element('span', 'for-instance', 'for instance')])), element('td', 'shows', result)));
   }
   return table;
-}
-
-function element(tag, className, ...inner) {
-  const made = document.createElement(tag);
-  if (className) made.className = className;
-  made.append(...inner);
-  return made;
 }

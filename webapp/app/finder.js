@@ -84,21 +84,18 @@ export function createFinder({ opening, engine, more, newest, plan, pending, qua
 
   function halt() {
     crew.stop();
-    progress.end(run.told);
-    draw();
-    list();
-    leave();
+    rest();
   }
 
   function ended() {
     run.resumable = false;
+    rest();
+  }
+
+  function rest() {
     progress.end(run.told);
     draw();
     list();
-    leave();
-  }
-
-  function leave() {
     clearTimeout(run.dismiss);
     run.dismiss = setTimeout(() => { if (!crew.running) crew.dismiss(); }, KEEP_MS);
   }
@@ -178,10 +175,8 @@ export function createFinder({ opening, engine, more, newest, plan, pending, qua
   stop.addEventListener('click', halt);
   at('finder-back').addEventListener('click', back);
   new IntersectionObserver((entries) => {
-    if (!run.seen && entries.some(({ isIntersecting }) => isIntersecting)) {
-      run.seen = true;
-      limits.follow();
-    }
+    run.seen = entries.at(-1).isIntersecting;
+    if (run.seen) limits.follow();
   }, { rootMargin: '400px' }).observe(section);
   draw();
 
@@ -193,7 +188,7 @@ export function createFinder({ opening, engine, more, newest, plan, pending, qua
       limits.follow();
       if (run.rows) list();
     },
-    // The plan has been answered: what comes from it in the sentence changes with it, once the part has been looked at.
+    // The plan has been answered: what comes from it in the sentence changes with it, while the part is in sight.
     follow() {
       draw();
       if (run.seen) limits.follow();

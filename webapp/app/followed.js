@@ -1,7 +1,7 @@
 // What a hand does to the followed target: sets it in a figure, types or steps its two numbers, drops it. The plan's own
 // numbers go through hands.js; these change the view only, so undo does not concern them.
 
-export const PREFIX = 'followed.';
+const PREFIX = 'followed.';
 const RANGE = 'range_km';
 const SPEED = 'speed_mps';
 const OF = { range: RANGE, speed: SPEED };

@@ -27,14 +27,6 @@ export function valueAt(document, path) {
   return path.split('.').reduce((value, part) => value?.[part], document);
 }
 
-// A plan with one value replaced; the plan itself stays as it was.
-export function withValue(document, path, value) {
-  const [head, ...rest] = path.split('.');
-  const copy = Array.isArray(document) ? [...document] : { ...document };
-  copy[head] = rest.length ? withValue(copy[head] ?? {}, rest.join('.'), value) : value;
-  return copy;
-}
-
 // How many inputs of one plan differ from another's.
 export function differing(one, other) {
   if (isBranch(one) && isBranch(other)) {

@@ -114,9 +114,9 @@ function answered(answer, request) {
   if (request.opened !== null) {
     view.adopt({ target: answer.opened.target, ...answer.opened.choices });
     head.opened(answer);
+    handOver.opened(answer.plan);
+    if (answer.kept) state.keep(answer.kept.plan);
   }
-  if (request.opened !== null) handOver.opened(answer.plan);
-  if (request.opened !== null && answer.kept) state.keep(answer.kept.plan);
   if (!state.now.aside) present(answer, request);
   if (request.deep) onRequest.forEach((part) => part.refresh());
   finder.follow();

@@ -1,6 +1,7 @@
 // What stands under an opened finding: how it comes about, step by step, and how far each input can move. The core wrote both.
 // Knows how they look and that they may still be on their way; asks nobody.
 
+import { element } from './element.js';
 import { formula, putIn } from './formula.js';
 import { setText } from './number.js';
 import { tableOf } from './table.js';
@@ -56,13 +57,6 @@ function step({ formula: text, numbers, result, source }) {
     element('span', 'step-source', source),
   );
   return item;
-}
-
-function element(tag, className, ...inner) {
-  const made = document.createElement(tag);
-  if (className) made.className = className;
-  made.append(...inner);
-  return made;
 }
 
 function fill(node, children) {

@@ -19,7 +19,7 @@ from pycore.finder.sentence import from_the_plan, pieces
 from pycore.finder.sight import floor_of
 from pycore.finder.words import verdict
 from pycore.link import written
-from pycore.wording import SHOWN_UNITS, percent, with_unit
+from pycore.wording import percent, reader_units, with_unit
 
 LISTED = 10
 MOST_LISTED = 20  # with those that give up some of it for something else
@@ -30,7 +30,7 @@ _now = {}  # the search of this worker: limits, search, slice and what is known 
 
 def limits(plan, asked, edits=(), units=None):
     """Return the limits in words after some edits, what was refused, and why no search can start, if so."""
-    units, refused = {**SHOWN_UNITS, **(units or {})}, []
+    units, refused = reader_units(units), []
     for edit in edits:
         try:
             asked = edited(plan, asked, edit, units)
@@ -96,7 +96,7 @@ def listed(parts, taken, units=None, against='time', chosen=None, most=MOST_LIST
 
     `taken` is the number of slices that are done, which decides whether all sets have been gone through.
     """
-    units = {**SHOWN_UNITS, **(units or {})}
+    units = reader_units(units)
     together = merged([found_of(one) for one in parts])
     search = _now['search'].with_parts([together], taken)
     some, mine = chosen_sets(search, most), own(search)
